@@ -1,0 +1,103 @@
+import { z } from 'zod';
+
+import { ROLES } from './rights';
+
+export const PASSWORD_LIMITS = { shortest: 10, longest: 200 } as const;
+
+export const emailSchema = z
+  .string()
+  .trim()
+  .toLowerCase()
+  .max(254)
+  .pipe(z.email('An e-mail address is needed, like name@example.org.'));
+export const passwordSchema = z
+  .string()
+  .min(PASSWORD_LIMITS.shortest, `A password needs at least ${PASSWORD_LIMITS.shortest} characters.`)
+  .max(PASSWORD_LIMITS.longest, `A password has at most ${PASSWORD_LIMITS.longest} characters.`);
+export const personNameSchema = z.string().trim().min(1, 'A name is needed.').max(80);
+
+/** POST /api/accounts; signs in. Known and unknown addresses get the same answer shape and status. */
+export const signUpSchema = z.object({
+  name: personNameSchema,
+  email: emailSchema,
+  password: passwordSchema,
+});
+/** POST /api/session */
+export const signInSchema = z.object({
+  email: emailSchema,
+  password: z.string().min(1, 'A password is needed.').max(PASSWORD_LIMITS.longest),
+});
+/** POST /api/password/forgotten; always 202. */
+export const forgottenPasswordSchema = z.object({ email: emailSchema });
+/** POST /api/password/reset */
+export const resetPasswordSchema = z.object({ token: z.string().min(20).max(200), password: passwordSchema });
+/** POST /api/password/change; ends the other sessions. */
+export const changePasswordSchema = z.object({
+  current: z.string().min(1).max(PASSWORD_LIMITS.longest),
+  next: passwordSchema,
+});
+/** PATCH /api/account */
+export const changeAccountSchema = z.object({ name: personNameSchema });
+
+export const membershipSchema = z.object({ labId: z.string(), labName: z.string(), role: z.enum(ROLES) });
+
+/** GET /api/session: who is signed in; `csrfToken` goes back in the header `x-csrf-token` of every change. */
+export const sessionSchema = z.object({
+  user: z
+    .object({
+      id: z.string(),
+      name: z.string(),
+      email: z.string(),
+      demo: z.boolean(),
+      memberships: z.array(membershipSchema),
+    })
+    .nullable(),
+  csrfToken: z.string(),
+  /** Whether demo accounts and the mail page exist. */
+  demo: z.boolean(),
+});
+export type SessionBody = z.infer<typeof sessionSchema>;
+
+/** GET /api/account/sessions; DELETE /api/account/sessions/:id; DELETE /api/account/sessions (all others). */
+export const sessionListSchema = z.object({
+  sessions: z.array(
+    z.object({
+      id: z.string(),
+      current: z.boolean(),
+      startedAt: z.string(),
+      lastSeenAt: z.string(),
+      agent: z.string(),
+    }),
+  ),
+});
+export type SessionList = z.infer<typeof sessionListSchema>;
+
+/** GET /api/demo/accounts (DEMO only): invented people one may sign in as. */
+export const demoAccountsSchema = z.object({
+  accounts: z.array(
+    z.object({ name: z.string(), email: z.string(), password: z.string(), role: z.enum(ROLES) }),
+  ),
+});
+/** GET /api/demo/mail and /api/demo/mail/:id (DEMO only). */
+export const mailListSchema = z.object({
+  messages: z.array(
+    z.object({ id: z.string(), to: z.string(), subject: z.string(), receivedAt: z.string() }),
+  ),
+});
+export const mailSchema = z.object({
+  id: z.string(),
+  from: z.string(),
+  to: z.string(),
+  subject: z.string(),
+  receivedAt: z.string(),
+  text: z.string(),
+});
+
+/** GET /api/labs/:labId */
+export const labSchema = z.object({
+  id: z.string(),
+  name: z.string(),
+  role: z.enum(ROLES),
+  members: z.array(z.object({ id: z.string(), name: z.string(), role: z.enum(ROLES) })),
+});
+export type LabBody = z.infer<typeof labSchema>;

@@ -1,0 +1,30 @@
+/** Roles belong to membership of a lab. Rights are verbs; this table is the only place that joins them. */
+export const ROLES = ['supervisor', 'researcher', 'student', 'collaborator'] as const;
+export type Role = (typeof ROLES)[number];
+
+/** What one may do inside a lab, by role. The owner of a preset holds every preset verb on it. */
+export const LAB_RIGHTS = {
+  'view lab': ['supervisor', 'researcher', 'student', 'collaborator'],
+  'view members': ['supervisor', 'researcher', 'student', 'collaborator'],
+  'view lab presets': ['supervisor', 'researcher', 'student', 'collaborator'],
+  'create lab presets': ['supervisor', 'researcher', 'student'],
+  'save lab presets': ['supervisor', 'researcher'],
+  'delete lab presets': ['supervisor'],
+  'share lab presets by link': ['supervisor', 'researcher'],
+} as const satisfies Record<string, readonly Role[]>;
+export type LabRight = keyof typeof LAB_RIGHTS;
+
+export const PRESET_RIGHTS = [
+  'view',
+  'save',
+  'restore',
+  'duplicate',
+  'change visibility',
+  'share by link',
+  'delete',
+] as const;
+export type PresetRight = (typeof PRESET_RIGHTS)[number];
+
+export function roleMay(role: Role, right: LabRight): boolean {
+  return (LAB_RIGHTS[right] as readonly Role[]).includes(role);
+}
