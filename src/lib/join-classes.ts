@@ -1,0 +1,3 @@
+export function joinClasses(...classes: readonly (string | false | null | undefined)[]): string {
+  return classes.filter(Boolean).join(' ');
+}
