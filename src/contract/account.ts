@@ -16,32 +16,44 @@ export const passwordSchema = z
   .max(PASSWORD_LIMITS.longest, `A password has at most ${PASSWORD_LIMITS.longest} characters.`);
 export const personNameSchema = z.string().trim().min(1, 'A name is needed.').max(80);
 
-/** POST /api/accounts; signs in. Known and unknown addresses get the same answer shape and status. */
+/**
+ * POST /api/accounts -> 202 `acceptedSchema`, the same for known and unknown addresses. A mail follows
+ * either way: a link to `/confirm?token=...` for a new address, a notice for one that has an account.
+ */
 export const signUpSchema = z.object({
   name: personNameSchema,
   email: emailSchema,
   password: passwordSchema,
 });
-/** POST /api/session */
+/** Body of every 202: the request was taken, what follows comes by mail. */
+export const acceptedSchema = z.object({ accepted: z.literal(true) });
+/** Token of a mailed link. */
+export const mailedTokenSchema = z.string().trim().min(20).max(200);
+/** POST /api/accounts/confirm -> 201 sessionSchema; signs in. 400 `bad-token` when used or expired. */
+export const confirmAccountSchema = z.object({ token: mailedTokenSchema });
+/** POST /api/session -> 200 sessionSchema (with a new csrfToken); DELETE /api/session -> 200 sessionSchema of a visitor. */
 export const signInSchema = z.object({
   email: emailSchema,
   password: z.string().min(1, 'A password is needed.').max(PASSWORD_LIMITS.longest),
 });
-/** POST /api/password/forgotten; always 202. */
+/** POST /api/password/forgotten; always 202 `acceptedSchema`; the mail links to `/reset?token=...`. */
 export const forgottenPasswordSchema = z.object({ email: emailSchema });
-/** POST /api/password/reset */
-export const resetPasswordSchema = z.object({ token: z.string().min(20).max(200), password: passwordSchema });
-/** POST /api/password/change; ends the other sessions. */
+/** POST /api/password/reset -> 204; ends all sessions, does not sign in. 400 `bad-token` when used or expired. */
+export const resetPasswordSchema = z.object({ token: mailedTokenSchema, password: passwordSchema });
+/** POST /api/password/change -> 200 sessionSchema (with a new csrfToken); ends the other sessions. */
 export const changePasswordSchema = z.object({
   current: z.string().min(1).max(PASSWORD_LIMITS.longest),
   next: passwordSchema,
 });
-/** PATCH /api/account */
+/** PATCH /api/account -> 200 sessionSchema */
 export const changeAccountSchema = z.object({ name: personNameSchema });
 
 export const membershipSchema = z.object({ labId: z.string(), labName: z.string(), role: z.enum(ROLES) });
 
-/** GET /api/session: who is signed in; `csrfToken` goes back in the header `x-csrf-token` of every change. */
+/**
+ * GET /api/session: who is signed in; `csrfToken` goes back in the header `x-csrf-token` of every change.
+ * The token changes on signing in and out; a 403 `bad-token` means: fetch the session again and retry once.
+ */
 export const sessionSchema = z.object({
   user: z
     .object({
@@ -58,7 +70,7 @@ export const sessionSchema = z.object({
 });
 export type SessionBody = z.infer<typeof sessionSchema>;
 
-/** GET /api/account/sessions; DELETE /api/account/sessions/:id; DELETE /api/account/sessions (all others). */
+/** GET /api/account/sessions; DELETE /api/account/sessions/:id; DELETE /api/account/sessions (all others); both 204. */
 export const sessionListSchema = z.object({
   sessions: z.array(
     z.object({

@@ -33,7 +33,7 @@ export const createPresetSchema = z.object({
 });
 /** POST /api/presets/:id/versions -> 201 presetBody, or 409 `conflict` with `head` when `baseVersion` is not the head. */
 export const saveVersionSchema = z.object({ document: presetSchema, note, baseVersion: z.int().positive() });
-/** PATCH /api/presets/:id */
+/** PATCH /api/presets/:id -> 200 presetBody; DELETE /api/presets/:id -> 204 */
 export const changePresetSchema = z.object({
   visibility: z.enum(VISIBILITIES),
   labId: z.string().max(64).nullable().default(null),
@@ -45,7 +45,7 @@ export const duplicatePresetSchema = z.object({
 });
 /** POST /api/presets/:id/versions/:number/restore -> 201 presetBody; makes a new version equal to the old. */
 export const restoreVersionSchema = z.object({ note, baseVersion: z.int().positive() });
-/** POST /api/presets/:id/links -> 201 { link, url }: the token is shown once here and kept hashed. */
+/** POST /api/presets/:id/links -> 201 { link, token, url }: shown once here, kept hashed; url is `/shared/<token>` on PUBLIC_URL. */
 export const createLinkSchema = z.object({ label: z.string().trim().max(LIMITS.nameLength).default('') });
 
 export const presetSummarySchema = z.object({
