@@ -1,0 +1,20 @@
+import { keepPreviousData, useQuery } from '@tanstack/react-query';
+
+import { presetPageSchema, type PresetPage, type PresetQuery } from '@/contract/presets';
+import { api } from '@/lib/api-client';
+
+export function listPresets(query: Partial<PresetQuery>, signal?: AbortSignal): Promise<PresetPage> {
+  const search = new URLSearchParams();
+  for (const [key, value] of Object.entries(query)) {
+    if (value !== undefined && value !== '') search.set(key, String(value));
+  }
+  return api.get(`/presets?${search.toString()}`, presetPageSchema, signal);
+}
+
+export function usePresetList(query: Partial<PresetQuery>) {
+  return useQuery({
+    queryKey: ['presets', query],
+    queryFn: ({ signal }) => listPresets(query, signal),
+    placeholderData: keepPreviousData,
+  });
+}
