@@ -219,6 +219,15 @@ export const knownFactSchema = z.discriminatedUnion('kind', [
     of: z.enum(['split', 'twin']).default('split'),
     ...factBase,
   }),
+  z.object({
+    kind: z.literal('trajectory'),
+    starts: z.record(z.string(), finite),
+    time: finite,
+    at: z.record(z.string(), finite),
+    /** Relative to the value. */
+    tolerance: z.number().positive(),
+    ...factBase,
+  }),
   z.object({ kind: z.literal('verdict'), answer: z.string().max(40), ...factBase }),
 ]);
 
