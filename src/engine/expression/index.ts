@@ -1,0 +1,4 @@
+/** The door of `expression`: formulas as text, tree, graph and compiled code. */
+export { parseFormula, type ParseResult } from './parse';
+export { symbolsOf, visit, childrenOf, type FormulaNode, type FormulaFailure } from './tree';
+export { nearestSymbol } from './nearest-symbol';
