@@ -2,3 +2,6 @@
 export { parseFormula, type ParseResult } from './parse';
 export { symbolsOf, visit, childrenOf, type FormulaNode, type FormulaFailure } from './tree';
 export { nearestSymbol } from './nearest-symbol';
+export { ExpressionGraph, type NodeId } from './graph';
+export { addTree, type AddResult } from './add-tree';
+export { reachable, substitute, dependsOn, kinksOf } from './traverse';
