@@ -188,6 +188,7 @@ export const PANE_VIEWS = [
   'diagram',
   'space-diagram',
   'processes',
+  'equations',
 ] as const;
 
 export const viewSchema = z.object({
