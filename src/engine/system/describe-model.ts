@@ -1,0 +1,41 @@
+import type { CompiledSystem, Diagnostic, ModelReport, TwinReport } from './contract';
+import type { ModelGraph } from './model-graph';
+import { listParameters } from './parameter-reports';
+import { drawProcesses } from './process-diagram';
+import { spreadLimits } from './spread-limits';
+
+/** Everything the workbench shows of a model besides its solutions. */
+export function describeModel(
+  model: ModelGraph,
+  system: CompiledSystem,
+  twin: TwinReport,
+  diagnostics: readonly Diagnostic[],
+): ModelReport {
+  const { document } = model;
+  const limits = spreadLimits(document);
+  return {
+    diagnostics,
+    valid: true,
+    autonomous: system.autonomous,
+    smooth: system.smooth,
+    deterministicOnly: isDeterministicOnly(document.processes, diagnostics),
+    harvested: document.processes.some((process) => process.kind === 'harvest'),
+    parameters: listParameters(document, limits),
+    twin,
+    spreadLimits: limits,
+    equations: [],
+    intermediates: [],
+    diagram: drawProcesses(model),
+    constantsOfMotion: [],
+    backend: system.backend,
+  };
+}
+
+/** True where a rate is signed, or was found to become negative without being marked so. */
+function isDeterministicOnly(
+  processes: readonly { readonly signed: boolean }[],
+  diagnostics: readonly Diagnostic[],
+): boolean {
+  if (processes.some((process) => process.signed)) return true;
+  return diagnostics.some((one) => one.message.startsWith('This rate becomes negative'));
+}
