@@ -1,0 +1,1 @@
+export { ModelRail } from './model-rail';

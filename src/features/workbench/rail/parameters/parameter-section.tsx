@@ -1,0 +1,62 @@
+import { Plus } from 'lucide-react';
+import { Component, lazy, Suspense, type ReactNode } from 'react';
+
+import { Button } from '@/components/ui/button';
+import { LIMITS } from '@/engine/schema/limits';
+
+import { useWorkbench } from '../../state/store';
+import { RailSection } from '../rail-section';
+import { addParameter } from './parameter-edits';
+import { ParameterRow } from './parameter-row';
+
+const LevaParameters = lazy(() => import('./leva-parameters'));
+
+function PlainParameters() {
+  const count = useWorkbench((state) => state.document.parameters.length);
+  return Array.from({ length: count }, (_, index) => <ParameterRow key={index} index={index} />);
+}
+
+/** The same rows without leva, should it fail to load or to run. */
+class Fallback extends Component<{ readonly children: ReactNode }, { readonly failed: boolean }> {
+  override state = { failed: false };
+  static getDerivedStateFromError() {
+    return { failed: true };
+  }
+  override render() {
+    return this.state.failed ? <PlainParameters /> : this.props.children;
+  }
+}
+
+export function ParameterSection() {
+  const count = useWorkbench((state) => state.document.parameters.length);
+  const edit = useWorkbench((state) => state.edit);
+  return (
+    <RailSection
+      name="parameters"
+      title="Parameters"
+      aside={count > 0 ? 'drag or type' : null}
+      actions={
+        <Button
+          look="quiet"
+          size="small"
+          disabled={count >= LIMITS.parameters}
+          onClick={() => edit('Add parameter', (document) => addParameter(document, 'p', ''))}
+        >
+          <Plus size={14} aria-hidden /> Parameter
+        </Button>
+      }
+    >
+      {count === 0 ? (
+        <p className="text-sm text-muted">
+          No parameters yet. Processes from templates bring theirs; others are added here.
+        </p>
+      ) : (
+        <Fallback>
+          <Suspense fallback={<PlainParameters />}>
+            <LevaParameters />
+          </Suspense>
+        </Fallback>
+      )}
+    </RailSection>
+  );
+}
