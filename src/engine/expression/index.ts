@@ -5,3 +5,7 @@ export { nearestSymbol } from './nearest-symbol';
 export { ExpressionGraph, type NodeId } from './graph';
 export { addTree, type AddResult } from './add-tree';
 export { reachable, substitute, dependsOn, kinksOf } from './traverse';
+export { differentiate, differentiateByStates } from './differentiate';
+export { compileProgram, compileDirectional, type Backend } from './compile';
+export type { Program } from './program';
+export type { TaylorProgram } from './taylor';
