@@ -12,6 +12,8 @@ export interface ComplexVector {
 const ITERATIONS = 3;
 /** Starting weights spread by the golden ratio, so that no symmetry of A can make the start useless. */
 const GOLDEN = 0.6180339887498949;
+/** |<p,q>| of unit vectors below this: left and right eigenvectors are orthogonal up to rounding. */
+const DEFECTIVE = 1e-12;
 
 /**
  * Right eigenvector q, A q = lambda q, by inverse iteration in complex arithmetic, with <q,q> = 1 and
@@ -61,7 +63,7 @@ export function scaleToUnitProduct(p: ComplexVector, q: ComplexVector): ComplexV
     si += p.re[i] * q.im[i] - p.im[i] * q.re[i];
   }
   const squared = sr * sr + si * si;
-  if (!(squared > Number.EPSILON ** 2)) return null;
+  if (!(squared > DEFECTIVE ** 2)) return null;
   const re = new Float64Array(p.re.length);
   const im = new Float64Array(p.re.length);
   // p / conj(s) = p s / |s|^2.
