@@ -1,3 +1,4 @@
+import { constantsOfMotionAt } from './constants-of-motion';
 import type { CompiledSystem, Diagnostic, ModelReport, TwinReport } from './contract';
 import type { ModelGraph } from './model-graph';
 import { listParameters } from './parameter-reports';
@@ -26,7 +27,7 @@ export function describeModel(
     equations: [],
     intermediates: [],
     diagram: drawProcesses(model),
-    constantsOfMotion: [],
+    constantsOfMotion: constantsOfMotionAt(model, model.defaults).map((one) => one.formula),
     backend: system.backend,
   };
 }

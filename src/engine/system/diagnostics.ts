@@ -4,6 +4,7 @@ import { checkReferences } from './check-references';
 import { checkSymbols } from './check-symbols';
 import { checkTraits } from './check-traits';
 import { checkUse } from './check-use';
+import { checkConstants } from './constants-of-motion';
 import type { Diagnostic } from './contract';
 import { buildModelGraph, type GraphResult } from './model-graph';
 
@@ -26,7 +27,7 @@ export function checkDefinition(
     ...checkUse(document),
   ];
   if (built.model !== null) {
-    found.push(...checkFlows(built.model));
+    found.push(...checkFlows(built.model), ...checkConstants(built.model));
   }
   return found
     .map((remark, k) => ({ remark, k }))

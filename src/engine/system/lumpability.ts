@@ -53,31 +53,3 @@ function sameColumns(
     return Math.abs(total(j, false) - sum) <= IDENTITY_TEST.relativeTolerance * scale;
   });
 }
-
-/**
- * The part of a Jacobian in which only the composition of classes changes, totals staying put: with
- * perturbations v of zero sum in every population, in the coordinates v_i of all classes but each
- * population's first,
- *
- *     C[a*m+b] = J[i_a][j_b] - J[i_a][first class of j_b's population].
- *
- * At spread 0 of a lumpable model this subspace is invariant, so that the eigenvalues of C are those
- * of J that are not the twin's. m = n - number of populations. Own derivation.
- */
-export function compositionJacobian(
-  J: Float64Array,
-  n: number,
-  populations: readonly { readonly states: readonly number[] }[],
-): { readonly dimension: number; readonly matrix: Float64Array } {
-  const coordinates = populations.flatMap((one) =>
-    one.states.slice(1).map((i) => ({ i, first: one.states[0] ?? i })),
-  );
-  const m = coordinates.length;
-  const matrix = new Float64Array(m * m);
-  coordinates.forEach((row, a) =>
-    coordinates.forEach((column, b) => {
-      matrix[a * m + b] = (J[row.i * n + column.i] ?? 0) - (J[row.i * n + column.first] ?? 0);
-    }),
-  );
-  return { dimension: m, matrix };
-}

@@ -4,11 +4,11 @@ import { SPREAD_KEY, traitDialKey, traitEntrySymbol } from '../schema/symbols';
 import type { SpreadLimit } from './contract';
 import { effectiveTraitValues, spreadGroups } from './spread';
 
-/** Ends of a dial that nothing else limits. */
-export const DIAL_REACH = { lowest: -3, highest: 3 } as const;
+/** Ends of a dial that nothing else limits, and how far out an end with a reason is still shown as it is. */
+export const DIAL_REACH = { lowest: -3, highest: 3, farthest: 10 } as const;
 /** A dial stops this far short (relative) of a pole, where the trait would be infinite or zero. */
 const SHORT_OF_POLE = 1e-3;
-const UNLIMITED = 'No trait ends here; the dial goes no further for want of need.';
+const UNLIMITED = 'No trait ends here; the dial stops at a round number.';
 const NO_REVERSAL =
   'At 0 the classes share their mean; to reverse a single trait, turn its own dial below 0.';
 
@@ -33,22 +33,13 @@ export function spreadLimits(
   if (groups.length === 0) return [];
   const limits: SpreadLimit[] = [];
   const common = values[SPREAD_KEY] ?? document.spread;
-  let shared: Range = {
-    from: { at: 0, reason: NO_REVERSAL },
-    to: { at: DIAL_REACH.highest, reason: UNLIMITED },
-  };
+  let shared: Range = { from: { at: 0, reason: NO_REVERSAL }, to: { at: Infinity, reason: UNLIMITED } };
   document.traits.forEach((trait, index) => {
     if (!groups.some((group) => group.trait === index)) return;
     const range = traitRange(document, index, values);
     const own = values[traitDialKey(trait.symbol)] ?? trait.dial;
     if (trait.followsSpread) shared = narrow(shared, divide(range, own));
-    const full: Range = {
-      from: { at: DIAL_REACH.lowest, reason: UNLIMITED },
-      to: { at: DIAL_REACH.highest, reason: UNLIMITED },
-    };
-    limits.push(
-      toLimit(traitDialKey(trait.symbol), narrow(full, trait.followsSpread ? divide(range, common) : range)),
-    );
+    limits.push(toLimit(traitDialKey(trait.symbol), trait.followsSpread ? divide(range, common) : range));
   });
   return [toLimit(SPREAD_KEY, shared), ...limits];
 }
@@ -127,11 +118,8 @@ function divide(range: Range, factor: number): Range {
 }
 
 function toLimit(key: string, range: Range): SpreadLimit {
-  return {
-    key,
-    from: range.from.at,
-    to: range.to.at,
-    fromReason: range.from.reason,
-    toReason: range.to.reason,
-  };
+  const from =
+    range.from.at < -DIAL_REACH.farthest ? { at: DIAL_REACH.lowest, reason: UNLIMITED } : range.from;
+  const to = range.to.at > DIAL_REACH.farthest ? { at: DIAL_REACH.highest, reason: UNLIMITED } : range.to;
+  return { key, from: from.at, to: to.at, fromReason: from.reason, toReason: to.reason };
 }

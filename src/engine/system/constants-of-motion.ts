@@ -1,0 +1,202 @@
+import { addTree, differentiate, differentiateByStates, type NodeId } from '../expression/index';
+import { nullspace, reduceToEchelon } from '../linalg/nullspace';
+import { candidateTerms, writeSum, type CandidateTerm } from './candidate-terms';
+import type { Diagnostic } from './contract';
+import { evaluateNodes } from './evaluate-graph';
+import { parseCached, type ModelGraph } from './model-graph';
+import { remark } from './remark';
+import { sampleState } from './sample-points';
+import { seededRandom } from './seeded-random';
+
+/** A quantity that never changes along trajectories, proven by identity testing. */
+export interface ConstantOfMotion {
+  readonly formula: string;
+  /** Entered with the document, or found by search. */
+  readonly origin: 'given' | 'found';
+  value(u: ArrayLike<number>): number;
+  /** out[i] = dV/du_i. */
+  gradient(u: ArrayLike<number>, out: Float64Array): void;
+  /** out[i*n+j] = d2V/du_i du_j. */
+  hessian(u: ArrayLike<number>, out: Float64Array): void;
+}
+
+const PROOF = { points: 8, attempts: 24, relativeTolerance: 1e-9, seed: 90_001, searchSeed: 55_117 } as const;
+
+/**
+ * Constants of motion of the split model at given parameters: those entered that hold there, then
+ * those found over the terms u_i, log u_i, u_i^2, u_i u_j, logarithms of totals and of sums of two.
+ *
+ * Search: with phi_k the terms, sum c_k phi_k is constant where sum c_k (grad phi_k . f) = 0 at every
+ * state, so c lies in the nullspace of the matrix of grad phi_k . f over sample states. Each candidate
+ * is then tested afresh, at states not used to find it. Own derivation.
+ * Forced models have none of this form, and get an empty list.
+ * Cost: one singular value decomposition of about 60 columns at most; call on demand.
+ * @param p parameters, in the order of parameterKeys
+ */
+export function constantsOfMotionAt(model: ModelGraph, p: ArrayLike<number>): readonly ConstantOfMotion[] {
+  if (model.equations.some((node) => model.graph.dependsOnTime(node))) return [];
+  const given = model.document.constantsOfMotion.flatMap((formula) => {
+    const constant = proveConstant(model, formula, p, 'given');
+    return constant === null ? [] : [constant];
+  });
+  const found = searchConstants(model, p).flatMap((formula) => {
+    const constant = proveConstant(model, formula, p, 'found');
+    return constant === null ? [] : [constant];
+  });
+  // A given constant that the search finds again is told once, as given.
+  return [...given, ...found.filter((one) => !given.some((other) => isMultiple(model, one, other)))];
+}
+
+/** The formula as a constant of motion at these parameters, or null where it is none or cannot be read. */
+export function proveConstant(
+  model: ModelGraph,
+  formula: string,
+  p: ArrayLike<number>,
+  origin: ConstantOfMotion['origin'],
+): ConstantOfMotion | null {
+  const { graph } = model;
+  const n = model.stateSymbols.length;
+  const parsed = parseCached(formula);
+  if (!parsed.ok) return null;
+  const added = addTree(graph, parsed.tree, (symbol) => model.symbols.get(symbol) ?? null);
+  if (!added.ok || !graph.dependsOnState(added.node) || graph.dependsOnTime(added.node)) return null;
+  const V = added.node;
+  const slopes = differentiateByStates(graph, [V], n);
+  if (graph.full) {
+    graph.forgiveOverflow();
+    return null;
+  }
+  if (!staysPut(model, slopes, p)) return null;
+  const value = evaluateNodes(graph, [V]);
+  const gradient = evaluateNodes(graph, slopes);
+  const curvatures = slopes.flatMap((_, i) =>
+    slopes.map((_slope, j) => differentiate(graph, [slopes[j] ?? V], graph.state(i))[0] ?? V),
+  );
+  const hessian = evaluateNodes(graph, curvatures);
+  const single = new Float64Array(1);
+  return {
+    formula,
+    origin,
+    value(u) {
+      value(0, u, p, single);
+      return single[0] ?? Number.NaN;
+    },
+    gradient: (u, out) => gradient(0, u, p, out),
+    hessian: (u, out) => hessian(0, u, p, out),
+  };
+}
+
+/** Whether grad V . f vanishes at random states, relative to the size of its terms. */
+function staysPut(model: ModelGraph, slopes: readonly NodeId[], p: ArrayLike<number>): boolean {
+  const n = model.stateSymbols.length;
+  const evaluate = evaluateNodes(model.graph, [...slopes, ...model.equations]);
+  const out = new Float64Array(2 * n);
+  const random = seededRandom(PROOF.seed);
+  let points = 0;
+  let moving = false;
+  for (let k = 0; k < PROOF.attempts && points < PROOF.points; k += 1) {
+    evaluate(0, sampleState(model, random), p, out);
+    if (!out.every(Number.isFinite)) continue;
+    points += 1;
+    let sum = 0;
+    let size = 0;
+    for (let i = 0; i < n; i += 1) {
+      const term = (out[i] ?? 0) * (out[n + i] ?? 0);
+      sum += term;
+      size += Math.abs(term);
+    }
+    if (size > 0) moving = true;
+    if (Math.abs(sum) > PROOF.relativeTolerance * size) return false;
+  }
+  // A function of states that never move is constant for want of motion, and says nothing.
+  return points === PROOF.points && moving;
+}
+
+function searchConstants(model: ModelGraph, p: ArrayLike<number>): readonly string[] {
+  const n = model.stateSymbols.length;
+  const evaluate = evaluateNodes(model.graph, model.equations);
+  const terms = candidateTerms(model);
+  const rows = 2 * terms.length + 10;
+  const A = new Float64Array(rows * terms.length);
+  const f = new Float64Array(n);
+  const random = seededRandom(PROOF.searchSeed);
+  let filled = 0;
+  for (let k = 0; k < 2 * rows && filled < rows; k += 1) {
+    const u = sampleState(model, random);
+    evaluate(0, u, p, f);
+    if (!f.every(Number.isFinite)) continue;
+    terms.forEach((term, j) => {
+      A[filled * terms.length + j] = term.rate(u, f);
+    });
+    filled += 1;
+  }
+  if (filled < rows) return [];
+  const kept = scaleColumns(A, rows, terms);
+  const vectors = nullspace(kept.matrix, rows, kept.terms.length);
+  const coefficients = vectors.map((vector) => vector.map((value, j) => value / (kept.scales[j] ?? 1)));
+  reduceToEchelon(coefficients);
+  return coefficients.map((vector) => writeSum(kept.terms, vector)).filter((formula) => formula !== '');
+}
+
+/** Drops terms that never change and scales the others to the same size, so that one tolerance fits all. */
+function scaleColumns(A: Float64Array, rows: number, terms: readonly CandidateTerm[]) {
+  const sizes = terms.map((_, j) => {
+    let square = 0;
+    for (let k = 0; k < rows; k += 1) square += (A[k * terms.length + j] ?? 0) ** 2;
+    return Math.sqrt(square / rows);
+  });
+  const columns = terms.map((_, j) => j).filter((j) => (sizes[j] ?? 0) > 0);
+  const matrix = new Float64Array(rows * columns.length);
+  for (let k = 0; k < rows; k += 1) {
+    columns.forEach((j, c) => {
+      matrix[k * columns.length + c] = (A[k * terms.length + j] ?? 0) / (sizes[j] ?? 1);
+    });
+  }
+  return {
+    matrix,
+    terms: columns.map((j) => terms[j] as CandidateTerm),
+    scales: columns.map((j) => sizes[j] ?? 1),
+  };
+}
+
+/** Whether two constants have parallel gradients wherever it was tried. */
+function isMultiple(model: ModelGraph, one: ConstantOfMotion, other: ConstantOfMotion): boolean {
+  const n = model.stateSymbols.length;
+  const [a, b] = [new Float64Array(n), new Float64Array(n)];
+  const random = seededRandom(PROOF.seed);
+  for (let k = 0; k < 4; k += 1) {
+    const u = sampleState(model, random);
+    one.gradient(u, a);
+    other.gradient(u, b);
+    const dot = a.reduce((sum, value, i) => sum + value * (b[i] ?? 0), 0);
+    const [aa, bb] = [a, b].map((v) => v.reduce((sum, value) => sum + value * value, 0));
+    if (Math.abs(dot * dot - (aa ?? 0) * (bb ?? 0)) > PROOF.relativeTolerance * (aa ?? 0) * (bb ?? 0))
+      return false;
+  }
+  return true;
+}
+
+/** Remarks on the constants entered: unreadable, or changing along trajectories at the document's parameters. */
+export function checkConstants(model: ModelGraph): readonly Diagnostic[] {
+  return model.document.constantsOfMotion.flatMap((formula, k) => {
+    const path = ['constantsOfMotion', k];
+    const parsed = parseCached(formula);
+    if (!parsed.ok) {
+      const { message, range, suggestion } = parsed.failure;
+      return [{ severity: 'error' as const, path, range, message, suggestion }];
+    }
+    const added = addTree(model.graph, parsed.tree, (symbol) => model.symbols.get(symbol) ?? null);
+    if (!added.ok) {
+      const { message, range, suggestion } = added.failure;
+      return [{ severity: 'error' as const, path, range, message, suggestion }];
+    }
+    if (proveConstant(model, formula, model.defaults, 'given') !== null) return [];
+    return [
+      remark(
+        'warning',
+        path,
+        'This formula changes along trajectories, so it is no constant of motion here.',
+      ),
+    ];
+  });
+}
