@@ -9,3 +9,16 @@ export { differentiate, differentiateByStates } from './differentiate';
 export { compileProgram, compileDirectional, type Backend } from './compile';
 export type { Program } from './program';
 export type { TaylorProgram } from './taylor';
+export { toTex, type TexOptions } from './to-tex';
+export { symbolToTex } from './symbol-tex';
+export { dimensionOf, type DimensionReport, type UnitProblem } from './dimension';
+export {
+  parseUnit,
+  describeDimension,
+  multiplyDimensions,
+  sameExponents,
+  sameScale,
+  DIMENSIONLESS,
+  type Dimension,
+  type UnitResult,
+} from './units';
