@@ -8,7 +8,7 @@ import {
   scaleToUnitProduct,
 } from '../../../src/engine/linalg/eigenvectors';
 import { leftNullVector, nullVector } from '../../../src/engine/linalg/null-vector';
-import { nullspace } from '../../../src/engine/linalg/nullspace';
+import { nullspace, reduceToEchelon } from '../../../src/engine/linalg/nullspace';
 import { solveLinear, transpose } from '../../../src/engine/linalg/solve';
 import { multiply, randomMatrix } from './random-matrix';
 
@@ -158,5 +158,16 @@ describe('null space', () => {
     expect(nullspace([1, 0, 0, 1, 1, 1], 3, 2)).toHaveLength(0);
     expect(nullspace([0, 0, 0], 1, 3)).toHaveLength(3);
     expect(nullspace([Number.NaN, 0], 1, 2)).toHaveLength(0);
+  });
+
+  it('becomes readable in echelon form', () => {
+    // The span of (1, 0, 2) and (0, 1, -3), mixed.
+    const vectors = [Float64Array.of(2, 1, 1), Float64Array.of(-1, 4, -14)];
+    reduceToEchelon(vectors);
+    const rows = vectors.map((vector) => [...vector]).sort((a, b) => b[0] - a[0]);
+    [
+      [1, 0, 2],
+      [0, 1, -3],
+    ].forEach((row, i) => row.forEach((value, j) => expect(rows[i][j]).toBeCloseTo(value, 12)));
   });
 });
