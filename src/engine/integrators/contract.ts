@@ -8,7 +8,19 @@ export const INTEGRATION_DEFAULTS = {
   maximumSteps: 200_000,
 } as const;
 
+/**
+ * `auto`: an explicit pair by tolerance, and the stiff method from where the system proves stiff.
+ * `odex`: extrapolation, the independent second opinion.
+ */
+export type MethodName = 'auto' | 'dormand-prince-54' | 'dormand-prince-853' | 'rodas' | 'odex';
+
 export interface IntegrationOptions {
+  readonly method?: MethodName;
+  /**
+   * `log`: states that must stay nonnegative and start above zero are integrated as logarithms, so that
+   * they stay positive and keep their relative accuracy at 1e-30.
+   */
+  readonly scale?: 'linear' | 'log';
   readonly relativeTolerance?: number;
   readonly absoluteTolerance?: number;
   readonly maximumSteps?: number;

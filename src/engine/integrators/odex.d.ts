@@ -1,26 +1,40 @@
-/** Types of the parts of odex that we use; the package's own .ts fails strict checks. */
-export declare class Solver {
-  constructor(f: (t: number, y: number[]) => number[], n: number, options?: Partial<SolverOptions>);
-  solve(
-    t0: number,
-    y0: number[],
-    tEnd: number,
-    onSolution?: (t: number, y: number[]) => void | false,
-  ): SolverResult;
-  grid(dt: number, out: (t: number, y: number[]) => void | false): unknown;
+/** Types of what odex 2.0.4 exports and we use; the .ts that it ships fails strict checks. */
+export type Derivative = (t: number, y: number[]) => number[];
+
+/** Called with the start (step 1) and after each step; false ends the run. `dense` reaches from tOld to t. */
+export type OutputFunction = (
+  step: number,
+  tOld: number,
+  t: number,
+  y: number[],
+  dense?: (component: number, t: number) => number,
+) => boolean | void;
+
+export declare enum Outcome {
+  Converged,
+  MaxStepsExceeded,
+  EarlyReturn,
 }
-export interface SolverOptions {
+
+export declare class Solver {
+  constructor(n: number);
+  /** Steps after which it gives up; 10,000 unless set. */
+  maxSteps: number;
+  /** Never taken below 1e-4. */
+  initialStepSize: number;
+  /** Needs an output function. */
+  denseOutput: boolean;
   absoluteTolerance: number | number[];
   relativeTolerance: number | number[];
-  maxSteps: number;
-  initialStepSize: number;
-  denseOutput: boolean;
+  solve(f: Derivative, t0: number, y0: number[], tEnd: number, onStep?: OutputFunction): SolverResult;
 }
+
 export interface SolverResult {
-  y: number[];
-  outcome: number;
-  nStep: number;
-  nAccept: number;
-  nReject: number;
-  nEval: number;
+  readonly y: number[];
+  readonly outcome: Outcome;
+  readonly xEnd: number;
+  readonly nStep: number;
+  readonly nAccept: number;
+  readonly nReject: number;
+  readonly nEval: number;
 }
