@@ -1,4 +1,4 @@
-import { Solver } from 'odex';
+import { Outcome, Solver } from 'odex';
 
 import type { CompiledSystem } from '../system/contract';
 import {
@@ -12,7 +12,14 @@ import {
 /** A step of extrapolation costs up to about a hundred evaluations; so many are a spent budget as well. */
 const EVALUATIONS_PER_STEP = 100;
 
-/** Leaves the package's loop, which itself never notices a number that is not finite. */
+/**
+ * The package never notices a number that is not finite, so it is told a slope too steep to accept, and
+ * shortens its step. So many of them between two steps mean that there is no way on.
+ */
+const REPELLENT_SLOPE = 1e100;
+const MOST_REPELLED = 2000;
+
+/** Leaves the package's loop. */
 class Halt extends Error {
   constructor(readonly status: IntegrationStatus) {
     super(INTEGRATION_MESSAGES[status]);
@@ -37,6 +44,7 @@ export function integrateByExtrapolation(
   const direction = Math.sign(end - times[0]);
   let evaluations = 0;
   let steps = 0;
+  let repelled = 0;
   let filled = 1;
   states.set(start.subarray(0, n));
   while (filled < times.length && times[filled] === times[0]) {
@@ -52,8 +60,10 @@ export function integrateByExtrapolation(
     u.set(y);
     system.rhs(t, u, f);
     const out = Array.from(f);
-    if (!out.every(Number.isFinite)) throw new Halt('not-finite');
-    return out;
+    if (out.every(Number.isFinite)) return out;
+    repelled += 1;
+    if (repelled > MOST_REPELLED) throw new Halt('not-finite');
+    return out.fill(REPELLENT_SLOPE);
   };
 
   const solver = new Solver(n);
@@ -71,7 +81,7 @@ export function integrateByExtrapolation(
       rejected = result.nReject;
       for (let i = 0; i < n; i += 1) u[i] = result.y[i];
       // The last time is the end of the last step itself.
-      if (filled === times.length - 1 && times[filled] === end) {
+      if (result.outcome === Outcome.Converged && filled === times.length - 1) {
         states.set(u, filled * n);
         filled += 1;
       }
@@ -84,13 +94,16 @@ export function integrateByExtrapolation(
 
   function onStep(
     _step: number,
-    _old: number,
+    old: number,
     t: number,
     y: number[],
     dense?: (component: number, time: number) => number,
   ): void {
     if (!dense) return;
     steps += 1;
+    if (Math.abs(t - old) <= 4 * Number.EPSILON * Math.abs(t))
+      throw new Halt(repelled > 0 ? 'not-finite' : 'step-too-small');
+    repelled = 0;
     while (filled < times.length && (times[filled] - t) * direction <= 0) {
       const time = times[filled];
       for (let i = 0; i < n; i += 1) states[filled * n + i] = time === t ? y[i] : dense(i, time);
