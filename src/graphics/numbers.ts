@@ -42,14 +42,3 @@ export function formatComplex(re: number, im: number, pair = false, digits = 4):
   const joint = pair ? '±' : im < 0 ? MINUS : '+';
   return `${formatNumber(re, digits)} ${joint} ${size}`;
 }
-
-/** A number as typed by people (0,001 and true minus included); null where it is not one number. */
-export function parseNumber(text: string): number | null {
-  const plain = text.trim().replaceAll(MINUS, '-').replace(/\s/g, '');
-  const commas = plain.split(',').length - 1;
-  if (commas > 1 || (commas === 1 && plain.includes('.'))) return null;
-  const candidate = plain.replace(',', '.');
-  if (!/^[+-]?(\d+\.?\d*|\.\d+)(e[+-]?\d+)?$/i.test(candidate)) return null;
-  const value = Number(candidate);
-  return Number.isFinite(value) ? value : null;
-}

@@ -4,7 +4,8 @@ import { createContext, useContext } from 'react';
 import type { SpecialPoint } from '@/engine/continuation/contract';
 import type { PresetDocument } from '@/engine/schema/preset';
 import type { ModelReport } from '@/engine/system/contract';
-import type { ExploreResult, SplitSweepResult } from '@/workers/protocol';
+import type { Verdict } from '@/engine/verdict/contract';
+import type { ExploreResult, PlaneRequest, SecondOpinion, SplitSweepResult } from '@/workers/protocol';
 import type { PresetRight } from '@/contract/rights';
 
 /** Where the document on the bench came from, which decides what can be done with it. */
@@ -41,6 +42,18 @@ export interface SweepSelection {
   readonly to: number;
 }
 
+/** A named arrangement of panes. */
+export type Arrangement = 'explore' | 'sweep' | 'model';
+
+/** What the page asks of the engine; there while the driver runs. */
+export interface EngineActions {
+  sweep(): void;
+  findEquilibria(): void;
+  /** Integrates the trajectory shown with the other method. */
+  secondOpinion(): void;
+  cancel(): void;
+}
+
 export interface WorkbenchState {
   readonly origin: Origin;
   /** The single source of truth: the sliders, the trait table and the formulas all edit it. */
@@ -65,6 +78,13 @@ export interface WorkbenchState {
   readonly selectedPoint: SpecialPoint | null;
   /** Why the engine could not answer last, in words. */
   readonly engineError: string | null;
+  readonly engine: EngineActions | null;
+  readonly secondOpinion: SecondOpinion | null;
+  /** Of the sweep where it was computed at the present values, else of the equilibria alone. */
+  readonly verdict: Verdict | null;
+  readonly arrangement: Arrangement;
+  /** The slice that the phase plane on show wants; null while there is none. */
+  readonly planeRequest: PlaneRequest | null;
 
   /** Applies an edit. Edits with the same `merge` key in a row (a drag, typing in one field) are one step of undo. */
   edit(label: string, change: (document: PresetDocument) => PresetDocument, merge?: string): void;
@@ -78,11 +98,14 @@ export interface WorkbenchState {
   set(patch: Partial<WorkbenchData>): void;
 }
 
+/** What opening another document starts anew; the driver and the arrangement stay. */
+type FreshData = Omit<WorkbenchData, 'engine' | 'arrangement'>;
+
 export type WorkbenchData = Omit<WorkbenchState, 'edit' | 'undo' | 'redo' | 'open' | 'markSaved' | 'set'>;
 
 const HISTORY_LENGTH = 200;
 
-function initialData(document: PresetDocument, origin: Origin): WorkbenchData {
+function initialData(document: PresetDocument, origin: Origin): FreshData {
   const first = document.sweeps[0];
   return {
     origin,
@@ -101,6 +124,9 @@ function initialData(document: PresetDocument, origin: Origin): WorkbenchData {
     job: null,
     selectedPoint: null,
     engineError: null,
+    secondOpinion: null,
+    verdict: null,
+    planeRequest: null,
   };
 }
 
@@ -108,6 +134,8 @@ export function createWorkbenchStore(document: PresetDocument, origin: Origin) {
   let lastMerge: string | undefined;
   return createStore<WorkbenchState>()((set) => ({
     ...initialData(document, origin),
+    engine: null,
+    arrangement: 'explore',
     edit: (label, change, merge) =>
       set((state) => {
         const next = change(state.document);
