@@ -135,7 +135,19 @@ function searchConstants(model: ModelGraph, p: ArrayLike<number>): readonly stri
   const vectors = nullspace(kept.matrix, rows, kept.terms.length);
   const coefficients = vectors.map((vector) => vector.map((value, j) => value / (kept.scales[j] ?? 1)));
   reduceToEchelon(coefficients);
+  for (const vector of coefficients) clearRounding(vector, kept.scales);
   return coefficients.map((vector) => writeSum(kept.terms, vector)).filter((formula) => formula !== '');
+}
+
+/** Sets to zero what counts for less than this part of the largest term, which is rounding. */
+const ROUNDING = 1e-9;
+
+function clearRounding(vector: Float64Array, scales: readonly number[]): void {
+  const weight = (k: number): number => Math.abs(vector[k] ?? 0) * (scales[k] ?? 1);
+  const largest = vector.reduce((most, _, k) => Math.max(most, weight(k)), 0);
+  vector.forEach((_, k) => {
+    if (weight(k) <= ROUNDING * largest) vector[k] = 0;
+  });
 }
 
 /** Drops terms that never change and scales the others to the same size, so that one tolerance fits all. */

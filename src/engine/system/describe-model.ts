@@ -4,6 +4,7 @@ import type { ModelGraph } from './model-graph';
 import { listParameters } from './parameter-reports';
 import { drawProcesses } from './process-diagram';
 import { spreadLimits } from './spread-limits';
+import { typesetEquations, typesetIntermediates } from './typeset-equations';
 
 /** Everything the workbench shows of a model besides its solutions. */
 export function describeModel(
@@ -24,8 +25,8 @@ export function describeModel(
     parameters: listParameters(document, limits),
     twin,
     spreadLimits: limits,
-    equations: [],
-    intermediates: [],
+    equations: typesetEquations(document),
+    intermediates: typesetIntermediates(document),
     diagram: drawProcesses(model),
     constantsOfMotion: constantsOfMotionAt(model, model.defaults).map((one) => one.formula),
     backend: system.backend,

@@ -3,6 +3,7 @@ import { checkFlows } from './check-flows';
 import { checkReferences } from './check-references';
 import { checkSymbols } from './check-symbols';
 import { checkTraits } from './check-traits';
+import { checkUnits } from './check-units';
 import { checkUse } from './check-use';
 import { checkConstants } from './constants-of-motion';
 import type { Diagnostic } from './contract';
@@ -27,7 +28,7 @@ export function checkDefinition(
     ...checkUse(document),
   ];
   if (built.model !== null) {
-    found.push(...checkFlows(built.model), ...checkConstants(built.model));
+    found.push(...checkFlows(built.model), ...checkConstants(built.model), ...checkUnits(document));
   }
   return found
     .map((remark, k) => ({ remark, k }))

@@ -32,8 +32,8 @@ export function listParameters(
       };
     }),
   );
-  const dialed = document.traits.filter((trait) =>
-    limits.some((limit) => limit.key === traitDialKey(trait.symbol)),
+  const dialed = document.traits.filter(
+    (trait) => differs(trait) && limits.some((limit) => limit.key === traitDialKey(trait.symbol)),
   );
   const dials = dialed.map((trait) =>
     dial(
@@ -46,6 +46,11 @@ export function listParameters(
   return limits.length === 0
     ? [...parameters, ...traits]
     : [...parameters, ...traits, ...dials, dial(limits, SPREAD_KEY, 'Spread', document.spread)];
+}
+
+/** A dial of a trait whose values are all the same would move nothing, so it is not listed. */
+function differs(trait: Trait): boolean {
+  return trait.entries.some((entry) => entry.value !== trait.entries[0]?.value);
 }
 
 function rangeOf(trait: Trait, value: number): { readonly min: number; readonly max: number } {
