@@ -10,6 +10,9 @@ const SAMPLES = { asEntered: 24, overRanges: 24, seed: 7_411 } as const;
 /** A rate this far below zero relative to its size over the samples is rounding, not a sign. */
 const ROUNDING = 1e-12;
 
+/** How the remark begins that makes a model deterministic only. */
+export const NEGATIVE_RATE = 'This rate becomes negative';
+
 interface Sample {
   readonly u: Float64Array;
   readonly p: Float64Array;
@@ -31,7 +34,9 @@ export function checkFlows(model: ModelGraph): readonly Diagnostic[] {
     if (definition === undefined) return;
     if (!definition.signed) {
       const negative = firstNegative(samples, k);
-      if (negative !== null) found.push(negativeRate(model, k, negative));
+      if (negative !== null) {
+        found.push(negativeRate(model, k, negative, samples.indexOf(negative) < SAMPLES.asEntered));
+      }
     }
     if (samples.every((sample) => !Number.isFinite(sample.rates[k] ?? 0))) {
       found.push(
@@ -90,7 +95,7 @@ function firstNegative(samples: readonly Sample[], k: number): Sample | null {
   return samples.find((sample) => (sample.rates[k] ?? 0) < -ROUNDING * size) ?? null;
 }
 
-function negativeRate(model: ModelGraph, k: number, sample: Sample): Diagnostic {
+function negativeRate(model: ModelGraph, k: number, sample: Sample, asEntered: boolean): Diagnostic {
   const { document, graph } = model;
   const rate = model.processes[k]?.rate ?? 0;
   const needed = new Set(reachable(graph, [rate]));
@@ -103,8 +108,14 @@ function negativeRate(model: ModelGraph, k: number, sample: Sample): Diagnostic 
       : [],
   );
   const where = [...at, ...moved].slice(0, 6).join(', ') || 'any state';
-  const message = `This rate becomes negative, for example ${figure(sample.rates[k] ?? 0)} at ${where}. Write gains and losses as processes of their own, or mark the rate as signed, which makes the model deterministic only.`;
-  return remark('warning', ['processes', k, 'rate'], message);
+  const example = `${figure(sample.rates[k] ?? 0)} at ${where}`;
+  const path = ['processes', k, 'rate'];
+  if (!asEntered) {
+    const message = `This rate would become negative within the ranges of the parameters, for example ${example}; narrow the ranges, or write gains and losses as processes of their own.`;
+    return remark('note', path, message);
+  }
+  const message = `${NEGATIVE_RATE}, for example ${example}. Write gains and losses as processes of their own, or mark the rate as signed, which makes the model deterministic only.`;
+  return remark('warning', path, message);
 }
 
 /** Which states ever gain and ever lose, over all samples. */

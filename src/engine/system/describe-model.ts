@@ -1,3 +1,4 @@
+import { NEGATIVE_RATE } from './check-flows';
 import { constantsOfMotionAt } from './constants-of-motion';
 import type { CompiledSystem, Diagnostic, ModelReport, TwinReport } from './contract';
 import type { ModelGraph } from './model-graph';
@@ -39,5 +40,5 @@ function isDeterministicOnly(
   diagnostics: readonly Diagnostic[],
 ): boolean {
   if (processes.some((process) => process.signed)) return true;
-  return diagnostics.some((one) => one.message.startsWith('This rate becomes negative'));
+  return diagnostics.some((one) => one.message.startsWith(NEGATIVE_RATE));
 }

@@ -121,5 +121,10 @@ function toLimit(key: string, range: Range): SpreadLimit {
   const from =
     range.from.at < -DIAL_REACH.farthest ? { at: DIAL_REACH.lowest, reason: UNLIMITED } : range.from;
   const to = range.to.at > DIAL_REACH.farthest ? { at: DIAL_REACH.highest, reason: UNLIMITED } : range.to;
-  return { key, from: from.at, to: to.at, fromReason: from.reason, toReason: to.reason };
+  return { key, from: tidy(from.at), to: tidy(to.at), fromReason: from.reason, toReason: to.reason };
+}
+
+/** Twelve figures, so that an end at 3 does not read 3.0000000000000004. */
+function tidy(value: number): number {
+  return Number(value.toPrecision(12));
 }

@@ -62,12 +62,13 @@ describe('compileModel', () => {
     const u = [0.7, 0.4, 0.9];
     const model = compiled(splitPredator(0.2));
     const doubled = flow(compiled(splitPredator(0.4)), u);
-    for (const values of [
+    const settings: Record<string, number>[] = [
       { 'dial:spread': 2 },
       { spread: 2 },
       { 'dial:m': 2 },
       { 'dial:m': 4, spread: 0.5 },
-    ]) {
+    ];
+    for (const values of settings) {
       flow(model, u, values).forEach((value, i) => expect(value).toBeCloseTo(doubled[i] ?? NaN, 14));
     }
     const reversed = flow(compiled(splitPredator(-0.2)), u);

@@ -140,7 +140,11 @@ describe('checkDefinition', () => {
       /^This rate becomes negative, for example -[\d.]+ at x = [\d.]+\. Write gains and losses/,
     );
     const ranged = { ...withProcess({ rate: 'x*(k - 0.5)' }), parameters: [parameter('k')] };
-    expect(at(ranged, ['processes', 4, 'rate']).message).toMatch(/at x = [\d.]+, k = 0\.\d+\./);
+    const inRanges = at(ranged, ['processes', 4, 'rate']);
+    expect(inRanges.severity).toBe('note');
+    expect(inRanges.message).toMatch(
+      /within the ranges of the parameters, for example -[\d.]+ at x = [\d.]+, k = 0\.\d+;/,
+    );
     expect(at(withProcess({ rate, signed: true }), ['processes', 4, 'signed']).message).toBe(
       'New has a signed rate: the model is deterministic only, without events of chance.',
     );
