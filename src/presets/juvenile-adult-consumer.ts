@@ -2,15 +2,15 @@ import { presetSchema } from '@/engine/schema/preset';
 
 import { parameter, population, process, single, trait } from './parts';
 
-/** Stages, not morphs: only juveniles mature, so pooling the stages has no meaning. */
+/** Stages, not morphs: only juveniles mature, so only what both stages have can be pooled. */
 export const juvenileAdultConsumer = presetSchema.parse({
   format: 'moiety-preset',
   formatVersion: 1,
   title: 'Pond snails that graze when grown',
   summary:
-    'Juveniles live on yolk and mature; adults graze and lay. Maturation belongs to juveniles alone, so there is no pooled twin to compare with, and the workbench says so.',
+    'Juveniles live on yolk and mature; adults graze and lay. Maturation belongs to juveniles alone and is never averaged: only the mortality that both stages have is pooled.',
   notes: 'Invented scenario.\n\nClosed form: R = (g + mj) ma/(g e f), A = (r/f)(1 - R/K), J = ma A/g.',
-  tags: ['stages', 'maturation', 'not comparable'],
+  tags: ['stages', 'maturation', 'not lumpable'],
   timeUnit: 'week',
   densityUnit: 'g/m²',
   populations: [
@@ -55,6 +55,5 @@ export const juvenileAdultConsumer = presetSchema.parse({
       tolerance: 1e-7,
       source: 'Snails invade where K equals the algae they need, R = 0.8.',
     },
-    { kind: 'verdict', answer: 'not comparable', source: 'Only juveniles mature.' },
   ],
 });

@@ -17,7 +17,7 @@ export const selfRegulatedPrey = presetSchema.parse({
   individualsPerUnit: 1,
   populations: [single('x', 'roe deer', 'lichen', 12), single('y', 'lynx', 'madder', 0.05)],
   parameters: [
-    parameter('b', 'births of deer', 0.5, [0.1, 1], '1/year'),
+    parameter('r', 'growth of deer from rarity', 0.4, [0.1, 1], '1/year'),
     parameter('d', 'deaths of deer', 0.1, [0, 0.4], '1/year'),
     parameter('K', 'ceiling of deer', 20, [1, 40], 'per km²'),
     parameter('a', 'attack rate', 5, [0.5, 15], 'km²/year'),
@@ -25,9 +25,9 @@ export const selfRegulatedPrey = presetSchema.parse({
     parameter('m', 'mortality of lynx', 0.25, [0.05, 1], '1/year'),
   ],
   processes: [
-    process('births', 'Births of deer', 'birth', 'b*x', { x: '1' }),
+    process('births', 'Births of deer', 'birth', '(r + d)*x', { x: '1' }),
     process('deaths', 'Deaths of deer', 'death', 'd*x', { x: '-1' }),
-    process('crowding', 'Deaths of deer by crowding', 'death', '(b - d)*x*x/K', { x: '-1' }),
+    process('crowding', 'Deaths of deer by crowding', 'death', 'r*x*x/K', { x: '-1' }),
     process('predation', 'Deer eaten by lynx', 'predation', 'a*x*y', { x: '-1', y: 'e' }),
     process('lynx-deaths', 'Deaths of lynx', 'death', 'm*y', { y: '-1' }),
   ],
@@ -39,7 +39,7 @@ export const selfRegulatedPrey = presetSchema.parse({
       at: { x: 5, y: 0.06 },
       tolerance: 1e-9,
       type: 'stable focus',
-      source: 'Closed form x = m/(e a), y = (b - d)(1 - x/K)/a; textbook.',
+      source: 'Closed form x = m/(e a), y = r (1 - x/K)/a; textbook.',
     },
     {
       kind: 'equilibrium',

@@ -1,0 +1,93 @@
+import { z } from 'zod';
+
+import { LIMITS } from './limits';
+import { presetSchema } from './preset';
+
+z.config({ jitless: true });
+
+/**
+ * A study: a model and the tasks to run on it, as one JSON document. Exported by the workbench, run by batch.
+ */
+
+const finite = z.number().refine(Number.isFinite, 'A finite number is needed.');
+const values = z.record(z.string(), finite);
+
+/** The short form of a model: free equations as text. */
+export const equationsSchema = z.strictObject({
+  title: z.string().max(LIMITS.titleLength).optional(),
+  equations: z.array(z.string().max(LIMITS.formulaLength)).min(1).max(LIMITS.classes),
+  parameters: values.optional(),
+  init: values.optional(),
+  box: z.record(z.string(), z.tuple([finite, finite])).optional(),
+  sign: z.enum(['nonnegative', 'any']).optional(),
+});
+
+const common = {
+  /** Names the task in the result. */
+  id: z.string().max(64).optional(),
+  /** Values that replace the document's own, by key: a parameter, a trait value, `spread` or `dial:<trait>`. */
+  parameters: values.optional(),
+  /** Whether to answer for the pooled twin too; where there is none, it is left out. */
+  twin: z.boolean().default(true),
+};
+
+export const METHOD_NAMES = [
+  'automatic',
+  'dormand-prince-54',
+  'dormand-prince-853',
+  'odex',
+  'rosenbrock',
+] as const;
+
+export const trajectoryTaskSchema = z.strictObject({
+  task: z.literal('trajectory'),
+  ...common,
+  /** Start values by class; a class left out starts as the document says. */
+  starts: values.optional(),
+  /** Times to report, monotone from the start time; else `samples` times up to `horizon`. */
+  times: z.array(finite).min(1).max(100_000).optional(),
+  startTime: finite.default(0),
+  horizon: z.number().positive().optional(),
+  samples: z.int().min(2).max(100_000).default(201),
+  method: z.enum(METHOD_NAMES).default('automatic'),
+  relativeTolerance: z.number().min(1e-13).max(0.1).default(1e-9),
+  absoluteTolerance: z.number().min(0).max(1).default(1e-12),
+});
+
+export const equilibriaTaskSchema = z.strictObject({
+  task: z.literal('equilibria'),
+  ...common,
+  /** Box to search, by class; else the document's. */
+  box: z.record(z.string(), z.tuple([finite, finite])).optional(),
+});
+
+export const sweepTaskSchema = z.strictObject({
+  task: z.literal('sweep'),
+  ...common,
+  parameter: z.string().min(1).max(80),
+  from: finite,
+  to: finite,
+  box: z.record(z.string(), z.tuple([finite, finite])).optional(),
+  /** Long-run bands past Hopf points. */
+  bands: z.boolean().default(true),
+  /** Whether every point of every branch is printed, or special points and ends alone. */
+  branches: z.boolean().default(true),
+});
+
+export const studySchema = z.strictObject({
+  preset: z.union([presetSchema, equationsSchema]),
+  tasks: z
+    .array(z.discriminatedUnion('task', [trajectoryTaskSchema, equilibriaTaskSchema, sweepTaskSchema]))
+    .min(1, 'A study needs at least one task.')
+    .max(200),
+});
+
+export type Study = z.infer<typeof studySchema>;
+export type StudyInput = z.input<typeof studySchema>;
+export type StudyTask = Study['tasks'][number];
+export type EquationsPreset = z.infer<typeof equationsSchema>;
+
+/** The study shape as a JSON Schema (draft 2020-12), for editors and other programs. */
+export function studyJsonSchema(): unknown {
+  return z.toJSONSchema(studySchema, { io: 'input', unrepresentable: 'any' });
+}
