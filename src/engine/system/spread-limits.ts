@@ -124,7 +124,8 @@ function toLimit(key: string, range: Range): SpreadLimit {
   return { key, from: tidy(from.at), to: tidy(to.at), fromReason: from.reason, toReason: to.reason };
 }
 
-/** Twelve figures, so that an end at 3 does not read 3.0000000000000004. */
+/** Takes off what is rounding alone, so that an end at 3 does not read 3.0000000000000004. */
 function tidy(value: number): number {
-  return Number(value.toPrecision(12));
+  const short = Number(value.toPrecision(14));
+  return Math.abs(short - value) <= 4 * Number.EPSILON * Math.abs(value) ? short : value;
 }
