@@ -1,4 +1,4 @@
-import type { ModelGraph } from './model-graph';
+import type { FlowSource } from './model-graph';
 
 /** A term that a constant of motion may be made of, with its rate of change along the flow. */
 export interface CandidateTerm {
@@ -15,8 +15,8 @@ const PAIRS_UP_TO = 6;
  * and all classes but the first, which spans the same as its classes and reads better. Logarithms are
  * left out for states that may be negative.
  */
-export function candidateTerms(model: ModelGraph): readonly CandidateTerm[] {
-  const { stateSymbols, nonnegative, populations } = model;
+export function candidateTerms(source: FlowSource): readonly CandidateTerm[] {
+  const { stateSymbols, nonnegative, populations } = source;
   const n = stateSymbols.length;
   const at = (values: ArrayLike<number>, i: number): number => values[i] ?? 0;
   const sumOf = (values: ArrayLike<number>, states: readonly number[]): number =>
@@ -43,11 +43,11 @@ export function candidateTerms(model: ModelGraph): readonly CandidateTerm[] {
     formula: `${symbol}^2`,
     rate: (u, f) => 2 * at(u, i) * at(f, i),
   }));
-  return [...linear, ...logs, ...(n <= PAIRS_UP_TO ? [...squares, ...pairs(model)] : [])];
+  return [...linear, ...logs, ...(n <= PAIRS_UP_TO ? [...squares, ...pairs(source)] : [])];
 }
 
-function pairs(model: ModelGraph): readonly CandidateTerm[] {
-  const { stateSymbols, nonnegative, populations } = model;
+function pairs(source: FlowSource): readonly CandidateTerm[] {
+  const { stateSymbols, nonnegative, populations } = source;
   const at = (values: ArrayLike<number>, i: number): number => values[i] ?? 0;
   const found: CandidateTerm[] = [];
   const sums: CandidateTerm[] = [];

@@ -1,5 +1,4 @@
 import type { PresetDocument } from '../schema/preset';
-import { listClasses } from '../schema/document-symbols';
 import { SPREAD_KEY } from '../schema/symbols';
 import { compileSystem, type CompileOptions } from './compile-system';
 import type { CompiledSystem, Diagnostic, ModelReport } from './contract';
@@ -61,7 +60,7 @@ class Model implements CompiledModel {
   ) {
     this.system = compileSystem(source, options);
     this.twin = makePooledTwin(source, options);
-    this.starts = Float64Array.from(listClasses(document), (entry) => entry.class.start);
+    this.starts = Float64Array.from(source.starts);
     this.index = new Map(source.parameterKeys.map((key, k) => [key, k]));
   }
 

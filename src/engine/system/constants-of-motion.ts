@@ -1,9 +1,15 @@
-import { addTree, differentiate, differentiateByStates, type NodeId } from '../expression/index';
+import {
+  addTree,
+  differentiate,
+  differentiateByStates,
+  ExpressionGraph,
+  type NodeId,
+} from '../expression/index';
 import { nullspace, reduceToEchelon } from '../linalg/nullspace';
 import { candidateTerms, writeSum, type CandidateTerm } from './candidate-terms';
 import type { Diagnostic } from './contract';
 import { evaluateNodes } from './evaluate-graph';
-import { parseCached, type ModelGraph } from './model-graph';
+import { parseCached, type FlowSource, type ModelGraph } from './model-graph';
 import { remark } from './remark';
 import { sampleState } from './sample-points';
 import { seededRandom } from './seeded-random';
@@ -23,7 +29,7 @@ export interface ConstantOfMotion {
 const PROOF = { points: 8, attempts: 24, relativeTolerance: 1e-9, seed: 90_001, searchSeed: 55_117 } as const;
 
 /**
- * Constants of motion of the split model at given parameters: those entered that hold there, then
+ * Constants of motion of a flow (the split model's, or the twin's) at given parameters: those entered that hold there, then
  * those found over the terms u_i, log u_i, u_i^2, u_i u_j, logarithms of totals and of sums of two.
  *
  * Search: with phi_k the terms, sum c_k phi_k is constant where sum c_k (grad phi_k . f) = 0 at every
@@ -33,32 +39,35 @@ const PROOF = { points: 8, attempts: 24, relativeTolerance: 1e-9, seed: 90_001, 
  * Cost: one singular value decomposition of about 60 columns at most; call on demand.
  * @param p parameters, in the order of parameterKeys
  */
-export function constantsOfMotionAt(model: ModelGraph, p: ArrayLike<number>): readonly ConstantOfMotion[] {
-  if (model.equations.some((node) => model.graph.dependsOnTime(node))) return [];
-  const given = model.document.constantsOfMotion.flatMap((formula) => {
-    const constant = proveConstant(model, formula, p, 'given');
+export function constantsOfMotionAt(source: FlowSource, p: ArrayLike<number>): readonly ConstantOfMotion[] {
+  if (source.equations.some((node) => source.graph.dependsOnTime(node))) return [];
+  const given = source.givenConstants.flatMap((formula) => {
+    const constant = proveConstant(source, formula, p, 'given');
     return constant === null ? [] : [constant];
   });
-  const found = searchConstants(model, p).flatMap((formula) => {
-    const constant = proveConstant(model, formula, p, 'found');
+  const found = searchConstants(source, p).flatMap((formula) => {
+    const constant = proveConstant(source, formula, p, 'found');
     return constant === null ? [] : [constant];
   });
   // A given constant that the search finds again is told once, as given.
-  return [...given, ...found.filter((one) => !given.some((other) => isMultiple(model, one, other)))];
+  return [...given, ...found.filter((one) => !given.some((other) => isMultiple(source, one, other)))];
 }
 
 /** The formula as a constant of motion at these parameters, or null where it is none or cannot be read. */
 export function proveConstant(
-  model: ModelGraph,
+  source: FlowSource,
   formula: string,
   p: ArrayLike<number>,
   origin: ConstantOfMotion['origin'],
 ): ConstantOfMotion | null {
-  const { graph } = model;
-  const n = model.stateSymbols.length;
+  // A found formula changes with the parameters; a graph of its own keeps the model's from filling up.
+  const own = origin === 'found';
+  const graph = own ? new ExpressionGraph() : source.graph;
+  const symbols = own ? stateNodes(graph, source) : source.symbols;
+  const n = source.stateSymbols.length;
   const parsed = parseCached(formula);
   if (!parsed.ok) return null;
-  const added = addTree(graph, parsed.tree, (symbol) => model.symbols.get(symbol) ?? null);
+  const added = addTree(graph, parsed.tree, (symbol) => symbols.get(symbol) ?? null);
   if (!added.ok || !graph.dependsOnState(added.node) || graph.dependsOnTime(added.node)) return null;
   const V = added.node;
   const slopes = differentiateByStates(graph, [V], n);
@@ -66,9 +75,9 @@ export function proveConstant(
     graph.forgiveOverflow();
     return null;
   }
-  if (!staysPut(model, slopes, p)) return null;
-  const value = evaluateNodes(graph, [V]);
   const gradient = evaluateNodes(graph, slopes);
+  if (!staysPut(source, gradient, p)) return null;
+  const value = evaluateNodes(graph, [V]);
   const curvatures = slopes.flatMap((_, i) =>
     slopes.map((_slope, j) => differentiate(graph, [slopes[j] ?? V], graph.state(i))[0] ?? V),
   );
@@ -86,22 +95,37 @@ export function proveConstant(
   };
 }
 
+/** Nodes of the states and totals, which is all that a found formula reads. */
+function stateNodes(graph: ExpressionGraph, source: FlowSource): ReadonlyMap<string, NodeId> {
+  const nodes = new Map(source.stateSymbols.map((symbol, i) => [symbol, graph.state(i)]));
+  for (const { symbol, states } of source.populations) {
+    if (!nodes.has(symbol)) nodes.set(symbol, graph.sum(states.map((i) => graph.state(i))));
+  }
+  return nodes;
+}
+
 /** Whether grad V . f vanishes at random states, relative to the size of its terms. */
-function staysPut(model: ModelGraph, slopes: readonly NodeId[], p: ArrayLike<number>): boolean {
-  const n = model.stateSymbols.length;
-  const evaluate = evaluateNodes(model.graph, [...slopes, ...model.equations]);
-  const out = new Float64Array(2 * n);
+function staysPut(
+  source: FlowSource,
+  gradient: ReturnType<typeof evaluateNodes>,
+  p: ArrayLike<number>,
+): boolean {
+  const n = source.stateSymbols.length;
+  const flow = evaluateNodes(source.graph, source.equations);
+  const [slope, f] = [new Float64Array(n), new Float64Array(n)];
   const random = seededRandom(PROOF.seed);
   let points = 0;
   let moving = false;
   for (let k = 0; k < PROOF.attempts && points < PROOF.points; k += 1) {
-    evaluate(0, sampleState(model, random), p, out);
-    if (!out.every(Number.isFinite)) continue;
+    const u = sampleState(source, random);
+    gradient(0, u, p, slope);
+    flow(0, u, p, f);
+    if (!slope.every(Number.isFinite) || !f.every(Number.isFinite)) continue;
     points += 1;
     let sum = 0;
     let size = 0;
     for (let i = 0; i < n; i += 1) {
-      const term = (out[i] ?? 0) * (out[n + i] ?? 0);
+      const term = (slope[i] ?? 0) * (f[i] ?? 0);
       sum += term;
       size += Math.abs(term);
     }
@@ -112,17 +136,17 @@ function staysPut(model: ModelGraph, slopes: readonly NodeId[], p: ArrayLike<num
   return points === PROOF.points && moving;
 }
 
-function searchConstants(model: ModelGraph, p: ArrayLike<number>): readonly string[] {
-  const n = model.stateSymbols.length;
-  const evaluate = evaluateNodes(model.graph, model.equations);
-  const terms = candidateTerms(model);
+function searchConstants(source: FlowSource, p: ArrayLike<number>): readonly string[] {
+  const n = source.stateSymbols.length;
+  const evaluate = evaluateNodes(source.graph, source.equations);
+  const terms = candidateTerms(source);
   const rows = 2 * terms.length + 10;
   const A = new Float64Array(rows * terms.length);
   const f = new Float64Array(n);
   const random = seededRandom(PROOF.searchSeed);
   let filled = 0;
   for (let k = 0; k < 2 * rows && filled < rows; k += 1) {
-    const u = sampleState(model, random);
+    const u = sampleState(source, random);
     evaluate(0, u, p, f);
     if (!f.every(Number.isFinite)) continue;
     terms.forEach((term, j) => {
@@ -172,12 +196,12 @@ function scaleColumns(A: Float64Array, rows: number, terms: readonly CandidateTe
 }
 
 /** Whether two constants have parallel gradients wherever it was tried. */
-function isMultiple(model: ModelGraph, one: ConstantOfMotion, other: ConstantOfMotion): boolean {
-  const n = model.stateSymbols.length;
+function isMultiple(source: FlowSource, one: ConstantOfMotion, other: ConstantOfMotion): boolean {
+  const n = source.stateSymbols.length;
   const [a, b] = [new Float64Array(n), new Float64Array(n)];
   const random = seededRandom(PROOF.seed);
   for (let k = 0; k < 4; k += 1) {
-    const u = sampleState(model, random);
+    const u = sampleState(source, random);
     one.gradient(u, a);
     other.gradient(u, b);
     const dot = a.reduce((sum, value, i) => sum + value * (b[i] ?? 0), 0);
@@ -190,7 +214,7 @@ function isMultiple(model: ModelGraph, one: ConstantOfMotion, other: ConstantOfM
 
 /** Remarks on the constants entered: unreadable, or changing along trajectories at the document's parameters. */
 export function checkConstants(model: ModelGraph): readonly Diagnostic[] {
-  return model.document.constantsOfMotion.flatMap((formula, k) => {
+  return model.givenConstants.flatMap((formula, k) => {
     const path = ['constantsOfMotion', k];
     const parsed = parseCached(formula);
     if (!parsed.ok) {

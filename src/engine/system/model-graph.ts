@@ -23,23 +23,31 @@ export interface ProcessNodes {
   readonly effects: readonly { readonly state: number; readonly amount: NodeId }[];
 }
 
-/** A document as expressions: the common source of equations, events, checks and the pooled twin. */
-export interface ModelGraph {
-  readonly document: PresetDocument;
+/** Expressions of a flow du/dt = f: those of the split model, or those of its pooled twin. */
+export interface FlowSource {
   readonly graph: ExpressionGraph;
   readonly stateSymbols: readonly string[];
   readonly populations: readonly StatePopulation[];
   readonly nonnegative: readonly boolean[];
+  /** Start values, for the size of sample states. */
+  readonly starts: Float64Array;
+  /** Node of every symbol that formulas can read. */
+  readonly symbols: ReadonlyMap<string, NodeId>;
+  readonly equations: readonly NodeId[];
+  /** Constants of motion entered with the document. */
+  readonly givenConstants: readonly string[];
+}
+
+/** A document as expressions: the common source of equations, events, checks and the pooled twin. */
+export interface ModelGraph extends FlowSource {
+  readonly document: PresetDocument;
   readonly parameterKeys: readonly string[];
   readonly defaults: Float64Array;
   /** Index into parameterKeys of the common spread dial. */
   readonly spreadIndex: number;
   readonly groups: readonly SpreadGroup[];
-  /** Node of every symbol that formulas can read. */
-  readonly symbols: ReadonlyMap<string, NodeId>;
-  readonly processes: readonly ProcessNodes[];
   /** dN_i/dt = sum over processes of effect_i * rate. */
-  readonly equations: readonly NodeId[];
+  readonly processes: readonly ProcessNodes[];
 }
 
 export interface GraphResult {
@@ -131,6 +139,8 @@ class Builder {
       symbols: this.nodes,
       processes,
       equations,
+      starts: Float64Array.from(classes, (entry) => entry.class.start),
+      givenConstants: document.constantsOfMotion,
     };
     return { model, errors: [] };
   }

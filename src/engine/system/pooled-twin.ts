@@ -4,7 +4,7 @@ import type { PresetDocument, Trait } from '../schema/preset';
 import { compileSystem, type CompileOptions } from './compile-system';
 import type { CompiledSystem, TwinReport } from './contract';
 import { isLumpable } from './lumpability';
-import type { ModelGraph } from './model-graph';
+import type { FlowSource, ModelGraph } from './model-graph';
 import { classWeights, effectiveTraitValues, spreadGroups } from './spread';
 
 /** The community without the differences, ready to be computed with. */
@@ -12,6 +12,8 @@ export interface PooledTwin {
   readonly report: TwinReport;
   /** Null where there is no twin. Takes the same parameters as the split model. */
   readonly system: CompiledSystem | null;
+  /** The expressions that it was compiled from, for its own constants of motion. */
+  readonly source: FlowSource | null;
   /** For each state of the twin, the states of the split model that it stands for. */
   readonly states: readonly (readonly number[])[];
   /** Part of each split state in its population's total when pooled. */
@@ -30,7 +32,7 @@ export function makePooledTwin(model: ModelGraph, options: CompileOptions = {}):
   const weights = Float64Array.from(
     document.populations.flatMap((one) => classWeights(document, one.symbol)),
   );
-  const none = { system: null, states: [], weights };
+  const none = { system: null, source: null, states: [], weights };
   const pooled = pooledTraits(document);
   const partial = partialTraits(document);
   const report = { pooledTraits: pooled, leftTraits: partial.map((one) => one.trait.symbol) };
@@ -53,27 +55,29 @@ export function makePooledTwin(model: ModelGraph, options: CompileOptions = {}):
   }
   const kind = lumpable ? 'lumped' : 'unlumped';
   const full = { ...report, kind, reason: reasonOf(document, lumpable, pooled, partial) } as const;
-  if (!lumpable) {
-    const states = model.stateSymbols.map((_, i) => [i]);
-    return {
-      report: full,
-      system: compileSystem({ ...model, equations: pooledEquations }, options),
-      states,
-      weights,
-    };
-  }
-  const system = compileLumped(model, pooledEquations, weights, options);
-  return { report: full, system, states: model.populations.map((one) => one.states), weights };
+  const symbols = [...model.symbols];
+  const meanings = substitute(
+    graph,
+    symbols.map(([, node]) => node),
+    (node) => (node === spread ? zero : null),
+  );
+  const split: FlowSource = {
+    ...model,
+    equations: pooledEquations,
+    symbols: new Map(symbols.map(([symbol], k) => [symbol, meanings[k] ?? zero])),
+  };
+  const source = lumpable ? lump(split, weights) : split;
+  const { parameterKeys, defaults } = model;
+  const system = compileSystem({ ...source, parameterKeys, defaults }, options);
+  const states = lumpable
+    ? model.populations.map((one) => one.states)
+    : model.stateSymbols.map((_, i) => [i]);
+  return { report: full, system, source, states, weights };
 }
 
 /** One state a population: the sum of its equations with u_i = w_i U. */
-function compileLumped(
-  model: ModelGraph,
-  equations: readonly NodeId[],
-  weights: Float64Array,
-  options: CompileOptions,
-): CompiledSystem {
-  const { graph, populations } = model;
+function lump(split: FlowSource, weights: Float64Array): FlowSource {
+  const { graph, populations } = split;
   const stands = new Map<NodeId, NodeId>();
   populations.forEach((population, k) => {
     const total = graph.state(k);
@@ -83,20 +87,26 @@ function compileLumped(
       stands.set(graph.state(i), graph.multiply(graph.constant(weight), total));
     }
   });
-  const sums = populations.map((population) => graph.sum(population.states.map((i) => equations[i] ?? 0)));
-  const lumped = substitute(graph, sums, (node) => stands.get(node) ?? null);
-  return compileSystem(
-    {
-      graph,
-      equations: lumped,
-      stateSymbols: populations.map((population) => population.symbol),
-      parameterKeys: model.parameterKeys,
-      defaults: model.defaults,
-      nonnegative: populations.map((population) => model.nonnegative[population.states[0] ?? 0] ?? true),
-      populations: populations.map((population, k) => ({ ...population, states: [k] })),
-    },
-    options,
+  const lumped = (nodes: readonly NodeId[]): NodeId[] =>
+    substitute(graph, nodes, (node) => stands.get(node) ?? null);
+  const sums = populations.map((population) =>
+    graph.sum(population.states.map((i) => split.equations[i] ?? 0)),
   );
+  const names = [...split.symbols.keys()];
+  const meanings = lumped([...split.symbols.values()]);
+  const totals = populations.map((one, k) => [one.symbol, graph.state(k)] as const);
+  return {
+    graph,
+    equations: lumped(sums),
+    stateSymbols: populations.map((population) => population.symbol),
+    nonnegative: populations.map((population) => split.nonnegative[population.states[0] ?? 0] ?? true),
+    populations: populations.map((population, k) => ({ ...population, states: [k] })),
+    starts: Float64Array.from(populations, (one) =>
+      one.states.reduce((sum, i) => sum + (split.starts[i] ?? 0), 0),
+    ),
+    symbols: new Map([...names.map((name, k) => [name, meanings[k] ?? 0] as const), ...totals]),
+    givenConstants: split.givenConstants,
+  };
 }
 
 /** Traits that the common dial pools and that differ between classes, as entered. */

@@ -1,12 +1,14 @@
 import { traitEntrySymbol } from '../schema/symbols';
-import { listClasses } from '../schema/document-symbols';
-import type { ModelGraph } from './model-graph';
+import type { FlowSource, ModelGraph } from './model-graph';
 
-/** A random state of the size of the start values; of either sign where the population allows it. */
-export function sampleState(model: ModelGraph, random: () => number): Float64Array {
-  return Float64Array.from(listClasses(model.document), (entry) => {
-    const size = (Math.abs(entry.class.start) || 1) * Math.exp(2 * (random() - 0.5));
-    return entry.population.sign === 'any' && random() < 0.5 ? -size : size;
+/** A random state of the size of the start values; of either sign where the state may have it. */
+export function sampleState(
+  source: Pick<FlowSource, 'starts' | 'nonnegative'>,
+  random: () => number,
+): Float64Array {
+  return Float64Array.from(source.starts, (start, i) => {
+    const size = (Math.abs(start) || 1) * Math.exp(2 * (random() - 0.5));
+    return source.nonnegative[i] !== true && random() < 0.5 ? -size : size;
   });
 }
 

@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest';
 
 import { createPreset } from '@/engine/schema/create';
 import type { PresetDocument } from '@/engine/schema/preset';
+import { compileModel } from '@/engine/system/compile-model';
 import { constantsOfMotionAt } from '@/engine/system/constants-of-motion';
 import { checkDefinition } from '@/engine/system/diagnostics';
 import { buildModelGraph } from '@/engine/system/model-graph';
@@ -72,6 +73,31 @@ describe('constants of motion', () => {
   it('finds it for a split prey with equal attack rates', () => {
     expect(found(splitPrey(0))).toEqual(['X + y - log(X) - log(y)']);
     expect(found(splitPrey(0.1))).toEqual([]);
+  });
+
+  it('finds the constant of the pooled twin, where the split model has none', () => {
+    const result = compileModel(splitPredator(0.3));
+    const { twin, source } = result.ok ? result.model : { twin: null, source: null };
+    if (!twin?.source || !source) throw new Error('no twin');
+    expect(constantsOfMotionAt(source, source.defaults)).toEqual([]);
+    expect(constantsOfMotionAt(twin.source, source.defaults).map((one) => one.formula)).toEqual([
+      'x + Y - log(x) - log(Y)',
+    ]);
+    const given = compileModel(splitPredator(0.3, { constantsOfMotion: ['x + y1 + y2 - log(x*(y1 + y2))'] }));
+    const constants =
+      given.ok && given.model.twin.source
+        ? constantsOfMotionAt(given.model.twin.source, source.defaults)
+        : [];
+    expect(constants.map((one) => one.origin)).toEqual(['given']);
+    expect(constants[0]?.value([2, 3])).toBeCloseTo(5 - Math.log(6), 14);
+  });
+
+  it('can be asked as often as sliders move', () => {
+    const { model } = buildModelGraph(classic());
+    if (model === null) throw new Error('no model');
+    const size = model.graph.size;
+    for (let k = 1; k <= 50; k += 1) expect(constantsOfMotionAt(model, [k / 7])).toHaveLength(1);
+    expect(model.graph.size).toBe(size);
   });
 
   it('finds none where the prey regulates itself, however weakly', () => {
