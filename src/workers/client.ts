@@ -1,0 +1,51 @@
+import { proxy } from 'comlink';
+
+import { EngineWorkerHost, type WorkerLike } from './engine-worker-host';
+import { NewestWins } from './newest-wins';
+import type { EngineClient, ExploreRequest, ExploreResult } from './protocol';
+
+export { EngineStopped } from './engine-worker-host';
+export type { EngineClient } from './protocol';
+
+function createEngineWorker(): WorkerLike {
+  return new Worker(new URL('./engine.worker.ts', import.meta.url), { type: 'module' });
+}
+
+/**
+ * The engine in two workers of its own: one answers live requests, the newest first, and one runs the
+ * long jobs, so that a sweep never holds up a slider. Both are given every model.
+ *
+ * @param createWorker replaced in tests
+ */
+export function createEngineClient(createWorker: () => WorkerLike = createEngineWorker): EngineClient {
+  const live = new EngineWorkerHost(createWorker);
+  const jobs = new EngineWorkerHost(createWorker);
+  const explore = new NewestWins<ExploreRequest, ExploreResult>((request) =>
+    live.call((api) => api.explore(request)),
+  );
+  return {
+    async setModel(document) {
+      const report = live.call((api) => api.setModel(document));
+      const same = jobs.call((api) => api.setModel(document));
+      same.catch(() => undefined);
+      const answer = await report;
+      if (answer.valid) {
+        live.remember(document);
+        jobs.remember(document);
+      }
+      return answer;
+    },
+    explore: (request) => explore.request(request),
+    findEquilibria: (job, values, onProgress) =>
+      jobs.call((api) => api.findEquilibria(job, values, proxy(onProgress))),
+    sweep: (job, request, onProgress) => jobs.call((api) => api.sweep(job, request, proxy(onProgress))),
+    secondOpinion: (request) => jobs.call((api) => api.secondOpinion(request)),
+    cancel(job) {
+      jobs.call((api) => api.cancel(job)).catch(() => undefined);
+    },
+    dispose() {
+      live.dispose();
+      jobs.dispose();
+    },
+  };
+}
