@@ -1,7 +1,10 @@
 import { freeSymbol, listClasses } from './document-symbols';
 import { HUES, type Population, type PresetDocument, type Trait, type TraitEntry } from './preset';
 import { renameInFormula } from './rename';
+import { rewriteUntouched } from './templates/rewrite';
 import { traitEntrySymbol } from './symbols';
+
+export { freeProcessId, removeGroup } from './process-groups';
 
 /** Adds a population of one class, both under one free symbol, in the first hue not yet in use. */
 export function addPopulation(document: PresetDocument, name: string, wanted = 'N'): PresetDocument {
@@ -20,24 +23,33 @@ export function addPopulation(document: PresetDocument, name: string, wanted = '
 }
 
 /**
- * Adds a class to a population. A population that shared its symbol with its only class keeps it as
- * the name of the total, and that class gets a symbol of its own, so that formulas go on reading the
- * total. Traits that every class of the population had get a value for the new class, equal to the last one.
+ * Adds a class to a population, keeping its total: the new class shares the last one's start value and
+ * share of births with it. A population that shared its symbol with its only class keeps it as the name of
+ * the total, and that class gets a symbol of its own, so that formulas go on reading the total. Other
+ * traits that every class had get a value equal to the last one. Processes of templates that
+ * were not changed by hand are written anew, the new class included.
  */
 export function addClass(document: PresetDocument, population: string, name: string): PresetDocument {
   const before = document.populations.find((entry) => entry.symbol === population);
-  if (before === undefined) return document;
+  const last = before?.classes[before.classes.length - 1];
+  if (before === undefined || last === undefined) return document;
   const split = separateOnlyClass(document, before);
   const current = split.populations.find((entry) => entry.symbol === population) ?? before;
   const symbol = freeSymbol(split, `${population}${current.classes.length + 1}`);
-  const start = current.classes[current.classes.length - 1]?.start ?? 1;
   const shade = Math.min(11, current.classes.length);
-  const grown = { ...current, classes: [...current.classes, { symbol, name, shade, start }] };
-  return {
+  const halved = current.classes.map((one, k) =>
+    k === current.classes.length - 1 ? { ...one, start: one.start / 2 } : one,
+  );
+  const grown = { ...current, classes: [...halved, { symbol, name, shade, start: last.start / 2 }] };
+  const after = {
     ...split,
     populations: split.populations.map((entry) => (entry.symbol === population ? grown : entry)),
     traits: split.traits.map((trait) => ({ ...trait, entries: extendEntries(trait, current, symbol) })),
   };
+  const first = current.classes[0]?.symbol ?? population;
+  return rewriteUntouched(document, after, population, (one) =>
+    one === before.classes[0]?.symbol ? first : one,
+  );
 }
 
 function separateOnlyClass(document: PresetDocument, population: Population): PresetDocument {
@@ -76,6 +88,10 @@ function separateOnlyClass(document: PresetDocument, population: Population): Pr
     intermediates: document.intermediates.map((entry) => ({ ...entry, formula: formula(entry.formula) })),
     constantsOfMotion: document.constantsOfMotion.map(formula),
     box: document.box.map((side) => ({ ...side, class: one(side.class) })),
+    sweeps: document.sweeps.map((sweep) => ({
+      ...sweep,
+      parameter: values.get(sweep.parameter) ?? sweep.parameter,
+    })),
   };
 }
 
@@ -90,28 +106,36 @@ function extendEntries(trait: Trait, population: Population, added: string): Tra
     for (const entry of [...entries]) {
       if (entry.of[slot] !== last) continue;
       const of = entry.of.map((name, k) => (k === slot ? added : name));
-      entries.push({ ...entry, of, standardError: null, source: '' });
+      const value = trait.role === 'share-of-births' ? entry.value / 2 : entry.value;
+      entries.splice(entries.indexOf(entry), 1, { ...entry, value });
+      entries.push({ ...entry, of, value, standardError: null, source: '' });
     }
   }
   return entries;
 }
 
-/** Removes a class with its trait values, effects and box side; a population's last class takes the population along. */
+/**
+ * Removes a class with its trait values, effects and box side; a population's last class takes the
+ * population along. Shares of births of the classes that stay are scaled to their old sum. Processes of
+ * templates that were not changed by hand are written anew without it.
+ */
 export function removeClass(document: PresetDocument, symbol: string): PresetDocument {
   const gone = listClasses(document).find((entry) => entry.class.symbol === symbol);
   if (gone === undefined) return document;
-  return {
+  const population = gone.population.symbol;
+  const stays = gone.population.classes.length > 1;
+  const after = {
     ...document,
     populations: document.populations
       .map((entry) =>
-        entry.symbol === gone.population.symbol
+        entry.symbol === population
           ? { ...entry, classes: entry.classes.filter((one) => one.symbol !== symbol) }
           : entry,
       )
       .filter((entry) => entry.classes.length > 0),
     traits: document.traits.map((trait) => ({
       ...trait,
-      entries: trait.entries.filter((entry) => !entry.of.includes(symbol)),
+      entries: withoutClass(trait, gone.population, symbol),
     })),
     processes: document.processes
       .map((process) => ({
@@ -121,6 +145,21 @@ export function removeClass(document: PresetDocument, symbol: string): PresetDoc
       .filter((process, k) => process.effects.length > 0 || document.processes[k]?.effects.length === 0),
     box: document.box.filter((side) => side.class !== symbol),
   };
+  const renamed = (one: string): string | null =>
+    one === symbol || (!stays && one === population) ? null : one;
+  return rewriteUntouched(document, after, population, renamed);
+}
+
+function withoutClass(trait: Trait, population: Population, symbol: string): TraitEntry[] {
+  const rest = trait.entries.filter((entry) => !entry.of.includes(symbol));
+  if (trait.role !== 'share-of-births') return rest;
+  const own = (entry: TraitEntry): boolean => population.classes.some((one) => one.symbol === entry.of[0]);
+  const sumOf = (entries: readonly TraitEntry[]): number =>
+    entries.filter(own).reduce((sum, entry) => sum + entry.value, 0);
+  const scale = sumOf(trait.entries) / sumOf(rest);
+  return Number.isFinite(scale)
+    ? rest.map((entry) => (own(entry) ? { ...entry, value: Math.min(1, entry.value * scale) } : entry))
+    : rest;
 }
 
 /** Removes a population with all its classes. */
@@ -128,22 +167,4 @@ export function removePopulation(document: PresetDocument, symbol: string): Pres
   const population = document.populations.find((entry) => entry.symbol === symbol);
   if (population === undefined) return document;
   return population.classes.reduce((rest, entry) => removeClass(rest, entry.symbol), document);
-}
-
-/** Removes every process that one use of a template wrote. */
-export function removeGroup(document: PresetDocument, group: string): PresetDocument {
-  return {
-    ...document,
-    processes: document.processes.filter((process) => process.template?.group !== group),
-  };
-}
-
-/** An id for a new process that no other process has. */
-export function freeProcessId(document: PresetDocument, wanted: string): string {
-  const taken = new Set(document.processes.map((process) => process.id));
-  const base = wanted.slice(0, 56) || 'process';
-  if (!taken.has(base)) return base;
-  let k = 2;
-  while (taken.has(`${base}-${k}`)) k += 1;
-  return `${base}-${k}`;
 }

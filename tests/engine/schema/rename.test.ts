@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest';
 
 import { createPreset } from '@/engine/schema/create';
 import { addClass, addPopulation, removeClass, removePopulation } from '@/engine/schema/edit';
+import { checkDefinition } from '@/engine/system/diagnostics';
 import { renameInFormula, renameSymbol } from '@/engine/schema/rename';
 import type { PresetDocument } from '@/engine/schema/preset';
 import { splitPredator, springtailsAndSpiders, withTemplates } from '../../support/example-models';
@@ -99,16 +100,73 @@ describe('renameSymbol', () => {
 });
 
 describe('edits', () => {
-  it('splits a population: the old symbol stays the total, the new class inherits trait values', () => {
-    const before = withTemplates(springtailsAndSpiders(), ['deaths', { population: 'x' }]);
-    const after = addClass(before, 'x', 'Dark morph');
-    expect(after.populations[0]?.classes.map((one) => one.symbol)).toEqual(['x1', 'x2']);
+  it('splits a population: the old symbol stays the total, templates take the new class in', () => {
+    const before = withTemplates(
+      springtailsAndSpiders(),
+      ['exponential-births', { population: 'x' }],
+      ['predation', { consumer: 'Y', resources: ['x'], response: 'saturating' }],
+      ['deaths', { population: 'x' }],
+    );
+    const after = addClass(
+      { ...before, sweeps: [{ id: 's', name: '', parameter: 'm_x', from: 0, to: 1 }] },
+      'x',
+      'Dark morph',
+    );
+    expect(after.populations[0]?.classes.map((one) => [one.symbol, one.start])).toEqual([
+      ['x1', 0.25],
+      ['x2', 0.25],
+    ]);
     expect(after.populations[0]?.symbol).toBe('x');
-    expect(after.traits[0]?.entries.map((one) => [one.of[0], one.value])).toEqual([
+    expect(after.sweeps[0]?.parameter).toBe('m_x1');
+    expect(after.processes.map((one) => one.rate)).toEqual([
+      'b_x*x', 'a_y1_x1*x1*y1/sat_y1', 'a_y1_x2*x2*y1/sat_y1',
+      'a_y2_x1*x1*y2/sat_y2', 'a_y2_x2*x2*y2/sat_y2', 'm_x1*x1', 'm_x2*x2',
+    ]); // prettier-ignore
+    expect(after.intermediates[0]?.formula).toBe('1 + h_Y*(a_y1_x1*x1 + a_y1_x2*x2)');
+    expect(
+      checkDefinition(after).filter((one) => one.severity !== 'note' && one.path[0] !== 'populations'),
+    ).toEqual([]);
+    const shares = after.traits
+      .find((one) => one.role === 'share-of-births')
+      ?.entries.map((one) => [one.of[0], one.value]);
+    expect(shares).toEqual([
+      ['y1', 0.5],
+      ['y2', 0.5],
       ['x1', 0.5],
       ['x2', 0.5],
     ]);
-    expect(after.processes[0]).toMatchObject({ rate: 'm_x1*x', effects: [{ class: 'x1' }] });
+    const third = addClass(after, 'Y', 'Sterile');
+    expect(
+      third.traits
+        .find((one) => one.role === 'share-of-births')
+        ?.entries.filter((one) => one.of[0]?.startsWith('Y') || one.of[0]?.startsWith('y'))
+        .map((one) => one.value),
+    ).toEqual([0.5, 0.25, 0.25]);
+    expect(checkDefinition(third).filter((one) => one.severity === 'error')).toEqual([]);
+  });
+
+  it('leaves what was written or changed by hand to its author', () => {
+    const written = withTemplates(springtailsAndSpiders(), ['deaths', { population: 'x' }]);
+    const changed = {
+      ...written,
+      processes: written.processes.map((one) => ({ ...one, rate: `2*${one.rate}` })),
+    };
+    expect(addClass(changed, 'x', 'Dark').processes.map((one) => [one.rate, one.effects[0]?.class])).toEqual([
+      ['2*m_x1*x', 'x1'],
+    ]);
+  });
+
+  it('takes a removed class out of templates, and scales the shares that stay', () => {
+    const document = withTemplates(
+      springtailsAndSpiders(),
+      ['births-by-females', { population: 'Y', females: ['y2'] }],
+      ['deaths', { population: 'Y' }],
+    );
+    const rest = removeClass(document, 'y1');
+    expect(rest.processes.map((one) => one.rate)).toEqual(['b_Y*Y', 'm_y2*y2']);
+    expect(rest.traits[0]?.entries.map((one) => [one.of[0], one.value])).toEqual([['y2', 1]]);
+    expect(removeClass(document, 'y2').processes.map((one) => one.rate)).toEqual(['m_y1*y1']);
+    expect(removePopulation(document, 'Y').processes).toEqual([]);
   });
 
   it('removes a class with its values and effects, and an emptied population with it', () => {

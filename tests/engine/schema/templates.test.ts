@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest';
 
 import { createPreset } from '@/engine/schema/create';
 import { presetSchema, TEMPLATE_NAMES, type PresetDocument, type TemplateName } from '@/engine/schema/preset';
-import { applyTemplate, TEMPLATES, templateNamed } from '@/engine/schema/templates';
+import { applyTemplate, isFieldShown, TEMPLATES, templateNamed } from '@/engine/schema/templates';
 import { evaluateNodes } from '@/engine/system/evaluate-graph';
 import { buildModelGraph } from '@/engine/system/model-graph';
 import { springtailsAndSpiders, withTemplates } from '../../support/example-models';
@@ -34,6 +34,41 @@ describe('templates', () => {
       for (const field of template.fields) expect(known, template.name).toContain(field.name);
       expect(templateNamed(template.name)).toBe(template);
     }
+  });
+
+  it('shows the fields that matter', () => {
+    const { fields, defaults } = templateNamed('predation');
+    const shown = (settings: Record<string, unknown>) =>
+      fields
+        .filter((field) => isFieldShown(field, fields, { ...defaults(), ...settings }, base))
+        .map((one) => one.name);
+    expect(shown({ consumer: 'Y' })).toEqual([
+      'consumer',
+      'eaters',
+      'resources',
+      'response',
+      'attack',
+      'attackTrait',
+      'births',
+      'conversion',
+      'newborns',
+      'shares',
+      'seasonal',
+    ]);
+    expect(shown({ consumer: 'Y', births: false })).not.toContain('shares');
+    expect(shown({ consumer: 'Y', response: 'sigmoid' })).toContain('handlingTime');
+    expect(shown({ consumer: 'x' })).not.toContain('newborns');
+  });
+
+  it('keeps the place of processes that it writes again', () => {
+    const two = withTemplates(base, ['deaths', { population: 'x' }], ['deaths', { population: 'Y' }]);
+    const again = applyTemplate(two, 'deaths', { population: 'x', rate: 'one' }, 'deaths-1');
+    expect(again.ok && again.document.processes.map((one) => one.rate)).toEqual([
+      'm_x_2*x',
+      'm_y1*y1',
+      'm_y2*y2',
+    ]);
+    expect(again.ok && again.document.processes[0]?.template?.settings['rate']).toBe('one');
   });
 
   it('writes exponential births, pooled with shares', () => {

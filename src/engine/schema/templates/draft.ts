@@ -1,5 +1,5 @@
 import { listSymbols, freeSymbol } from '../document-symbols';
-import { freeProcessId } from '../edit';
+import { freeProcessId } from '../process-groups';
 import type {
   Parameter,
   Population,
@@ -27,6 +27,8 @@ export class TemplateDraft {
     readonly group: string,
     /** As given; symbols left empty are filled in as they are chosen. */
     readonly settings: Record<string, unknown>,
+    /** Where the next process goes: in the place of those it replaces, or at the end. */
+    private place: number = document.processes.length,
   ) {}
 
   refuse(field: string, message: string): void {
@@ -175,7 +177,10 @@ export class TemplateDraft {
       template: { name: this.template, settings: this.settings, group: this.group },
     };
     this.count += 1;
-    this.document = { ...this.document, processes: [...this.document.processes, process] };
+    const processes = [...this.document.processes];
+    processes.splice(this.place, 0, process);
+    this.place += 1;
+    this.document = { ...this.document, processes };
   }
   private count = 0;
 

@@ -109,8 +109,10 @@ export const predation: Template<Settings> = {
       label: 'Meals become young',
       help: 'Births of the consumer in proportion to what it eats.',
     },
-    parameterField('conversion', 'Young per meal', 'e'),
-    ...newbornFields('consumer'),
+    when('births', ['true'], parameterField('conversion', 'Young per meal', 'e')),
+    ...newbornFields('consumer').map((field) =>
+      field.name === 'newborns' ? when('births', ['true'], field) : field,
+    ),
     ...SEASON_FIELDS,
   ],
   write(draft, settings) {
