@@ -1,13 +1,12 @@
-import { releaseProxy, wrap, type Remote } from 'comlink';
+import { releaseProxy, wrap, type Endpoint, type Remote } from 'comlink';
 
 import type { PresetDocument } from '../engine/schema/preset';
 import type { EngineApi } from './protocol';
 
 /** What a worker must offer here; tests put one of their own in its place. */
-export type WorkerLike = Pick<
-  Worker,
-  'postMessage' | 'addEventListener' | 'removeEventListener' | 'terminate'
->;
+export interface WorkerLike extends Endpoint {
+  terminate(): void;
+}
 
 /** Crashes in a row, without an answer between them, after which a worker is not started again. */
 const MOST_CRASHES = 3;
@@ -63,7 +62,7 @@ export class EngineWorkerHost {
     this.worker = worker;
     worker.addEventListener('error', this.handleCrash);
     worker.addEventListener('messageerror', this.handleCrash);
-    this.api = wrap<EngineApi>(worker as Worker);
+    this.api = wrap<EngineApi>(worker);
     // The report went out when the document was first set.
     if (this.document) this.api.setModel(this.document).catch(() => undefined);
   }

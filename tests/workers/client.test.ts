@@ -8,23 +8,27 @@ import type { EngineApi, ExploreRequest } from '../../src/workers/protocol';
 /** A worker of this thread: a message port with an engine behind it, and a way to make it die. */
 function makeWorker(api: Partial<Record<keyof EngineApi, (...rest: never[]) => unknown>>) {
   const { port1, port2 } = new MessageChannel();
-  const crashes: ((event: Event) => void)[] = [];
+  const crashes: EventListenerOrEventListenerObject[] = [];
   expose(api, port2);
   port1.start();
   const worker = {
     postMessage: (message: unknown, transfer?: Transferable[]) => port1.postMessage(message, transfer ?? []),
-    addEventListener: (type: string, listener: (event: Event) => void) => {
-      if (type === 'message') port1.addEventListener('message', listener as EventListener);
+    addEventListener: (type: string, listener: EventListenerOrEventListenerObject) => {
+      if (type === 'message') port1.addEventListener('message', listener);
       else if (type === 'error') crashes.push(listener);
     },
-    removeEventListener: (type: string, listener: (event: Event) => void) =>
-      port1.removeEventListener(type, listener as EventListener),
+    removeEventListener: (type: string, listener: EventListenerOrEventListenerObject) =>
+      port1.removeEventListener(type, listener),
     terminate: vi.fn(() => {
       port1.close();
       port2.close();
     }),
-    crash: (message: string) =>
-      crashes.forEach((listener) => listener(Object.assign(new Event('error'), { message }))),
+    crash(message: string) {
+      const event = Object.assign(new Event('error'), { message });
+      for (const listener of crashes)
+        if (typeof listener === 'function') listener(event);
+        else listener.handleEvent(event);
+    },
   };
   return worker;
 }
