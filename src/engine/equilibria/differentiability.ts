@@ -11,14 +11,13 @@ import { lowDiscrepancyPoint } from './low-discrepancy';
 export const DIFFERENTIABILITY_DEFAULTS = {
   directions: 4,
   /** Steps relative to the scale of each state; the distance must fall by more than half between them. */
-  steps: [1e-4, 1e-5],
+  steps: [1e-6, 1e-7],
   /** Distances below this share of |J v| count as none. */
   noise: 1e-3,
 } as const;
 
 export type Differentiability =
-  | { readonly differentiable: true }
-  | { readonly differentiable: false; readonly reason: string };
+  { readonly differentiable: true } | { readonly differentiable: false; readonly reason: string };
 
 /**
  * @param moved states moved by the test directions; the others stay

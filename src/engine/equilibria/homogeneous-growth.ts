@@ -72,16 +72,15 @@ function settle(
         status: 'not-homogeneous',
         reason: 'the per capita rates at vanishing density depend on the density itself',
       };
-  let tau = 0;
-  let growthRate = 0;
+
   for (let k = 0; k < HOMOGENEOUS_DEFAULTS.iterations; k += 1) {
     if (!evaluate(WHISKER)) return notFinite();
-    growthRate = h.reduce((sum, x) => sum + x, 0);
+    const growthRate = h.reduce((sum, x) => sum + x, 0);
     let fastest = 0;
     for (let a = 0; a < m; a += 1)
       if (v[a] > 1e-12) fastest = Math.max(fastest, Math.abs(h[a]) / v[a], Math.abs(h[a]));
     if (fastest === 0) return { status: 'settled', growthRate: 0, composition: v };
-    tau = HOMOGENEOUS_DEFAULTS.stepShare / fastest;
+    const tau = HOMOGENEOUS_DEFAULTS.stepShare / fastest;
     let moved = 0;
     for (let a = 0; a < m; a += 1) {
       // Change of composition: h - (sum h) v, on the simplex sum v = 1.

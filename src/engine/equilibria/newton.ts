@@ -176,7 +176,8 @@ export function newton(problem: NewtonProblem, start: Float64Array, options: New
       if (!Number.isFinite(factor)) return end('not-converged', iteration);
       // A turned step longer than the state itself says nothing; keep its direction.
       const longest = 10 / length;
-      if (Math.abs(factor) > longest && Math.abs(factor) > 1) factor = Math.sign(factor) * Math.max(1, longest);
+      if (Math.abs(factor) > longest && Math.abs(factor) > 1)
+        factor = Math.sign(factor) * Math.max(1, longest);
     }
     let accepted = false;
     for (let damping = 1; damping >= NEWTON_DEFAULTS.smallestDamping; damping /= 2) {

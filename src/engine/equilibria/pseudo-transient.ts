@@ -25,7 +25,7 @@ export function pseudoTransient(
   const f = new Float64Array(m);
   const J = new Float64Array(m * m);
   const A = new Float64Array(m * m);
-  const d = new Float64Array(m);
+  const right = new Float64Array(m);
   let h = 0;
   for (let k = 0; k < PSEUDO_TRANSIENT_DEFAULTS.steps; k += 1) {
     problem.residual(u, f);
@@ -35,10 +35,11 @@ export function pseudoTransient(
     for (let attempt = 0; attempt < 12 && !moved; attempt += 1) {
       if (attempt > 0) h /= 4;
       for (let i = 0; i < m; i += 1) {
-        d[i] = direction * f[i];
+        right[i] = direction * f[i];
         for (let j = 0; j < m; j += 1) A[i * m + j] = -direction * J[i * m + j] + (i === j ? 1 / h : 0);
       }
-      if (!solveDense(A, d, m)) continue;
+      const d = solveDense(A, right, m);
+      if (d === null) continue;
       moved = true;
       for (let i = 0; i < m; i += 1) {
         next[i] = u[i] + d[i];
