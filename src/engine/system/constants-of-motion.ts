@@ -68,6 +68,7 @@ export function proveConstant(
   const parsed = parseCached(formula);
   if (!parsed.ok) return null;
   const added = addTree(graph, parsed.tree, (symbol) => symbols.get(symbol) ?? null);
+  if (!added.ok) graph.forgiveOverflow();
   if (!added.ok || !graph.dependsOnState(added.node) || graph.dependsOnTime(added.node)) return null;
   const V = added.node;
   const slopes = differentiateByStates(graph, [V], n);
@@ -223,6 +224,7 @@ export function checkConstants(model: ModelGraph): readonly Diagnostic[] {
     }
     const added = addTree(model.graph, parsed.tree, (symbol) => model.symbols.get(symbol) ?? null);
     if (!added.ok) {
+      model.graph.forgiveOverflow();
       const { message, range, suggestion } = added.failure;
       return [{ severity: 'error' as const, path, range, message, suggestion }];
     }

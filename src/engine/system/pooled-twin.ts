@@ -20,6 +20,9 @@ export interface PooledTwin {
   readonly weights: Float64Array;
 }
 
+const TOO_LARGE =
+  'Not comparable, because the formulas are too large for a pooled twin to be made beside them.';
+
 /**
  * Makes the pooled twin. The common dial is held at 0, so that every trait that follows it is at its
  * mean; a trait's own dial still moves traits that do not follow. Where the total of each population
@@ -40,9 +43,14 @@ export function makePooledTwin(model: ModelGraph, options: CompileOptions = {}):
     const reason = 'No population is split into classes, so there is nothing to pool.';
     return { ...none, report: { ...report, kind: 'no-split', reason } };
   }
+  const tooLarge = (): PooledTwin => {
+    graph.forgiveOverflow();
+    return { ...none, report: { ...report, kind: 'not-comparable', reason: TOO_LARGE } };
+  };
   const spread = graph.parameter(model.spreadIndex);
   const zero = graph.constant(0);
   const pooledEquations = substitute(graph, model.equations, (node) => (node === spread ? zero : null));
+  if (graph.full) return tooLarge();
   const jacobian = differentiateByStates(graph, pooledEquations, n);
   const fits = !graph.full;
   graph.forgiveOverflow();
@@ -67,6 +75,7 @@ export function makePooledTwin(model: ModelGraph, options: CompileOptions = {}):
     symbols: new Map(symbols.map(([symbol], k) => [symbol, meanings[k] ?? zero])),
   };
   const source = lumpable ? lump(split, weights) : split;
+  if (graph.full) return tooLarge();
   const { parameterKeys, defaults } = model;
   const system = compileSystem({ ...source, parameterKeys, defaults }, options);
   const states = lumpable
