@@ -65,7 +65,7 @@ export function describeEquilibrium(
       ? withoutDerivative(system, invasions, absent.length, atKink)
       : classify(spectrum, {
           neutralProven: (options.constantsOfMotion ?? []).length > 0,
-          isOnCurve: () => curveThrough(system, u, seenFrom, J, scale),
+          isOnCurve: () => curveThrough(system, u, wholeSpace(system), J, scale),
         });
   return {
     state: u,

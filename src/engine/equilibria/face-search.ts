@@ -29,6 +29,8 @@ export const FACE_SEARCH_DEFAULTS = {
   absentShare: 1e-9,
   /** A state below this share of its scale is rounding of zero. */
   zeroShare: 1e-13,
+  /** A state whose flows do not balance to this share is no equilibrium. */
+  largestResidual: 1e-9,
   /** A curve of equilibria is represented by so many of its points. */
   curvePoints: 3,
   /** Equilibria kept on one face. */
@@ -154,7 +156,7 @@ export class FaceSearch {
       this.scale,
       this.options.describe,
     );
-    if (equilibrium === null) return false;
+    if (equilibrium === null || equilibrium.residual > FACE_SEARCH_DEFAULTS.largestResidual) return false;
     if (equilibrium.type === 'not isolated') {
       this.curvePoints += 1;
       if (this.curvePoints > FACE_SEARCH_DEFAULTS.curvePoints) return false;

@@ -4,8 +4,8 @@ import { faceProblem, type Face } from './face-system';
 
 /**
  * Equilibria on a face with one free state: the rate is sampled along the line, each change of sign is
- * bisected, and each smallest absolute value without one (two equilibria about to meet) is kept as a
- * start for Newton's method. Finer than any multi-start: pairs are missed only when closer than
+ * bisected, and where the rate turns back just before zero (two equilibria about to meet) the turning
+ * point is found, with an equilibrium on either side of it or, as a start, itself. Finer than any multi-start: pairs are missed only when closer than
  * the sampling. Returns start points, not yet polished.
  */
 export const LINE_SCAN_DEFAULTS = { linear: 400, byMagnitude: 400, decadesDown: 6, decadesUp: 3 } as const;
@@ -27,9 +27,15 @@ export function scanLine(system: CompiledSystem, face: Face, box: StateBox): Flo
     if (k === 0) continue;
     if (fs[k - 1] * fs[k] < 0) starts.push(Float64Array.of(bisect(rate, xs[k - 1], xs[k], fs[k - 1])));
     const after = fs[k + 1];
-    const isLowest = Math.abs(fs[k]) < Math.abs(fs[k - 1]) && Math.abs(fs[k]) < Math.abs(after ?? Infinity);
-    if (isLowest && fs[k - 1] * fs[k] > 0 && (after === undefined || fs[k] * after > 0))
-      starts.push(Float64Array.of(lowest(rate, xs[k - 1], xs[Math.min(k + 1, xs.length - 1)])));
+    const isLowest = Math.abs(fs[k]) < Math.abs(fs[k - 1]) && Math.abs(fs[k]) <= Math.abs(after ?? Infinity);
+    if (!isLowest || fs[k - 1] * fs[k] <= 0 || (after !== undefined && fs[k] * after <= 0)) continue;
+    const low = xs[k - 1];
+    const high = xs[Math.min(k + 1, xs.length - 1)];
+    const turn = turningPoint(rate, low, high, Math.sign(fs[k]));
+    if (rate(turn) * fs[k] < 0) {
+      starts.push(Float64Array.of(bisect(rate, low, turn, fs[k])));
+      starts.push(Float64Array.of(bisect(rate, turn, high, -fs[k])));
+    } else starts.push(Float64Array.of(turn));
   }
   return starts;
 }
@@ -68,15 +74,19 @@ function bisect(rate: (x: number) => number, low: number, high: number, atLow: n
   return (a + b) / 2;
 }
 
-/** Place of the smallest |rate| in an interval by golden section. */
-function lowest(rate: (x: number) => number, low: number, high: number): number {
+/** Where sign * rate is smallest in an interval, by golden section; stops once it has changed sign. */
+function turningPoint(rate: (x: number) => number, low: number, high: number, sign: number): number {
   const golden = (Math.sqrt(5) - 1) / 2;
   let a = low;
   let b = high;
   for (let k = 0; k < 70 && b - a > 1e-15 * Math.abs(b); k += 1) {
     const left = b - golden * (b - a);
     const right = a + golden * (b - a);
-    if (Math.abs(rate(left)) < Math.abs(rate(right))) b = right;
+    const atLeft = sign * rate(left);
+    const atRight = sign * rate(right);
+    if (atLeft < 0) return left;
+    if (atRight < 0) return right;
+    if (atLeft < atRight) b = right;
     else a = left;
   }
   return (a + b) / 2;

@@ -46,6 +46,8 @@ export const NEWTON_DEFAULTS = {
   maximumIterations: 60,
   /** A residual at rounding level of the flows ends the iteration at singular roots. */
   roundingResidual: 1e-14,
+  /** Residual that a root with a singular Jacobian must reach. */
+  singularResidual: 1e-10,
   /** States below this share of their typical size are measured against it. */
   floor: 1e-6,
   /** Beyond this multiple of the typical size the iteration is called diverged. */
@@ -155,7 +157,11 @@ export function newton(problem: NewtonProblem, start: Float64Array, options: New
     const d = step?.direction ?? leastSquaresStep(J, f, m);
     if (!allFinite(d)) return end('not-finite', iteration);
     length = relativeLength(d, u, scale);
-    if (length <= tolerance) {
+    // A regularised step is short wherever J vanishes; it shows a root only together with a small residual.
+    if (
+      length <= tolerance &&
+      (step !== null || relativeResidual(problem, u, scale) <= NEWTON_DEFAULTS.singularResidual)
+    ) {
       for (let i = 0; i < m; i += 1) u[i] += d[i];
       return end('converged', iteration);
     }
