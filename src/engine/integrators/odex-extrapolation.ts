@@ -1,5 +1,3 @@
-import { Outcome, Solver } from 'odex';
-
 import type { CompiledSystem } from '../system/contract';
 import {
   INTEGRATION_DEFAULTS,
@@ -8,6 +6,7 @@ import {
   type IntegrationStatus,
   type Trajectory,
 } from './contract';
+import { Solver } from './odex-package';
 
 /** A step of extrapolation costs up to about a hundred evaluations; so many are a spent budget as well. */
 const EVALUATIONS_PER_STEP = 100;
@@ -18,6 +17,9 @@ const EVALUATIONS_PER_STEP = 100;
  */
 const REPELLENT_SLOPE = 1e100;
 const MOST_REPELLED = 2000;
+
+/** `Outcome.Converged` of the package. */
+const CONVERGED = 0;
 
 /** Leaves the package's loop. */
 class Halt extends Error {
@@ -81,7 +83,7 @@ export function integrateByExtrapolation(
       rejected = result.nReject;
       for (let i = 0; i < n; i += 1) u[i] = result.y[i];
       // The last time is the end of the last step itself.
-      if (result.outcome === Outcome.Converged && filled === times.length - 1) {
+      if (result.outcome === CONVERGED && filled === times.length - 1) {
         states.set(u, filled * n);
         filled += 1;
       }

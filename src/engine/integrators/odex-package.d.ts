@@ -1,4 +1,4 @@
-/** Types of what odex 2.0.4 exports and we use; the .ts that it ships fails strict checks. */
+/** Types of what odex 2.0.4 exports and we use. */
 export type Derivative = (t: number, y: number[]) => number[];
 
 /** Called with the start (step 1) and after each step; false ends the run. `dense` reaches from tOld to t. */
@@ -9,12 +9,6 @@ export type OutputFunction = (
   y: number[],
   dense?: (component: number, t: number) => number,
 ) => boolean | void;
-
-export declare enum Outcome {
-  Converged,
-  MaxStepsExceeded,
-  EarlyReturn,
-}
 
 export declare class Solver {
   constructor(n: number);
@@ -31,7 +25,8 @@ export declare class Solver {
 
 export interface SolverResult {
   readonly y: number[];
-  readonly outcome: Outcome;
+  /** 0 reached the end, 1 steps spent, 2 ended by the output function. */
+  readonly outcome: 0 | 1 | 2;
   readonly xEnd: number;
   readonly nStep: number;
   readonly nAccept: number;
