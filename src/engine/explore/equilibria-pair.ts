@@ -1,0 +1,139 @@
+import type { Progress } from '../continuation/contract';
+import type { EquilibriaResult } from '../equilibria/contract';
+import type { DescriptionOptions } from '../equilibria/describe';
+import { findEquilibria, type SearchOptions } from '../equilibria/search';
+import { trackEquilibria } from '../equilibria/track';
+import { SPREAD_KEY } from '../schema/symbols';
+import type { CompiledModel } from '../system/compile-model';
+import { constantsOfMotionAt } from '../system/constants-of-motion';
+import type { FlowSource } from '../system/model-graph';
+import type { EquilibriaPair, ParameterValues } from './contract';
+
+export interface PairSearchOptions {
+  /** States of the split model to start from as well; their totals serve the twin. */
+  readonly starts?: readonly Float64Array[];
+  /** False leaves the twin alone. */
+  readonly withTwin?: boolean;
+  readonly isCancelled?: () => boolean;
+}
+
+/**
+ * All equilibria of a model and of its pooled twin, in the document's box. A generator: partial
+ * results are those of the split model until the twin's turn.
+ */
+export function* findEquilibriaPair(
+  model: CompiledModel,
+  values: ParameterValues,
+  options: PairSearchOptions = {},
+): Generator<Progress<EquilibriaPair>, EquilibriaPair> {
+  const p = model.valuesToParameters(values);
+  const { system, twin } = model;
+  const starts = options.starts ?? [model.starts];
+  const base = options.isCancelled ? { isCancelled: options.isCancelled } : {};
+  const share = twin.system && options.withTwin !== false ? 0.5 : 1;
+  const split = yield* searchOne(
+    findEquilibria(system, p, {
+      ...base,
+      ...describeSplit(model, p, true),
+      box: splitBox(model),
+      starts,
+    }),
+    (found) => ({ split: found, twin: null }),
+    0,
+    share,
+  );
+  if (!twin.system || share === 1) return { split, twin: null };
+  const pooled = yield* searchOne(
+    findEquilibria(twin.system, p, {
+      ...base,
+      ...describeTwin(model, p, true),
+      box: twinBox(model),
+      starts: starts.map((one) => model.toTwinStarts(one)),
+    }),
+    (found) => ({ split, twin: found }),
+    share,
+    share,
+  );
+  return { split, twin: pooled };
+}
+
+/**
+ * Follows known equilibria of both to new parameters. Constants of motion are looked for only where
+ * something would else be called indistinguishable from neutral, since that costs more than the rest.
+ */
+export function followEquilibriaPair(
+  model: CompiledModel,
+  p: Float64Array,
+  known: EquilibriaPair,
+): EquilibriaPair {
+  const { system, twin } = model;
+  const follow = (
+    followed: NonNullable<typeof twin.system>,
+    previous: EquilibriaResult,
+    describe: typeof describeSplit,
+  ): EquilibriaResult => {
+    const quick = trackEquilibria(followed, previous, p, describe(model, p, false));
+    const undecided = quick.equilibria.some((one) => one.type === 'indistinguishable from neutral');
+    return undecided ? trackEquilibria(followed, previous, p, describe(model, p, true)) : quick;
+  };
+  return {
+    split: follow(system, known.split, describeSplit),
+    twin: twin.system && known.twin ? follow(twin.system, known.twin, describeTwin) : null,
+  };
+}
+
+function* searchOne(
+  search: Generator<Progress<EquilibriaResult>, EquilibriaResult>,
+  pair: (found: EquilibriaResult) => EquilibriaPair,
+  from: number,
+  share: number,
+): Generator<Progress<EquilibriaPair>, EquilibriaResult> {
+  for (;;) {
+    const next = search.next();
+    if (next.done) return next.value;
+    const { fraction, stage, partial } = next.value;
+    yield { fraction: from + share * fraction, stage, partial: partial && pair(partial) };
+  }
+}
+
+/** At spread 0 the classes are alike, and modes of their composition alone are told apart. */
+function describeSplit(model: CompiledModel, p: Float64Array, thorough: boolean): DescriptionOptions {
+  const spread = model.parameterIndex(SPREAD_KEY);
+  return {
+    constantsOfMotion: thorough ? constants(model.source, p) : [],
+    compositionModes: spread >= 0 && p[spread] === 0,
+  };
+}
+
+function describeTwin(model: CompiledModel, p: Float64Array, thorough: boolean): DescriptionOptions {
+  return {
+    constantsOfMotion: thorough && model.twin.source ? constants(model.twin.source, p) : [],
+    compositionModes: model.twin.report.kind === 'unlumped',
+  };
+}
+
+function constants(source: FlowSource, p: Float64Array): readonly string[] {
+  return constantsOfMotionAt(source, p).map((one) => one.formula);
+}
+
+function splitBox(model: CompiledModel): NonNullable<SearchOptions['box']> {
+  return model.system.stateSymbols.map(
+    (symbol) => model.document.box.find((one) => one.class === symbol) ?? null,
+  );
+}
+
+/** A total's box is the sum of those of its classes, where all of them have one. */
+function twinBox(model: CompiledModel): NonNullable<SearchOptions['box']> {
+  const boxes = splitBox(model);
+  return model.twin.states.map((states) => {
+    let from = 0;
+    let to = 0;
+    for (const i of states) {
+      const box = boxes[i];
+      if (!box) return null;
+      from += box.from;
+      to += box.to;
+    }
+    return { from, to };
+  });
+}
