@@ -9,8 +9,8 @@ export interface Classification {
 }
 
 export interface ClassifyEvidence {
-  /** Whether a constant of motion was proven for the model at these parameters. */
-  readonly neutralProven: boolean;
+  /** Formula of a proven constant of motion that makes this pair of eigenvalues a centre; null without one. */
+  readonly provesNeutral: (re: number, im: number) => string | null;
   /** Asked only where a real eigenvalue cannot be told from zero: whether equilibria continue on a curve. */
   readonly isOnCurve: () => boolean;
 }
@@ -18,7 +18,7 @@ export interface ClassifyEvidence {
 /**
  * Type in words from the signs of the real parts. A sign counts only beyond the bound on the
  * error of its eigenvalue; rounding decides nothing. A pair on the imaginary axis within its bound is
- * `neutral` where a constant of motion was proven and nothing else repels, else `indistinguishable
+ * `neutral` where a proven constant of motion has an extremum on its plane and nothing else repels, else `indistinguishable
  * from neutral`; one positive real part beyond its bound repels whatever the others are.
  */
 export function classify(spectrum: Spectrum, evidence: ClassifyEvidence): Classification {
@@ -62,11 +62,14 @@ export function classify(spectrum: Spectrum, evidence: ClassifyEvidence): Classi
         `Another eigenvalue cannot be told from the imaginary axis (${within}); it repels all the same.`,
       ],
     };
-  if (zeros === 0 && evidence.neutralProven)
+  const proof = zeros === 0 && pairs === 2 ? provenCentre(spectrum, evidence) : null;
+  if (proof !== null)
     return {
       type: 'neutral',
       attracts: 'neutral',
-      notes: ['A constant of motion is proven: orbits near it close and keep the size they start with.'],
+      notes: [
+        `Orbits near it close and keep the size they start with, since ${proof} never changes along them.`,
+      ],
     };
   return {
     type: 'indistinguishable from neutral',
@@ -77,6 +80,13 @@ export function classify(spectrum: Spectrum, evidence: ClassifyEvidence): Classi
         : `The real part of a pair of eigenvalues is zero ${within}: the linear part does not decide, and no constant of motion is proven.`,
     ],
   };
+}
+
+function provenCentre(spectrum: Spectrum, evidence: ClassifyEvidence): string | null {
+  const k = spectrum.re.findIndex(
+    (re, j) => Math.abs(re) <= spectrum.error[j] && spectrum.im[j] > spectrum.error[j],
+  );
+  return k < 0 ? null : evidence.provesNeutral(spectrum.re[k], spectrum.im[k]);
 }
 
 function plain(type: EquilibriumType, attracts: 'yes' | 'no'): Classification {

@@ -8,7 +8,7 @@ import { newton } from './newton';
  * Newton's method must arrive at other equilibria near by, at two distances.
  * A fold or a branch point sends it back to u or nowhere.
  */
-const DISTANCES = [1e-3, 1e-2];
+const DISTANCES = [1e-5, 1e-4];
 
 export function curveThrough(
   system: CompiledSystem,

@@ -1,4 +1,5 @@
 import type { CompiledSystem } from '../system/contract';
+import { centreProven, type MotionConstant } from './centre-proven';
 import { classify, eigenvalueList, type Classification } from './classify';
 import { compositionJacobian } from './composition';
 import type { Eigenvalue, Equilibrium, Invasion } from './contract';
@@ -11,8 +12,11 @@ import { relativeResidual } from './newton';
 import { jacobianUncertainty, spectrumOf, type Spectrum } from './spectrum';
 
 export interface DescriptionOptions {
-  /** Constants of motion proven at these parameters, as formulas; none unless told. */
-  readonly constantsOfMotion?: readonly string[];
+  /**
+   * Constants of motion proven at these parameters; none unless told. Asked only where eigenvalues
+   * cannot be told from the imaginary axis, since proving them costs.
+   */
+  readonly constantsOfMotion?: () => readonly MotionConstant[];
   /** For a split model at spread 0: report the modes in which only composition changes. */
   readonly compositionModes?: boolean;
 }
@@ -64,7 +68,7 @@ export function describeEquilibrium(
     spectrum === null
       ? withoutDerivative(system, invasions, absent.length, atKink)
       : classify(spectrum, {
-          neutralProven: (options.constantsOfMotion ?? []).length > 0,
+          provesNeutral: (re, im) => centreProven(options.constantsOfMotion?.() ?? [], u, J, re, im),
           isOnCurve: () => curveThrough(system, u, wholeSpace(system), J, scale),
         });
   return {

@@ -49,10 +49,15 @@ describe('two-class predator, mortalities 1 +/- eps (characteristic polynomial d
     expect(unproven.type).toBe('indistinguishable from neutral');
     expect(unproven.attracts).toBe('unknown');
     expect(unproven.notes.join(' ')).toMatch(/accuracy reached/);
-    const proven = nearest(
-      equilibriaOf(system, { constantsOfMotion: ['x - log(x) + y1 + y2 - log(y1 + y2)'] }),
-      [1, 0.5, 0.5],
-    );
+    // V = x - log x + Y - log Y with Y = y1 + y2 is constant; its second derivatives at Y.
+    const constant = {
+      formula: 'x - log(x) + y1 + y2 - log(y1 + y2)',
+      hessian: (u: ArrayLike<number>, out: Float64Array) => {
+        const v = 1 / (u[1] + u[2]) ** 2;
+        out.set([1 / u[0] ** 2, 0, 0, 0, v, v, 0, v, v]);
+      },
+    };
+    const proven = nearest(equilibriaOf(system, { constantsOfMotion: () => [constant] }), [1, 0.5, 0.5]);
     expect(proven.type).toBe('neutral');
     expect(proven.eigenvalues.map((e) => Math.round(e.re * 1e9) / 1e9 + 0)).toEqual([0, 0, -1]);
   });
