@@ -6,7 +6,6 @@ import { trackEquilibria } from '../equilibria/track';
 import { SPREAD_KEY } from '../schema/symbols';
 import type { CompiledModel } from '../system/compile-model';
 import { constantsOfMotionAt } from '../system/constants-of-motion';
-import type { FlowSource } from '../system/model-graph';
 import type { EquilibriaPair, ParameterValues } from './contract';
 
 export interface PairSearchOptions {
@@ -100,30 +99,27 @@ function* searchOne(
 function describeSplit(model: CompiledModel, p: Float64Array, thorough: boolean): DescriptionOptions {
   const spread = model.parameterIndex(SPREAD_KEY);
   return {
-    constantsOfMotion: thorough ? constants(model.source, p) : [],
+    constantsOfMotion: thorough ? () => constantsOfMotionAt(model.source, p) : () => [],
     compositionModes: spread >= 0 && p[spread] === 0,
   };
 }
 
 function describeTwin(model: CompiledModel, p: Float64Array, thorough: boolean): DescriptionOptions {
+  const { source } = model.twin;
   return {
-    constantsOfMotion: thorough && model.twin.source ? constants(model.twin.source, p) : [],
+    constantsOfMotion: () => (thorough && source ? constantsOfMotionAt(source, p) : []),
     compositionModes: model.twin.report.kind === 'unlumped',
   };
 }
 
-function constants(source: FlowSource, p: Float64Array): readonly string[] {
-  return constantsOfMotionAt(source, p).map((one) => one.formula);
-}
-
-function splitBox(model: CompiledModel): NonNullable<SearchOptions['box']> {
+export function splitBox(model: CompiledModel): NonNullable<SearchOptions['box']> {
   return model.system.stateSymbols.map(
     (symbol) => model.document.box.find((one) => one.class === symbol) ?? null,
   );
 }
 
 /** A total's box is the sum of those of its classes, where all of them have one. */
-function twinBox(model: CompiledModel): NonNullable<SearchOptions['box']> {
+export function twinBox(model: CompiledModel): NonNullable<SearchOptions['box']> {
   const boxes = splitBox(model);
   return model.twin.states.map((states) => {
     let from = 0;
