@@ -1,9 +1,8 @@
 import type { PresetDocument } from '@/engine/schema/preset';
-import type { ExploreRequest } from '@/workers/protocol';
+import type { EngineClient, ExploreRequest } from '@/workers/protocol';
 
 import type { WorkbenchStore } from '../state/store';
 
-import type { EngineConnection } from './engine-connection';
 import { DRIVER_DEFAULTS, explain } from './driver-defaults';
 import { EngineJobs } from './engine-jobs';
 import { readParameterValues, readStarts } from './parameter-values';
@@ -33,7 +32,7 @@ export class EngineDriver {
 
   constructor(
     private readonly store: WorkbenchStore,
-    private readonly engine: EngineConnection,
+    private readonly engine: EngineClient,
   ) {
     this.jobs = new EngineJobs(store, engine, () => this.request());
   }

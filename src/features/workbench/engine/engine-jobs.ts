@@ -1,10 +1,16 @@
 import type { Progress } from '@/engine/continuation/contract';
-import type { ExploreRequest, ParameterValues, SplitSweepResult, SweepRequest } from '@/workers/protocol';
+import type {
+  EngineClient,
+  ExploreRequest,
+  ParameterValues,
+  SplitSweepResult,
+  SweepRequest,
+} from '@/workers/protocol';
 
 import type { EngineActions, WorkbenchStore } from '../state/store';
 
 import { DRIVER_DEFAULTS, explain, sameValues } from './driver-defaults';
-import type { EngineConnection } from './engine-connection';
+
 import { readParameterValues, readStarts } from './parameter-values';
 
 /** Long runs: one at a time, with progress, cancel, and partial results that stay. */
@@ -21,7 +27,7 @@ export class EngineJobs {
 
   constructor(
     private readonly store: WorkbenchStore,
-    private readonly engine: EngineConnection,
+    private readonly engine: EngineClient,
     private readonly exploreRequest: () => ExploreRequest,
   ) {}
 

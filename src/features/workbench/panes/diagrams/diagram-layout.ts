@@ -1,0 +1,115 @@
+import type { ProcessDiagram } from '@/engine/system/contract';
+import type { PresetDocument } from '@/engine/schema/preset';
+
+export interface PlacedNode {
+  readonly id: string;
+  readonly label: string;
+  readonly x: number;
+  readonly y: number;
+  readonly width: number;
+  readonly population: string;
+}
+
+export interface PlacedArrow {
+  readonly key: string;
+  readonly name: string;
+  readonly kind: string;
+  readonly d: string;
+  readonly labelX: number;
+  readonly labelY: number;
+  readonly anchor: 'start' | 'middle' | 'end';
+  readonly influences: readonly string[];
+}
+
+export interface DiagramLayout {
+  readonly width: number;
+  readonly height: number;
+  readonly nodes: readonly PlacedNode[];
+  readonly arrows: readonly PlacedArrow[];
+}
+
+const ROW = 150;
+const NODE_HEIGHT = 40;
+const COLUMN = 250;
+const MARGIN_X = 150;
+const MARGIN_Y = 70;
+/** Distance between the ends of several arrows at one side of a node. */
+const FAN = 22;
+
+/** Layers are populations, the first at the bottom as in a food chain; classes stand side by side. */
+export function layoutDiagram(
+  diagram: ProcessDiagram,
+  populations: PresetDocument['populations'],
+): DiagramLayout {
+  const layers = populations
+    .map((population) => diagram.nodes.filter((node) => node.population === population.symbol))
+    .filter((layer) => layer.length > 0);
+  const widest = Math.max(1, ...layers.map((layer) => layer.length));
+  const width = 2 * MARGIN_X + widest * COLUMN;
+  const height = 2 * MARGIN_Y + Math.max(1, layers.length) * ROW - (ROW - NODE_HEIGHT);
+  const nodes: PlacedNode[] = layers.flatMap((layer, level) =>
+    layer.map((node, k) => ({
+      ...node,
+      x: width / 2 + (k - (layer.length - 1) / 2) * COLUMN,
+      y: height - MARGIN_Y - NODE_HEIGHT / 2 - level * ROW,
+      width: Math.max(90, node.label.length * 8 + 26),
+    })),
+  );
+  const at = new Map(nodes.map((node) => [node.id, node]));
+  const used = new Map<string, number>();
+  const slot = (id: string, side: string) => {
+    const key = `${id}:${side}`;
+    const next = used.get(key) ?? 0;
+    used.set(key, next + 1);
+    return next;
+  };
+  const spread = (k: number) => (k % 2 === 0 ? k / 2 : -(k + 1) / 2) * FAN;
+  const arrows = diagram.arrows.flatMap((arrow, order): PlacedArrow[] => {
+    const from = arrow.from === null ? null : at.get(arrow.from);
+    const to = arrow.to === null ? null : at.get(arrow.to);
+    const base = {
+      key: `${arrow.process}:${order}`,
+      name: arrow.name,
+      kind: arrow.kind,
+      influences: arrow.influences,
+    };
+    if (from && to && from !== to) {
+      const bend = spread(slot([from.id, to.id].sort().join('-'), 'between') + 1);
+      const up = to.y < from.y ? -1 : to.y > from.y ? 1 : 0;
+      const side = to.x > from.x ? 1 : -1;
+      const x1 = from.x + (up === 0 ? (side * from.width) / 2 : bend);
+      const y1 = from.y + (up * NODE_HEIGHT) / 2 + (up === 0 ? bend / 2 : 0);
+      const x2 = to.x - (up === 0 ? (side * to.width) / 2 : -bend);
+      const y2 = to.y - (up * NODE_HEIGHT) / 2 + (up === 0 ? bend / 2 : 0);
+      const midX = (x1 + x2) / 2 + (up === 0 ? 0 : bend);
+      const midY = (y1 + y2) / 2 + (up === 0 ? -18 - Math.abs(bend) : 0);
+      return [
+        {
+          ...base,
+          d: `M${x1},${y1}Q${midX},${midY} ${x2},${y2}`,
+          labelX: midX + (up === 0 ? 0 : 8),
+          labelY: up === 0 ? midY : midY + 4,
+          anchor: up === 0 ? 'middle' : 'start',
+        },
+      ];
+    }
+    const node = from ?? to;
+    if (!node) return [];
+    // Losses leave on the right, gains come in on the left.
+    const leaving = Boolean(from) && !to;
+    const sign = leaving ? 1 : -1;
+    const edge = node.x + (sign * node.width) / 2;
+    const y = node.y + spread(slot(node.id, leaving ? 'out' : 'in'));
+    const outer = edge + sign * 34;
+    return [
+      {
+        ...base,
+        d: leaving ? `M${edge},${y}H${outer}` : `M${outer},${y}H${edge}`,
+        labelX: outer + sign * 5,
+        labelY: y + 4,
+        anchor: leaving ? 'start' : 'end',
+      },
+    ];
+  });
+  return { width, height, nodes, arrows };
+}

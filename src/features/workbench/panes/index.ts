@@ -1,0 +1,1 @@
+export { Panes } from './panes';

@@ -1,0 +1,115 @@
+import { axisLabel } from '@/graphics/axis';
+import { formatNumber } from '@/graphics/numbers';
+import type { PlotLayout } from '@/graphics/plot-layout';
+import type { PlotSpec } from '@/graphics/plot-spec';
+
+/** What lies under the pointer, or under the keyboard's walk. */
+export interface Reading {
+  readonly text: string;
+  readonly x: number;
+  readonly y: number;
+}
+
+const REACH = 28;
+
+function place(spec: PlotSpec, label: string, x: number, y: number): string {
+  const unit = (name: string) => (name ? ` ${name}` : '');
+  return `${label}: ${formatNumber(y)}${unit(spec.y.unit)} at ${spec.x.name} ${formatNumber(x)}${unit(spec.x.unit)}`;
+}
+
+/** Nearest marked point, else nearest point of a line, within reach of the pointer. */
+export function readNearest(spec: PlotSpec, layout: PlotLayout, px: number, py: number): Reading | null {
+  let best: Reading | null = null;
+  let distance = REACH;
+  const consider = (x: number, y: number, text: () => string, favour: number) => {
+    const away = Math.hypot(layout.x(x) - px, layout.y(y) - py) - favour;
+    if (!(away < distance)) return;
+    distance = away;
+    best = { x: layout.x(x), y: layout.y(y), text: text() };
+  };
+  for (const point of spec.points)
+    consider(
+      point.x,
+      point.y,
+      () => `${point.description} (${formatNumber(point.x)}; ${formatNumber(point.y)})`,
+      8,
+    );
+  for (const line of spec.lines)
+    for (let k = 0; k < line.x.length; k++)
+      consider(
+        line.x[k] ?? NaN,
+        line.y[k] ?? NaN,
+        () => place(spec, line.label, line.x[k] ?? NaN, line.y[k] ?? NaN),
+        0,
+      );
+  return best;
+}
+
+/** Steps in which the arrow keys walk along one line. */
+const WALK_STEPS = 40;
+
+export interface Walk {
+  readonly track: number;
+  readonly step: number;
+}
+
+interface Track {
+  readonly label: string;
+  readonly length: number;
+  at(step: number): { readonly x: number; readonly y: number; readonly text: string };
+}
+
+/** The marked points are the first track, each line is one more. */
+function tracks(spec: PlotSpec): readonly Track[] {
+  const all: Track[] = [];
+  if (spec.points.length > 0)
+    all.push({
+      label: 'marked points',
+      length: spec.points.length,
+      at: (step) => {
+        const point = spec.points[step];
+        return {
+          x: point?.x ?? NaN,
+          y: point?.y ?? NaN,
+          text: `${point?.description ?? ''} ${axisLabel(spec.x)} ${formatNumber(point?.x ?? NaN)}, ${axisLabel(spec.y)} ${formatNumber(point?.y ?? NaN)}`,
+        };
+      },
+    });
+  for (const line of spec.lines) {
+    if (line.segments || line.x.length === 0) continue;
+    const length = Math.min(WALK_STEPS, line.x.length);
+    all.push({
+      label: line.label,
+      length,
+      at: (step) => {
+        const k = Math.round((step * (line.x.length - 1)) / Math.max(1, length - 1));
+        const x = line.x[k] ?? NaN;
+        const y = line.y[k] ?? NaN;
+        return { x, y, text: place(spec, line.label, x, y) };
+      },
+    });
+  }
+  return all;
+}
+
+/** One arrow key: left and right along a track, up and down to another track. */
+export function walk(
+  spec: PlotSpec,
+  layout: PlotLayout,
+  from: Walk | null,
+  key: string,
+): { readonly walk: Walk; readonly reading: Reading } | null {
+  const all = tracks(spec);
+  if (all.length === 0) return null;
+  let { track, step } = from ?? { track: 0, step: -1 };
+  if (key === 'ArrowUp' || key === 'ArrowDown') {
+    track = (track + (key === 'ArrowDown' ? 1 : -1) + all.length) % all.length;
+    step = from ? step : 0;
+  } else step += key === 'ArrowRight' ? 1 : -1;
+  track = Math.min(track, all.length - 1);
+  const current = all[track];
+  if (!current) return null;
+  step = Math.max(0, Math.min(current.length - 1, step));
+  const { x, y, text } = current.at(step);
+  return { walk: { track, step }, reading: { text, x: layout.x(x), y: layout.y(y) } };
+}

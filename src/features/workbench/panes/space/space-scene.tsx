@@ -1,0 +1,83 @@
+import { OrbitControls } from '@react-three/drei';
+import { Canvas, useFrame, useThree } from '@react-three/fiber';
+import { useEffect, useMemo } from 'react';
+import type { Camera } from 'three';
+
+import type { Palette } from '@/graphics/palette';
+
+import { CAMERA_PRESETS } from './camera-presets';
+import { SceneLines } from './scene-lines';
+import type { SpaceSpec } from './space-spec';
+
+export interface SceneLink {
+  camera: Camera | null;
+  invalidate: () => void;
+  reset: () => void;
+}
+
+interface SceneProps {
+  readonly build: () => { readonly spec: SpaceSpec; readonly palette: Palette };
+  readonly watch: (notify: () => void) => () => void;
+  readonly link: SceneLink;
+  /** Called after each frame, to draw what stands above the scene. */
+  readonly onFrame: (camera: Camera, spec: SpaceSpec) => void;
+}
+
+function Lines({ build, watch, link, onFrame }: SceneProps) {
+  const invalidate = useThree((state) => state.invalidate);
+  const camera = useThree((state) => state.camera);
+  const size = useThree((state) => state.size);
+  const lines = useMemo(() => new SceneLines(), []);
+  useEffect(() => () => lines.dispose(), [lines]);
+  useEffect(() => {
+    lines.size.set(size.width, size.height);
+    invalidate();
+  }, [lines, size, invalidate]);
+  useEffect(() => {
+    link.camera = camera;
+    link.invalidate = () => invalidate();
+    invalidate();
+    return watch(() => invalidate());
+  }, [watch, invalidate, camera, link]);
+  useFrame(() => {
+    const { spec, palette } = build();
+    lines.update(spec, palette);
+    onFrame(camera, spec);
+  });
+  return <primitive object={lines.group} />;
+}
+
+function Controls({ link }: { readonly link: SceneLink }) {
+  const invalidate = useThree((state) => state.invalidate);
+  return (
+    <OrbitControls
+      makeDefault
+      enableDamping={false}
+      minDistance={0.5}
+      maxDistance={20}
+      onChange={() => invalidate()}
+      ref={(controls) => {
+        link.reset = () => {
+          controls?.target.set(0, 0, 0);
+          controls?.update();
+        };
+      }}
+    />
+  );
+}
+
+/** The live scene: drawn only when something changed. */
+export function SpaceScene(props: SceneProps) {
+  return (
+    <Canvas
+      frameloop="demand"
+      dpr={[1, 2]}
+      gl={{ antialias: true, alpha: true }}
+      camera={{ position: [...CAMERA_PRESETS.oblique.position], fov: 38, near: 0.05, far: 60 }}
+      aria-hidden
+    >
+      <Controls link={props.link} />
+      <Lines {...props} />
+    </Canvas>
+  );
+}
