@@ -1,0 +1,91 @@
+import type { Progress, SweepResult } from '../continuation/contract';
+import { sweep, type SweepOptions } from '../continuation/sweep';
+import type { CompiledModel } from '../system/compile-model';
+import type { CompiledSystem } from '../system/contract';
+import type { SplitSweepResult, SweepRequest } from './contract';
+import { splitBox, twinBox } from './equilibria-pair';
+import { judgeSweeps } from './judge';
+import { startsOf } from './trajectories';
+
+export interface SplitSweepOptions {
+  /** Asked between slices; true ends the sweep with what was found. */
+  readonly isCancelled?: () => boolean;
+  /** Milliseconds; the engine has no clock of its own. */
+  readonly clock?: () => number;
+}
+
+const CANCELLED = 'Cancelled; what was found until then stays.';
+
+/**
+ * Sweeps one parameter of a model and then of its pooled twin, and judges both. A generator whose
+ * progress holds the result so far, the verdict on it included; cancelled or left early, nothing found is
+ * lost.
+ */
+export function* sweepSplitAndTwin(
+  model: CompiledModel,
+  request: SweepRequest,
+  options: SplitSweepOptions = {},
+): Generator<Progress<SplitSweepResult>, SplitSweepResult> {
+  const p = model.valuesToParameters(request.values);
+  const starts = startsOf(model, request);
+  const twinSystem = request.withTwin ? model.twin.system : null;
+  const share = twinSystem ? 0.5 : 1;
+  const shared = {
+    parameterIndex: model.parameterIndex(request.parameter),
+    from: request.from,
+    to: request.to,
+    parameterLabel: labelOf(model, request.parameter),
+    ...(options.clock ? { clock: options.clock } : {}),
+  };
+  const combine = (split: SweepResult, twin: SweepResult | null): SplitSweepResult => ({
+    split,
+    twin,
+    verdict: judgeSweeps(model, request, split, twin),
+  });
+  const split = yield* sweepOne(
+    model.system,
+    p,
+    { ...shared, starts: [starts], box: splitBox(model) },
+    options,
+    (partial) => combine(partial, null),
+    [0, share],
+  );
+  if (!twinSystem || split.status === 'cancelled') return combine(split, null);
+  const twin = yield* sweepOne(
+    twinSystem,
+    p,
+    { ...shared, starts: [model.toTwinStarts(starts)], box: twinBox(model) },
+    options,
+    (partial) => combine(split, partial),
+    [share, share],
+  );
+  return combine(split, twin);
+}
+
+function* sweepOne(
+  system: CompiledSystem,
+  p: Float64Array,
+  sweepOptions: SweepOptions,
+  options: SplitSweepOptions,
+  combine: (partial: SweepResult) => SplitSweepResult,
+  [from, share]: readonly [number, number],
+): Generator<Progress<SplitSweepResult>, SweepResult> {
+  // The swept value is written to the parameters, so each sweep has its own.
+  const run = sweep(system, Float64Array.from(p), sweepOptions);
+  let found: SweepResult | null = null;
+  for (;;) {
+    const next = run.next();
+    if (next.done) return next.value;
+    const { fraction, stage, partial } = next.value;
+    found = partial ?? found;
+    if (found && options.isCancelled?.()) {
+      run.return(found);
+      return { ...found, status: 'cancelled', message: CANCELLED };
+    }
+    yield { fraction: from + share * fraction, stage, partial: partial && combine(partial) };
+  }
+}
+
+function labelOf(model: CompiledModel, key: string): string {
+  return model.report.parameters.find((one) => one.key === key)?.label ?? key;
+}
