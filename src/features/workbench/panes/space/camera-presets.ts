@@ -1,13 +1,22 @@
 import { Spherical, Vector3, type Camera } from 'three';
 
+interface Preset {
+  readonly label: string;
+  readonly position: readonly [number, number, number];
+}
+
 export const CAMERA_PRESETS = {
   oblique: { label: 'oblique', position: [1.75, 1.35, 3.7] },
   x: { label: 'along x', position: [4.1, 0, 0.001] },
   y: { label: 'along y', position: [0, 0, 4.1] },
   z: { label: 'along z', position: [0, 4.1, 0.001] },
-} as const;
+} as const satisfies Record<string, Preset>;
 
 export type CameraPreset = keyof typeof CAMERA_PRESETS;
+
+export function presetPosition(preset: CameraPreset): readonly [number, number, number] {
+  return CAMERA_PRESETS[preset].position;
+}
 
 /** Radians a press of an arrow key turns the camera by. */
 const TURN = 0.09;

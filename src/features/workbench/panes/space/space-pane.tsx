@@ -14,7 +14,7 @@ import type { ExportSource } from '../plot/export-source';
 import { PlotLegend } from '../plot/plot-legend';
 import { TableDialog } from '../plot/table-dialog';
 import { useShownModel } from '../use-shown-model';
-import { CAMERA_PRESETS, moveCameraByKey, type CameraPreset } from './camera-presets';
+import { CAMERA_PRESETS, moveCameraByKey, presetPosition, type CameraPreset } from './camera-presets';
 import { projectSpace } from './project-space';
 import { SpaceScene, type SceneLink } from './space-scene';
 import { spaceSpec, spaceTables, type SpaceSpec } from './space-spec';
@@ -137,7 +137,7 @@ export default function SpacePane({ view, axes }: SpacePaneProps) {
 
   function look(preset: CameraPreset) {
     if (!link.camera) return;
-    link.camera.position.set(...CAMERA_PRESETS[preset].position);
+    link.camera.position.set(...presetPosition(preset));
     link.reset();
     link.camera.lookAt(new Vector3(0, 0, 0));
     link.camera.updateMatrixWorld();

@@ -1,0 +1,2 @@
+export { useEngineDriver } from './use-engine-driver';
+export { readParameterValue, withParameterValue, withStart } from './parameter-values';

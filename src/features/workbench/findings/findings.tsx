@@ -1,0 +1,46 @@
+import { useWorkbench } from '../state/store';
+import { EquilibriaSection } from './equilibria-section';
+import { JobCard } from './job-card';
+import { NotesCard } from './notes-card';
+import { SecondOpinionCard } from './second-opinion-card';
+import { SpecialPointsCard } from './special-points-card';
+import { VerdictCard } from './verdict-card';
+
+function EngineTrouble() {
+  const error = useWorkbench((state) => state.engineError);
+  if (!error) return null;
+  return (
+    <p role="alert" className="rounded-lg border border-caution bg-raised p-3.5 text-caution">
+      {error}
+    </p>
+  );
+}
+
+function InvalidNote() {
+  const invalid = useWorkbench((state) => state.report !== null && !state.report.valid);
+  const shown = useWorkbench((state) => state.shownReport !== null);
+  if (!invalid) return null;
+  return (
+    <p role="status" className="rounded-lg border border-caution bg-raised p-3.5">
+      {shown
+        ? 'The model has a mistake, marked in the model rail. What you see is the last valid model.'
+        : 'The model cannot be computed yet. What is missing is marked in the model rail.'}
+    </p>
+  );
+}
+
+/** The right rail: verdict, equilibria, special points, notes. */
+export function Findings() {
+  return (
+    <div className="grid content-start gap-3 p-4">
+      <EngineTrouble />
+      <InvalidNote />
+      <JobCard />
+      <VerdictCard />
+      <SpecialPointsCard />
+      <EquilibriaSection />
+      <SecondOpinionCard />
+      <NotesCard />
+    </div>
+  );
+}

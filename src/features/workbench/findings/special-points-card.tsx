@@ -1,0 +1,171 @@
+import { useMemo, useState } from 'react';
+
+import { specialPointGlyph } from '@/graphics/glyphs';
+import { formatNumber, formatToTolerance } from '@/graphics/numbers';
+import { parameterName } from '@/graphics/quantities';
+import { joinClasses } from '@/lib/join-classes';
+
+import { moveToPoint } from '../panes/move-to-point';
+import { GlyphSign } from '../panes/plot/plot-legend';
+import { useShownModel } from '../panes/use-shown-model';
+import { useWorkbench, useWorkbenchStore } from '../state/store';
+import { Card } from './card';
+import {
+  sortRows,
+  specialPointRows,
+  type SortKey,
+  type SortOrder,
+  type SpecialPointRow,
+} from './special-point-rows';
+
+const COLUMNS: readonly { readonly key: SortKey; readonly label: string }[] = [
+  { key: 'kind', label: 'point' },
+  { key: 'split', label: 'split' },
+  { key: 'twin', label: 'pooled' },
+  { key: 'shift', label: 'shift' },
+];
+
+function HeaderCell({
+  column,
+  order,
+  onSort,
+}: {
+  readonly column: (typeof COLUMNS)[number];
+  readonly order: SortOrder;
+  readonly onSort: (order: SortOrder) => void;
+}) {
+  const active = order.key === column.key;
+  return (
+    <th
+      scope="col"
+      aria-sort={active ? (order.descending ? 'descending' : 'ascending') : 'none'}
+      className={column.key === 'kind' ? 'text-left' : 'text-right'}
+    >
+      <button
+        type="button"
+        className="rounded px-0.5 font-medium text-muted hover:text-ink"
+        onClick={() => onSort({ key: column.key, descending: active && !order.descending })}
+      >
+        {column.label}
+        <span aria-hidden className="inline-block w-3 text-center">
+          {active ? (order.descending ? '↓' : '↑') : ''}
+        </span>
+      </button>
+    </th>
+  );
+}
+
+function Row({
+  row,
+  range,
+  selected,
+  onChoose,
+}: {
+  readonly row: SpecialPointRow;
+  readonly range: number;
+  readonly selected: boolean;
+  readonly onChoose: () => void;
+}) {
+  const value = (point: SpecialPointRow['split']) =>
+    point
+      ? formatToTolerance(point.parameter, Math.max(point.accuracy * range, Math.abs(point.parameter) * 1e-5))
+      : 'none';
+  const point = row.split ?? row.twin;
+  return (
+    <>
+      <tr className={joinClasses('border-t', selected && 'bg-panel')}>
+        <th scope="row" className="py-1 text-left font-normal">
+          <button
+            type="button"
+            className="flex items-center gap-1.5 rounded text-left hover:underline disabled:no-underline"
+            disabled={!row.split}
+            aria-pressed={selected}
+            onClick={onChoose}
+          >
+            <GlyphSign
+              glyph={specialPointGlyph(row.kind)}
+              colour={row.split ? 'var(--ink)' : 'var(--twin)'}
+            />
+            <span>
+              {row.kind}
+              {point?.feasible ? null : <span className="text-muted">, not feasible</span>}
+            </span>
+          </button>
+        </th>
+        <td className="figures py-1 pl-2 text-right">{value(row.split)}</td>
+        <td className="figures py-1 pl-2 text-right text-muted">{value(row.twin)}</td>
+        <td className="figures py-1 pl-2 text-right">
+          {row.shift === null ? '' : `${row.shift > 0 ? '+' : ''}${formatNumber(row.shift, 3)}`}
+        </td>
+      </tr>
+      {selected && row.split ? (
+        <tr className="bg-panel">
+          <td colSpan={4} className="px-1 pb-2 text-sm text-muted">
+            {row.split.meaning}
+            {row.split.hopf ? (
+              <>
+                {' '}
+                {row.split.hopf.meaning}
+                {row.split.hopf.l1 === null ? null : (
+                  <span className="block">
+                    First Lyapunov coefficient{' '}
+                    <span className="figures">{formatNumber(row.split.hopf.l1, 4)}</span>, period{' '}
+                    <span className="figures">{formatNumber((2 * Math.PI) / row.split.hopf.omega, 4)}</span>
+                  </span>
+                )}
+              </>
+            ) : null}
+          </td>
+        </tr>
+      ) : null}
+    </>
+  );
+}
+
+/** Special points of the sweep, split beside pooled; choosing one moves the model there. */
+export function SpecialPointsCard() {
+  const store = useWorkbenchStore();
+  const model = useShownModel();
+  const sweep = useWorkbench((state) => state.sweep);
+  const outdated = useWorkbench((state) => state.sweepOutdated);
+  const selected = useWorkbench((state) => state.selectedPoint?.id ?? null);
+  const [order, setOrder] = useState<SortOrder>({ key: 'split', descending: false });
+  const rows = useMemo(() => (sweep ? sortRows(specialPointRows(sweep), order) : []), [sweep, order]);
+  if (!sweep) return null;
+  const name = parameterName(model, sweep.split.parameterKey).name;
+  return (
+    <Card title="Special points" aside={<span className="text-sm text-muted">along {name}</span>}>
+      {outdated ? (
+        <p className="mb-1 text-sm text-caution">Computed before the last edit. Run the sweep again.</p>
+      ) : null}
+      {rows.length === 0 ? (
+        <p className="text-muted">
+          {sweep.split.status === 'complete'
+            ? 'None in this range: no branch changes its stability here.'
+            : sweep.split.message}
+        </p>
+      ) : (
+        <table className="w-full border-collapse text-sm">
+          <thead>
+            <tr>
+              {COLUMNS.map((column) => (
+                <HeaderCell key={column.key} column={column} order={order} onSort={setOrder} />
+              ))}
+            </tr>
+          </thead>
+          <tbody>
+            {rows.map((row) => (
+              <Row
+                key={row.id}
+                row={row}
+                range={Math.abs(sweep.split.to - sweep.split.from)}
+                selected={row.split !== null && row.split.id === selected}
+                onChoose={() => row.split && moveToPoint(store, row.split)}
+              />
+            ))}
+          </tbody>
+        </table>
+      )}
+    </Card>
+  );
+}

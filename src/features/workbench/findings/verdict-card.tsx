@@ -1,0 +1,99 @@
+import type { Verdict, VerdictEvidence } from '@/engine/verdict/contract';
+import { formatNumber } from '@/graphics/numbers';
+
+import { useWorkbench } from '../state/store';
+import { Card } from './card';
+
+function EvidenceTable({ evidence }: { readonly evidence: readonly VerdictEvidence[] }) {
+  const cell = (value: number | null) => (value === null ? 'none' : formatNumber(value, 3));
+  return (
+    <table className="mt-2 w-full border-collapse text-sm">
+      <thead>
+        <tr className="text-muted">
+          <th scope="col" className="text-left font-normal">
+            <span className="sr-only">evidence</span>
+          </th>
+          <th scope="col" className="pl-2 text-right font-normal">
+            pooled
+          </th>
+          <th scope="col" className="pl-2 text-right font-normal">
+            split
+          </th>
+        </tr>
+      </thead>
+      <tbody>
+        {evidence.map((one) => (
+          <tr key={one.label} className="border-t align-baseline">
+            <th scope="row" className="py-1 pr-1 text-left font-normal">
+              {one.label}
+              {one.unit ? <span className="text-muted"> ({one.unit})</span> : null}
+              {one.note ? <span className="block text-xs text-muted">{one.note}</span> : null}
+            </th>
+            <td className="figures py-1 pl-2 text-right whitespace-nowrap">{cell(one.pooled)}</td>
+            <td className="figures py-1 pl-2 text-right font-semibold whitespace-nowrap">
+              <span aria-hidden className="font-normal text-muted">
+                →{' '}
+              </span>
+              {cell(one.split)}
+            </td>
+          </tr>
+        ))}
+      </tbody>
+    </table>
+  );
+}
+
+function Reasons({ title, items }: { readonly title: string; readonly items: readonly string[] }) {
+  if (items.length === 0) return null;
+  return (
+    <details className="mt-2 text-sm">
+      <summary className="cursor-pointer font-medium">{title}</summary>
+      <ul className="mt-1 list-disc pl-5 text-muted">
+        {items.map((item) => (
+          <li key={item}>{item}</li>
+        ))}
+      </ul>
+    </details>
+  );
+}
+
+function VerdictBody({ verdict }: { readonly verdict: Verdict }) {
+  return (
+    <>
+      <p className="font-heading text-xl leading-snug font-medium">{verdict.sentence}</p>
+      {verdict.evidence.length > 0 ? <EvidenceTable evidence={verdict.evidence} /> : null}
+      <Reasons title="What it rests on" items={verdict.restsOn} />
+      <Reasons title="What it leaves open" items={verdict.leavesOpen} />
+      {verdict.cautions.map((caution) => (
+        <p key={caution} className="mt-2 border-l-2 border-caution pl-2 text-sm text-caution">
+          {caution}
+        </p>
+      ))}
+    </>
+  );
+}
+
+/** The answer to "does the split stabilise?", with what it rests on. */
+export function VerdictCard() {
+  const verdict = useWorkbench((state) => state.verdict);
+  const swept = useWorkbench((state) => state.sweep !== null && !state.sweepOutdated);
+  const twin = useWorkbench((state) => state.shownReport?.twin ?? null);
+  return (
+    <Card title="Does the split stabilise?" accent>
+      <div role="status" aria-live="polite" aria-atomic="true">
+        {verdict ? (
+          <VerdictBody verdict={verdict} />
+        ) : (
+          <p className="text-muted">
+            {twin ? twin.reason : 'The answer stands here once the model can be computed.'}
+          </p>
+        )}
+      </div>
+      {verdict && !swept ? (
+        <p className="mt-2 text-sm text-muted">
+          Run a sweep from the strip below to learn where cycles set in.
+        </p>
+      ) : null}
+    </Card>
+  );
+}

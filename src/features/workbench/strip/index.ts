@@ -1,0 +1,1 @@
+export { RangeStrip } from './range-strip';

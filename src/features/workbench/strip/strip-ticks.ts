@@ -1,0 +1,38 @@
+import type { SpecialPoint } from '@/engine/continuation/contract';
+
+export interface StripTick {
+  readonly point: SpecialPoint;
+  readonly twin: boolean;
+  /** Position along the strip, from 0 to 1. */
+  readonly at: number;
+  /** Row its name stands in; null where there is no room for it. */
+  readonly row: number | null;
+}
+
+const LETTER = 6.6;
+const ROWS = 2;
+const GAP = 8;
+
+/** Places the names of ticks in two rows without overlap; points of the split model come first. */
+export function placeTicks(
+  points: readonly { readonly point: SpecialPoint; readonly twin: boolean }[],
+  from: number,
+  to: number,
+  width: number,
+): readonly StripTick[] {
+  const ends = Array.from({ length: ROWS }, () => [] as { x0: number; x1: number }[]);
+  const within = points.filter(
+    ({ point }) => point.feasible && point.parameter >= from && point.parameter <= to,
+  );
+  const ordered = [...within].sort(
+    (a, b) => Number(a.twin) - Number(b.twin) || a.point.parameter - b.point.parameter,
+  );
+  return ordered.map(({ point, twin }) => {
+    const at = to > from ? (point.parameter - from) / (to - from) : 0;
+    const half = ((point.kind.length + (twin ? 6 : 0)) * LETTER) / 2;
+    const box = { x0: at * width - half - GAP / 2, x1: at * width + half + GAP / 2 };
+    const row = ends.findIndex((taken) => taken.every((other) => box.x1 < other.x0 || box.x0 > other.x1));
+    if (row >= 0) ends[row]?.push(box);
+    return { point, twin, at, row: row >= 0 ? row : null };
+  });
+}
