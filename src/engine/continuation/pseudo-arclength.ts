@@ -1,0 +1,299 @@
+import type { BranchEnd } from './contract';
+import type { Curve } from './curve';
+import { locateZero, pointAlong, type Located } from './locate';
+import type { BranchPoint, Monitor } from './test-functions';
+
+/** Steps are in scaled arclength: 1 is the swept range, or the scale of a state. */
+export const STEP_DEFAULTS = {
+  first: 1e-3,
+  smallest: 1e-8,
+  largest: 0.02,
+  grow: 1.4,
+  shrink: 0.5,
+  /** Least cosine between tangents of neighbouring points. */
+  bend: 0.985,
+  points: 4_000,
+  /** Branches are left where a state passes this many times its scale. */
+  far: 50,
+  /** Points in a row at one value of the parameter after which a branch is a line of equilibria. */
+  upright: 24,
+} as const;
+
+export type CrossingKind = 'fold' | 'branch' | 'transversal' | 'Hopf' | 'zero';
+
+/** A special point between two points of a branch, before its normal form is known. */
+export interface Crossing {
+  readonly kind: CrossingKind;
+  /** Absent group that invades, for `transversal`; state that reaches zero, for `zero`. */
+  readonly which: number;
+  readonly located: Located;
+  /** Index of the accepted point before it, from the start of this direction. */
+  readonly index: number;
+}
+
+export interface Followed {
+  readonly points: BranchPoint[];
+  readonly crossings: Crossing[];
+  end: { reason: BranchEnd; message: string };
+}
+
+export interface FollowSettings {
+  readonly lower: number;
+  readonly upper: number;
+  readonly label: (state: number) => string;
+  readonly largestStep: number;
+  readonly pointBudget: number;
+}
+
+/**
+ * Follows a branch from a point in one direction by pseudo-arclength continuation with tangent predictor,
+ * bordered Newton corrector and step control by iterations and bend (Keller 1977, from memory).
+ * A generator that yields the number of points so far after each accepted step.
+ * Never fails silently: `end` holds the reason in words.
+ */
+export function* followBranch(
+  monitor: Monitor,
+  start: BranchPoint,
+  settings: FollowSettings,
+): Generator<number, Followed> {
+  const { curve } = monitor;
+  const followed: Followed = {
+    points: [start],
+    crossings: [],
+    end: { reason: 'point budget spent', message: 'The point budget was spent.' },
+  };
+  let current = start;
+  let decided: { point: BranchPoint; index: number } | null =
+    start.monitors.undecided === 0 ? { point: start, index: 0 } : null;
+  let upright = 0;
+  let h: number = Math.min(STEP_DEFAULTS.first, settings.largestStep);
+
+  while (followed.points.length < settings.pointBudget) {
+    const next = pointAlong(monitor, current, h);
+    const trouble = next === null ? 'not corrected' : tooCoarse(current, next, decided?.point ?? null, h);
+    if (next === null || (trouble !== null && h > STEP_DEFAULTS.smallest * 10)) {
+      h *= STEP_DEFAULTS.shrink;
+      if (h >= STEP_DEFAULTS.smallest) continue;
+      followed.end = {
+        reason: 'could not be resolved further',
+        message: `The branch could not be resolved further near ${format(current.parameter)}; the model may be singular or have a kink there.`,
+      };
+      return followed;
+    }
+
+    const index = followed.points.length - 1;
+    const zero = crossingOfZero(monitor, current, next, h, index);
+    const limit = zero?.located.point ?? next;
+    followed.crossings.push(...crossingsBetween(monitor, current, limit, index));
+    const hopf = decided ? crossingOfPair(monitor, decided.point, limit, decided.index) : null;
+    if (hopf) followed.crossings.push(hopf);
+    if (zero) {
+      followed.crossings.push(zero);
+      followed.points.push(limit);
+      followed.end = {
+        reason: 'left the state box',
+        message: `${settings.label(zero.which)} reaches zero at ${format(limit.parameter)}; beyond it the density would be negative.`,
+      };
+      return followed;
+    }
+    const outside = next.parameter < settings.lower || next.parameter > settings.upper;
+    if (outside) {
+      const bound = next.parameter < settings.lower ? settings.lower : settings.upper;
+      const last = pointAtParameter(monitor, current, next, bound);
+      followed.crossings.splice(
+        0,
+        followed.crossings.length,
+        ...followed.crossings.filter((c) => within(c, settings)),
+      );
+      if (last) followed.points.push(last);
+      followed.end = {
+        reason: 'left the range',
+        message: `The end of the range, ${format(bound)}, was reached.`,
+      };
+      return followed;
+    }
+    followed.points.push(next);
+    if (next.monitors.undecided === 0) decided = { point: next, index: followed.points.length - 1 };
+    // A stretch without decision is a neutral family, not a crossing: one such point may be chance.
+    else if (current.monitors.undecided > 0) decided = null;
+    upright = Math.abs(next.monitors.fold) < UPRIGHT ? upright + 1 : 0;
+    if (upright >= STEP_DEFAULTS.upright) {
+      followed.end = {
+        reason: 'could not be resolved further',
+        message: `At ${format(next.parameter)} a whole line of states rests; it was not followed further.`,
+      };
+      return followed;
+    }
+    const far = farState(curve, next);
+    if (far >= 0) {
+      followed.end = {
+        reason: 'left the state box',
+        message: `${settings.label(far)} grew beyond the states looked at.`,
+      };
+      return followed;
+    }
+    if (followed.points.length > 10 && isBackAt(start, next, h)) {
+      followed.end = { reason: 'closed on itself', message: 'The branch closed on itself.' };
+      return followed;
+    }
+    h = Math.min(settings.largestStep, h * (bend(current, next) > 0.998 ? STEP_DEFAULTS.grow : 1));
+    current = next;
+    yield followed.points.length;
+  }
+  return followed;
+}
+
+/** A tangent with a smaller share of the parameter stands upright. */
+const UPRIGHT = 1e-9;
+
+function within(crossing: Crossing, settings: FollowSettings): boolean {
+  const { parameter } = crossing.located.point;
+  const slack = 1e-9 * (settings.upper - settings.lower);
+  return parameter >= settings.lower - slack && parameter <= settings.upper + slack;
+}
+
+function bend(a: BranchPoint, b: BranchPoint): number {
+  let dot = 0;
+  for (let k = 0; k < a.tangent.length; k += 1) dot += a.tangent[k] * b.tangent[k];
+  return dot;
+}
+
+/** Why a step is to be tried again shorter: a sharp bend, or more crossings than can be told apart. */
+function tooCoarse(a: BranchPoint, b: BranchPoint, decided: BranchPoint | null, h: number): string | null {
+  if (bend(a, b) < STEP_DEFAULTS.bend) return 'bend';
+  let length = 0;
+  for (let k = 0; k < a.w.length; k += 1) length += (b.w[k] - a.w[k]) ** 2;
+  if (Math.sqrt(length) > 2 * h) return 'jump';
+  const real = realCrossings(a, b);
+  if (real > 1 && h > 1e-4) return 'several crossings';
+  if (decided && b.monitors.undecided === 0) {
+    const change = Math.abs(b.monitors.growing - decided.monitors.growing);
+    if ((real === 1 ? change > 1 : change > 2) && h > 1e-5) return 'several crossings';
+  }
+  return null;
+}
+
+function changes(a: number, b: number): boolean {
+  return (a < 0 && b > 0) || (a > 0 && b < 0) || (a !== 0 && b === 0);
+}
+
+function foldBetween(a: BranchPoint, b: BranchPoint): boolean {
+  const size = Math.max(Math.abs(a.monitors.fold), Math.abs(b.monitors.fold));
+  return size > UPRIGHT && changes(a.monitors.fold, b.monitors.fold);
+}
+
+function realCrossings(a: BranchPoint, b: BranchPoint): number {
+  let count = foldBetween(a, b) ? 1 : 0;
+  if (changes(a.monitors.branch, b.monitors.branch)) count += 1;
+  a.monitors.transversal.forEach((value, g) => {
+    if (changes(value, b.monitors.transversal[g])) count += 1;
+  });
+  return count;
+}
+
+function crossingsBetween(monitor: Monitor, a: BranchPoint, b: BranchPoint, index: number): Crossing[] {
+  const tests: { kind: CrossingKind; which: number; test: (point: BranchPoint) => number }[] = [
+    { kind: 'fold', which: -1, test: (point) => point.monitors.fold },
+    { kind: 'branch', which: -1, test: (point) => point.monitors.branch },
+    ...monitor.absent.map((_, g) => ({
+      kind: 'transversal' as const,
+      which: g,
+      test: (point: BranchPoint) => point.monitors.transversal[g],
+    })),
+  ];
+  const found: Crossing[] = [];
+  for (const { kind, which, test } of tests) {
+    if (kind === 'fold' ? !foldBetween(a, b) : !changes(test(a), test(b))) continue;
+    const located = locateZero(monitor, a, b, planeDistance(a, b), test);
+    if (located) found.push({ kind, which, located, index });
+  }
+  return found;
+}
+
+/** Scaled arclength from a to b, on the planes across the tangent of a. */
+function planeDistance(a: BranchPoint, b: BranchPoint): number {
+  let along = 0;
+  for (let k = 0; k < a.w.length; k += 1) along += a.tangent[k] * (b.w[k] - a.w[k]);
+  return along;
+}
+
+function crossingOfZero(
+  monitor: Monitor,
+  a: BranchPoint,
+  b: BranchPoint,
+  h: number,
+  index: number,
+): Crossing | null {
+  const { lowest, lowestState } = b.monitors;
+  if (!(lowest < 0)) return null;
+  const slot = monitor.curve.active.indexOf(lowestState);
+  if (!(a.w[slot] > 0)) return null;
+  const located = locateZero(monitor, a, b, h, (point) => point.w[slot]);
+  return located && { kind: 'zero', which: lowestState, located, index };
+}
+
+/** A pair that crosses the imaginary axis: two more growing, or two fewer, without a real crossing between. */
+function crossingOfPair(monitor: Monitor, a: BranchPoint, b: BranchPoint, index: number): Crossing | null {
+  if (b.monitors.undecided > 0) return null;
+  const change = b.monitors.growing - a.monitors.growing;
+  if (Math.abs(change) !== 2 || realCrossings(a, b) > 0) return null;
+  const located = locatePair(monitor, a, b, a.monitors.growing);
+  return located && { kind: 'Hopf', which: -1, located, index };
+}
+
+const BISECTIONS = 6;
+
+/** Brackets the crossing by counting growing eigenvalues, then finds the zero of the pair's real part. */
+function locatePair(monitor: Monitor, a: BranchPoint, b: BranchPoint, growing: number): Located | null {
+  let low = 0;
+  let high = planeDistance(a, b);
+  for (let k = 0; k < BISECTIONS; k += 1) {
+    const middle = (low + high) / 2;
+    const point = pointAlong(monitor, a, middle);
+    if (point === null) return null;
+    if (point.monitors.undecided > 0) break;
+    if (point.monitors.growing === growing) low = middle;
+    else high = middle;
+  }
+  const from = low === 0 ? a : pointAlong(monitor, a, low);
+  const to = pointAlong(monitor, a, high);
+  if (from === null || to === null) return null;
+  const realPart = (point: BranchPoint): number => {
+    if (!monitor.curve.evaluate(point.w) || !monitor.spectrum.update(monitor.curve.jacobian)) return NaN;
+    return monitor.spectrum.nearestPair().re;
+  };
+  return locateZero(monitor, from, to, planeDistance(from, to), realPart);
+}
+
+/** The point of the branch at a given value of the parameter, between or next to two points. */
+export function pointAtParameter(
+  monitor: Monitor,
+  a: BranchPoint,
+  b: BranchPoint,
+  parameter: number,
+): BranchPoint | null {
+  const { curve } = monitor;
+  const across = new Float64Array(curve.m + 1);
+  across[curve.m] = 1;
+  const share = (parameter - a.parameter) / (b.parameter - a.parameter);
+  const w = a.w.map((value, k) => value + share * (b.w[k] - value));
+  if (curve.correct(w, across, parameter / curve.parameterScale) < 0) return null;
+  w[curve.m] = parameter / curve.parameterScale;
+  const point = monitor.pointAt(w, a.tangent);
+  return point && { ...point, parameter };
+}
+
+function farState(curve: Curve, point: BranchPoint): number {
+  const slot = curve.active.findIndex((_, a) => Math.abs(point.w[a]) > STEP_DEFAULTS.far);
+  return slot < 0 ? -1 : curve.active[slot];
+}
+
+function isBackAt(start: BranchPoint, point: BranchPoint, h: number): boolean {
+  let squared = 0;
+  for (let k = 0; k < start.w.length; k += 1) squared += (point.w[k] - start.w[k]) ** 2;
+  return Math.sqrt(squared) < 0.75 * h && bend(start, point) > 0.9;
+}
+
+function format(value: number): string {
+  return Number(value.toPrecision(6)).toString();
+}
