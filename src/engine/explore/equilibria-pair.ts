@@ -11,8 +11,6 @@ import type { EquilibriaPair, ParameterValues } from './contract';
 export interface PairSearchOptions {
   /** States of the split model to start from as well; their totals serve the twin. */
   readonly starts?: readonly Float64Array[];
-  /** False leaves the twin alone. */
-  readonly withTwin?: boolean;
   readonly isCancelled?: () => boolean;
 }
 
@@ -29,11 +27,11 @@ export function* findEquilibriaPair(
   const { system, twin } = model;
   const starts = options.starts ?? [model.starts];
   const base = options.isCancelled ? { isCancelled: options.isCancelled } : {};
-  const share = twin.system && options.withTwin !== false ? 0.5 : 1;
+  const share = twin.system ? 0.5 : 1;
   const split = yield* searchOne(
     findEquilibria(system, p, {
       ...base,
-      ...describeSplit(model, p, true),
+      ...describeSplit(model, p),
       box: splitBox(model),
       starts,
     }),
@@ -41,11 +39,11 @@ export function* findEquilibriaPair(
     0,
     share,
   );
-  if (!twin.system || share === 1) return { split, twin: null };
+  if (!twin.system) return { split, twin: null };
   const pooled = yield* searchOne(
     findEquilibria(twin.system, p, {
       ...base,
-      ...describeTwin(model, p, true),
+      ...describeTwin(model, p),
       box: twinBox(model),
       starts: starts.map((one) => model.toTwinStarts(one)),
     }),
@@ -56,28 +54,17 @@ export function* findEquilibriaPair(
   return { split, twin: pooled };
 }
 
-/**
- * Follows known equilibria of both to new parameters. Constants of motion are looked for only where
- * something would else be called indistinguishable from neutral, since that costs more than the rest.
- */
+/** Follows known equilibria of both to new parameters. */
 export function followEquilibriaPair(
   model: CompiledModel,
   p: Float64Array,
   known: EquilibriaPair,
 ): EquilibriaPair {
   const { system, twin } = model;
-  const follow = (
-    followed: NonNullable<typeof twin.system>,
-    previous: EquilibriaResult,
-    describe: typeof describeSplit,
-  ): EquilibriaResult => {
-    const quick = trackEquilibria(followed, previous, p, describe(model, p, false));
-    const undecided = quick.equilibria.some((one) => one.type === 'indistinguishable from neutral');
-    return undecided ? trackEquilibria(followed, previous, p, describe(model, p, true)) : quick;
-  };
   return {
-    split: follow(system, known.split, describeSplit),
-    twin: twin.system && known.twin ? follow(twin.system, known.twin, describeTwin) : null,
+    split: trackEquilibria(system, known.split, p, describeSplit(model, p)),
+    twin:
+      twin.system && known.twin ? trackEquilibria(twin.system, known.twin, p, describeTwin(model, p)) : null,
   };
 }
 
@@ -95,19 +82,22 @@ function* searchOne(
   }
 }
 
-/** At spread 0 the classes are alike, and modes of their composition alone are told apart. */
-function describeSplit(model: CompiledModel, p: Float64Array, thorough: boolean): DescriptionOptions {
+/**
+ * Constants of motion are asked for only where eigenvalues leave the type open. At spread 0 the classes
+ * are alike, and modes of their composition alone are told apart.
+ */
+function describeSplit(model: CompiledModel, p: Float64Array): DescriptionOptions {
   const spread = model.parameterIndex(SPREAD_KEY);
   return {
-    constantsOfMotion: thorough ? () => constantsOfMotionAt(model.source, p) : () => [],
+    constantsOfMotion: () => constantsOfMotionAt(model.source, p),
     compositionModes: spread >= 0 && p[spread] === 0,
   };
 }
 
-function describeTwin(model: CompiledModel, p: Float64Array, thorough: boolean): DescriptionOptions {
+function describeTwin(model: CompiledModel, p: Float64Array): DescriptionOptions {
   const { source } = model.twin;
   return {
-    constantsOfMotion: () => (thorough && source ? constantsOfMotionAt(source, p) : []),
+    constantsOfMotion: () => (source ? constantsOfMotionAt(source, p) : []),
     compositionModes: model.twin.report.kind === 'unlumped',
   };
 }

@@ -6,10 +6,9 @@ import { zeroGrowthLines } from '../phase-plane/zero-growth-lines';
 import type { CompiledModel } from '../system/compile-model';
 import type { Exploration, ExploreRequest, EquilibriaPair, PlaneRequest, PlaneResult } from './contract';
 import { findEquilibriaPair, followEquilibriaPair } from './equilibria-pair';
+import { judgeModel, pairEquilibria } from './judge';
+import { judgeExploration, pairEquilibria } from './judge';
 import { sampleTimes, startsOf, trajectoryInSlices } from './trajectories';
-
-/** Equilibria that were not worked out at this look. */
-const NO_EQUILIBRIA = { split: null, twin: null } as const;
 
 /**
  * All that the bench shows of a model at one set of numbers: its trajectory and its twin's, the
@@ -43,29 +42,27 @@ export function* exploreInSlices(
     twinTrajectory = twinStep.value;
   }
 
-  let equilibria: { split: EquilibriaResult | null; twin: EquilibriaResult | null } = NO_EQUILIBRIA;
-  if (request.equilibria === 'track' && known) equilibria = followEquilibriaPair(model, p, known);
+  let found: EquilibriaPair | null = null;
+  if (request.equilibria === 'track' && known) found = followEquilibriaPair(model, p, known);
   else if (request.equilibria !== 'none') {
     const last = trajectory.states.slice(-system.dimension);
-    const search = findEquilibriaPair(model, request.values, {
-      starts: [starts, last],
-      withTwin: request.withTwin,
-    });
-    let found = search.next();
-    for (; !found.done; found = search.next()) yield at(0.5, found.value.stage);
-    equilibria = found.value;
+    const search = findEquilibriaPair(model, request.values, { starts: [starts, last] });
+    let next = search.next();
+    for (; !next.done; next = search.next()) yield at(0.5, next.value.stage);
+    found = next.value;
   }
+  const verdict = found && judgeModel(model, p, found, pairEquilibria(model, p, found));
 
   system.setParameters(p);
-  const plane = request.plane && planeOf(model, request.plane, heldState(equilibria.split, starts));
+  const plane = request.plane && planeOf(model, request.plane, heldState(found?.split ?? null, starts));
   return {
     trajectory,
     twinTrajectory,
     twinStateSymbols: twin.system?.stateSymbols ?? [],
-    equilibria: equilibria.split,
-    twinEquilibria: equilibria.twin,
+    equilibria: found?.split ?? null,
+    twinEquilibria: found?.twin ?? null,
     plane,
-    verdict: null,
+    verdict,
   };
 }
 

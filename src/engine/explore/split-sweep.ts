@@ -2,9 +2,9 @@ import type { Progress, SweepResult } from '../continuation/contract';
 import { sweep, type SweepOptions } from '../continuation/sweep';
 import type { CompiledModel } from '../system/compile-model';
 import type { CompiledSystem } from '../system/contract';
-import type { SplitSweepResult, SweepRequest } from './contract';
-import { splitBox, twinBox } from './equilibria-pair';
-import { judgeSweeps } from './judge';
+import type { EquilibriaPair, SplitSweepResult, SweepRequest } from './contract';
+import { findEquilibriaPair, splitBox, twinBox } from './equilibria-pair';
+import { judgeSweeps, pairEquilibria } from './judge';
 import { startsOf } from './trajectories';
 
 export interface SplitSweepOptions {
@@ -37,10 +37,13 @@ export function* sweepSplitAndTwin(
     parameterLabel: labelOf(model, request.parameter),
     ...(options.clock ? { clock: options.clock } : {}),
   };
+  // Paired before the sweeps begin, since pairing moves the parameters of the split system.
+  const found = yield* pairAtPresent(model, request);
+  const equilibria = pairEquilibria(model, p, found.split, found.twin);
   const combine = (split: SweepResult, twin: SweepResult | null): SplitSweepResult => ({
     split,
     twin,
-    verdict: judgeSweeps(model, request, split, twin),
+    verdict: judgeSweeps(model, p, equilibria, request.parameter, split, twin),
   });
   const split = yield* sweepOne(
     model.system,
@@ -60,6 +63,21 @@ export function* sweepSplitAndTwin(
     [share, share],
   );
   return combine(split, twin);
+}
+
+function* pairAtPresent(
+  model: CompiledModel,
+  request: SweepRequest,
+): Generator<Progress<SplitSweepResult>, EquilibriaPair> {
+  const search = findEquilibriaPair(model, request.values, {
+    starts: [startsOf(model, request)],
+    withTwin: request.withTwin,
+  });
+  for (;;) {
+    const next = search.next();
+    if (next.done) return next.value;
+    yield { fraction: 0, stage: next.value.stage, partial: null };
+  }
 }
 
 function* sweepOne(
@@ -84,6 +102,10 @@ function* sweepOne(
     }
     yield { fraction: from + share * fraction, stage, partial: partial && combine(partial) };
   }
+}
+
+function cancelling({ isCancelled }: SplitSweepOptions): { isCancelled?: () => boolean } {
+  return isCancelled ? { isCancelled } : {};
 }
 
 function labelOf(model: CompiledModel, key: string): string {
