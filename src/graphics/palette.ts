@@ -64,21 +64,26 @@ export const PALETTES: Readonly<Record<ThemeName, Palette>> = { light: LIGHT, da
 
 type Populations = PresetDocument['populations'];
 
-/** Step of the ramp: two classes lie far apart on it, one alone takes the second step. */
-function rampStep(classes: number, shade: number): number {
-  if (classes === 1) return 1;
-  if (classes === 2) return (shade % 2) * 2;
-  return shade % 4;
+const STEPS = 4;
+
+/** Steps of the ramp for the classes of one population: one alone takes the second, two lie far apart. */
+function rampSteps(shades: readonly number[]): readonly number[] {
+  const [first = 0, second = 0] = shades;
+  if (shades.length === 1) return [1];
+  if (shades.length === 2) return first > second ? [2, 0] : [0, 2];
+  const wrapped = shades.map((shade) => shade % STEPS);
+  return new Set(wrapped).size === Math.min(shades.length, STEPS)
+    ? wrapped
+    : shades.map((_shade, index) => index % STEPS);
 }
 
 /** Colour of each class, by symbol. */
 export function classColours(populations: Populations, palette: Palette): ReadonlyMap<string, string> {
   const colours = new Map<string, string>();
   for (const population of populations) {
-    const distinct = new Set(population.classes.map((one) => one.shade)).size === population.classes.length;
+    const steps = rampSteps(population.classes.map((one) => one.shade));
     population.classes.forEach((one, index) => {
-      const step = rampStep(population.classes.length, distinct ? one.shade : index);
-      colours.set(one.symbol, palette.hues[population.hue][step] ?? palette.ink);
+      colours.set(one.symbol, palette.hues[population.hue][steps[index] ?? 0] ?? palette.ink);
     });
   }
   return colours;

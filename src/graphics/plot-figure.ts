@@ -7,8 +7,9 @@ import type { Palette } from './palette';
 import type { PlotLayout } from './plot-layout';
 import type { PlotBand, PlotLine, PlotPoint, PlotSpec } from './plot-spec';
 
-/** Pixels between two markers on one line. */
-const MARKER_SPACING = 120;
+/** Way between two markers on one line, in pixels across and a fifth of those up and down. */
+const MARKER_SPACING = 110;
+const UPRIGHT_WEIGHT = 0.2;
 
 function linePoints(line: PlotLine, layout: PlotLayout): Float64Array {
   const points = new Float64Array(line.x.length * 2);
@@ -26,7 +27,8 @@ function markersAlong(line: PlotLine, points: Float64Array, offset: number, grou
   for (let k = 2; k + 1 < points.length; k += 2) {
     const x = points[k] ?? NaN;
     const y = points[k + 1] ?? NaN;
-    const length = Math.hypot(x - (points[k - 2] ?? NaN), y - (points[k - 1] ?? NaN));
+    const across = Math.abs(x - (points[k - 2] ?? NaN));
+    const length = across + UPRIGHT_WEIGHT * Math.abs(y - (points[k - 1] ?? NaN));
     if (!Number.isFinite(length)) continue;
     travelled += Math.min(length, MARKER_SPACING / 3);
     if (travelled < MARKER_SPACING) continue;
@@ -149,7 +151,7 @@ function axesMarks(layout: PlotLayout, palette: Palette): { under: Mark[]; over:
         label(left - 7, layout.y(tick.value), tick.label, { anchor: 'end', baseline: 'middle' }),
       ),
       label(left + innerWidth / 2, layout.height - 15, axisLabel(layout.xAxis), { size: 13 }),
-      label(4, top + innerHeight / 2, axisLabel(layout.yAxis), { size: 13, rotate: -90 }),
+      label(7, top + innerHeight / 2, axisLabel(layout.yAxis), { size: 13, rotate: -90 }),
     ],
   };
 }

@@ -22,7 +22,7 @@ const RIGHT = 18;
 const BOTTOM = 44;
 /** Width of a figure of the tick labels at their size of 12 px. */
 const FIGURE_WIDTH = 7.2;
-const LABEL_ROOM = 30;
+const LABEL_ROOM = 34;
 
 export function layoutPlot(
   spec: PlotSpec,

@@ -18,7 +18,7 @@ export function Card({
       aria-label={title}
       className={joinClasses('rounded-lg border bg-raised p-3.5', accent && 'border-accent')}
     >
-      <div className="mb-1.5 flex items-baseline justify-between gap-2">
+      <div className="mb-1.5 flex flex-wrap items-baseline justify-between gap-x-2">
         <h2 className="text-lg">{title}</h2>
         {aside}
       </div>

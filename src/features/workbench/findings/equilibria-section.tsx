@@ -25,7 +25,7 @@ export function EquilibriaSection() {
     ? twinSymbols?.map((symbol) => model.populations.find((one) => one.symbol === symbol)?.name || symbol)
     : undefined;
   return (
-    <section aria-label="Equilibria" className="grid gap-3">
+    <section aria-label="Equilibria" className="grid grid-cols-[minmax(0,1fr)] gap-3">
       {found.status === 'complete' ? null : (
         <p className="rounded-lg border bg-raised p-3.5 text-muted">{found.message}</p>
       )}

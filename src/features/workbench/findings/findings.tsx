@@ -32,7 +32,7 @@ function InvalidNote() {
 /** The right rail: verdict, equilibria, special points, notes. */
 export function Findings() {
   return (
-    <div className="grid content-start gap-3 p-4">
+    <div className="grid grid-cols-[minmax(0,1fr)] content-start gap-3 p-4">
       <EngineTrouble />
       <InvalidNote />
       <JobCard />

@@ -68,7 +68,7 @@ function Row({
 }) {
   const value = (point: SpecialPointRow['split']) =>
     point
-      ? formatToTolerance(point.parameter, Math.max(point.accuracy * range, Math.abs(point.parameter) * 1e-5))
+      ? formatToTolerance(point.parameter, Math.max(point.accuracy * range, Math.abs(point.parameter) * 1e-4))
       : 'none';
   const point = row.split ?? row.twin;
   return (
@@ -92,9 +92,9 @@ function Row({
             </span>
           </button>
         </th>
-        <td className="figures py-1 pl-2 text-right">{value(row.split)}</td>
-        <td className="figures py-1 pl-2 text-right text-muted">{value(row.twin)}</td>
-        <td className="figures py-1 pl-2 text-right">
+        <td className="figures py-1 pl-1.5 text-right whitespace-nowrap">{value(row.split)}</td>
+        <td className="figures py-1 pl-1.5 text-right whitespace-nowrap text-muted">{value(row.twin)}</td>
+        <td className="figures py-1 pl-1.5 text-right whitespace-nowrap">
           {row.shift === null ? '' : `${row.shift > 0 ? '+' : ''}${formatNumber(row.shift, 3)}`}
         </td>
       </tr>

@@ -6,7 +6,7 @@ import { PANE_VIEWS, type PaneView, type Quantity } from '@/engine/schema/preset
 
 import { useWorkbench } from '../state/store';
 import { axisOptions } from './axes-of-view';
-import { AxisChoice } from './axis-choice';
+import { AxisChoices } from './axis-choices';
 import { EquationsPane } from './diagrams/equations-pane';
 import { ProcessPane } from './diagrams/process-pane';
 import { VIEW_NAMES, type PaneSettings } from './pane-settings';
@@ -84,15 +84,7 @@ export function Pane({ pane, onChange, onClose, onAdd }: PaneProps) {
           />
         </Menu>
         <div className="ml-auto flex flex-wrap items-center justify-end gap-x-3 gap-y-1 max-sm:hidden">
-          {options.map((option, k) => (
-            <AxisChoice
-              key={option.label}
-              {...option}
-              onChange={(next) =>
-                onChange({ ...pane, axes: options.map((one, at) => (at === k ? next : one.value)) })
-              }
-            />
-          ))}
+          <AxisChoices options={options} onChange={(axes) => onChange({ ...pane, axes })} />
           <span className="flex">
             {onAdd ? (
               <button

@@ -6,7 +6,7 @@ interface Preset {
 }
 
 export const CAMERA_PRESETS = {
-  oblique: { label: 'oblique', position: [1.75, 1.35, 3.7] },
+  oblique: { label: 'oblique', position: [1.45, 1.15, 3.5] },
   x: { label: 'along x', position: [4.1, 0, 0.001] },
   y: { label: 'along y', position: [0, 0, 4.1] },
   z: { label: 'along z', position: [0, 4.1, 0.001] },

@@ -98,17 +98,27 @@ export function frameSegments(
   return { grid, edges };
 }
 
-function axisTexts(spec: SpaceSpec, cube: CubeScale, project: Projector, palette: Palette): TextMark[] {
+/** Half the width of a text of that many letters, in pixels. */
+const HALF_LETTER = 3.3;
+
+function axisTexts(
+  spec: SpaceSpec,
+  cube: CubeScale,
+  project: Projector,
+  palette: Palette,
+  width: number,
+): TextMark[] {
   return EDGES.flatMap((edge, k): TextMark[] => {
     const axis = spec.axes[k];
     const scale = cube.axes[k];
     if (!axis || !scale) return [];
     const text = (s: number, away: number, words: string, more: Partial<TextMark>): TextMark => {
       const [x, y, z] = edge.at(s);
+      const half = words.length * HALF_LETTER + 4;
       const at = project(x + edge.out[0] * away, y + edge.out[1] * away, z + edge.out[2] * away);
       return {
         kind: 'text',
-        x: at.x,
+        x: Math.max(half, Math.min(width - half, at.x)),
         y: at.y,
         text: words,
         size: 11.5,
@@ -179,7 +189,7 @@ export function projectSpace(
       });
     }
   }
-  marks.push(...axisTexts(spec, cube, project, palette));
+  marks.push(...axisTexts(spec, cube, project, palette, size.width));
   for (const one of spec.points) {
     cube.toCube(...one.at, point);
     if (Math.max(Math.abs(point.x), Math.abs(point.y), Math.abs(point.z)) > 1.02) continue;

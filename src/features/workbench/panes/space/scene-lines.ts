@@ -75,7 +75,14 @@ export class SceneLines {
     const present = new Set<string>();
     for (const line of spec.lines) {
       present.add(line.id);
-      const live = this.ensure(line.id, line.colour, line.dashed, line.opacity, line.points.length / 3);
+      const live = this.ensure(
+        line.id,
+        line.colour,
+        line.dashed,
+        line.opacity,
+        line.twin,
+        line.points.length / 3,
+      );
       const attribute = live.geometry.getAttribute('position') as BufferAttribute;
       const array = attribute.array as Float32Array;
       let filled = 0;
@@ -97,7 +104,14 @@ export class SceneLines {
       }
   }
 
-  private ensure(id: string, colour: string, dashed: boolean, opacity: number, count: number): LiveLine {
+  private ensure(
+    id: string,
+    colour: string,
+    dashed: boolean,
+    opacity: number,
+    twin: boolean,
+    count: number,
+  ): LiveLine {
     const look = `${colour}|${dashed}|${opacity}`;
     const known = this.lines.get(id);
     if (known && known.look === look && known.capacity >= count) return known;
@@ -107,7 +121,7 @@ export class SceneLines {
     const attribute = new BufferAttribute(new Float32Array(capacity * 3), 3);
     attribute.setUsage(DynamicDrawUsage);
     geometry.setAttribute('position', attribute);
-    const strands = ASIDE.map((aside) => {
+    const strands = (twin ? ASIDE.slice(0, 2) : ASIDE).map((aside) => {
       const strand = new Line(geometry, asideMaterial(colour, dashed, opacity, aside, this.size));
       strand.frustumCulled = false;
       this.group.add(strand);
