@@ -67,7 +67,7 @@ function work(model: BenchModel, method: MethodName, tolerance: number, referenc
   const system = compileBenchModel(model);
   const start = Float64Array.from(model.start);
   const ends = Float64Array.of(0, END);
-  let state = start;
+  let state: Float64Array = start;
   const timing = time(
     () => {
       state = integrateTo(system, start, ends, { method, relativeTolerance: tolerance }).states;
