@@ -7,7 +7,6 @@ import type { CompiledModel } from '../system/compile-model';
 import type { Exploration, ExploreRequest, EquilibriaPair, PlaneRequest, PlaneResult } from './contract';
 import { findEquilibriaPair, followEquilibriaPair } from './equilibria-pair';
 import { judgeModel, pairEquilibria } from './judge';
-import { judgeExploration, pairEquilibria } from './judge';
 import { sampleTimes, startsOf, trajectoryInSlices } from './trajectories';
 
 /**

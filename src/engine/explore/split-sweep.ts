@@ -4,7 +4,7 @@ import type { CompiledModel } from '../system/compile-model';
 import type { CompiledSystem } from '../system/contract';
 import type { EquilibriaPair, SplitSweepResult, SweepRequest } from './contract';
 import { findEquilibriaPair, splitBox, twinBox } from './equilibria-pair';
-import { judgeSweeps, pairEquilibria } from './judge';
+import { judgeModel, pairEquilibria } from './judge';
 import { startsOf } from './trajectories';
 
 export interface SplitSweepOptions {
@@ -37,13 +37,14 @@ export function* sweepSplitAndTwin(
     parameterLabel: labelOf(model, request.parameter),
     ...(options.clock ? { clock: options.clock } : {}),
   };
-  // Paired before the sweeps begin, since pairing moves the parameters of the split system.
-  const found = yield* pairAtPresent(model, request);
-  const equilibria = pairEquilibria(model, p, found.split, found.twin);
+  // The verdict rests on the equilibria at the present numbers as well. They are paired before the sweeps
+  // begin, since pairing moves the parameters of the split system.
+  const found = yield* pairAtPresent(model, request, options);
+  const pairs = pairEquilibria(model, p, found);
   const combine = (split: SweepResult, twin: SweepResult | null): SplitSweepResult => ({
     split,
     twin,
-    verdict: judgeSweeps(model, p, equilibria, request.parameter, split, twin),
+    verdict: judgeModel(model, p, found, pairs, { parameter: request.parameter, split, twin }),
   });
   const split = yield* sweepOne(
     model.system,
@@ -68,10 +69,11 @@ export function* sweepSplitAndTwin(
 function* pairAtPresent(
   model: CompiledModel,
   request: SweepRequest,
+  { isCancelled }: SplitSweepOptions,
 ): Generator<Progress<SplitSweepResult>, EquilibriaPair> {
   const search = findEquilibriaPair(model, request.values, {
     starts: [startsOf(model, request)],
-    withTwin: request.withTwin,
+    ...(isCancelled ? { isCancelled } : {}),
   });
   for (;;) {
     const next = search.next();
@@ -102,10 +104,6 @@ function* sweepOne(
     }
     yield { fraction: from + share * fraction, stage, partial: partial && combine(partial) };
   }
-}
-
-function cancelling({ isCancelled }: SplitSweepOptions): { isCancelled?: () => boolean } {
-  return isCancelled ? { isCancelled } : {};
 }
 
 function labelOf(model: CompiledModel, key: string): string {
