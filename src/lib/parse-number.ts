@@ -70,8 +70,6 @@ export function showNumber(value: number, digits = 12): string {
   const rounded = Number(value.toPrecision(digits));
   const size = Math.abs(rounded);
   const text =
-    size !== 0 && (size < 1e-4 || size >= 1e7)
-      ? rounded.toExponential().replace('e+', 'e')
-      : String(rounded);
+    size !== 0 && (size < 1e-4 || size >= 1e7) ? rounded.toExponential().replace('e+', 'e') : String(rounded);
   return text.replaceAll('-', '\u2212');
 }

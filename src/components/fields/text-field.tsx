@@ -58,6 +58,7 @@ export function TextField(props: TextFieldProps) {
         id={id}
         className={joinClasses('w-full', COMPACT_HEIGHT, COMPACT_INPUT, props.inputClassName)}
         value={draft ?? value}
+        data-draft={draft === null ? undefined : ''}
         autoComplete="off"
         maxLength={props.maxLength}
         placeholder={props.placeholder}

@@ -58,6 +58,7 @@ export function useNumberText({ value, onCommit, onClear, check }: NumberTextOpt
     isDirty: () => dirty.current,
     inputProps: {
       value: draft ?? shown,
+      'data-draft': draft === null ? undefined : '',
       inputMode: 'decimal' as const,
       autoComplete: 'off',
       spellCheck: false,

@@ -1,0 +1,6 @@
+import { linkListSchema } from '@/contract/presets';
+import { api } from '@/lib/api-client';
+
+export function listLinks(id: string) {
+  return api.get(`/presets/${encodeURIComponent(id)}/links`, linkListSchema);
+}

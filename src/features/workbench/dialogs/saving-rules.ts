@@ -1,0 +1,32 @@
+import type { WorkbenchState } from '../state/store';
+
+/** Why the document cannot be saved as a version now; null where it can. */
+export function refuseSave(
+  state: Pick<WorkbenchState, 'origin' | 'document' | 'saved'>,
+  signedIn: boolean,
+): string | null {
+  const { origin } = state;
+  if (origin.kind === 'shared')
+    return origin.signedIn || signedIn
+      ? 'A shared preset is not saved over; save it as a copy of your own.'
+      : 'Sign in to save a copy of your own.';
+  if (origin.kind === 'new') return null;
+  if (!origin.rights.includes('save'))
+    return origin.starter
+      ? 'Starter presets stay as they are; save a copy of your own.'
+      : 'You may look at this preset but not save it; save a copy of your own.';
+  return state.document === state.saved ? 'Nothing has changed since it was saved.' : null;
+}
+
+/** Why there is nothing to share yet; null where there is. */
+export function refuseShare(state: Pick<WorkbenchState, 'origin'>): string | null {
+  const { origin } = state;
+  if (origin.kind === 'new') return 'Save the preset first; then it can be shared.';
+  if (origin.kind === 'shared') return 'This preset is shared already; pass on its address.';
+  const may = origin.rights.includes('share by link') || origin.rights.includes('change visibility');
+  return may ? null : 'Only those who may share this preset can make links to it.';
+}
+
+export function isDirty(state: Pick<WorkbenchState, 'document' | 'saved'>): boolean {
+  return state.document !== state.saved;
+}

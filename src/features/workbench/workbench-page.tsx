@@ -1,0 +1,101 @@
+import { useQuery } from '@tanstack/react-query';
+import { useMemo, useState } from 'react';
+import { Link } from 'react-router-dom';
+
+import { ErrorState, LoadingState } from '@/components/states/page-state';
+import { buttonClasses } from '@/components/ui/button';
+import { createEmptyPreset } from '@/engine/schema/create';
+import type { PresetDocument } from '@/engine/schema/preset';
+import { useSession } from '@/lib/session';
+
+import { fetchPreset } from './dialogs/api/fetch-preset';
+import { fetchShared } from './dialogs/api/fetch-shared';
+import { originOf } from './dialogs/origin-of';
+import { draftKey } from './drafts/draft-key';
+import { DraftOffer } from './drafts/draft-offer';
+import { forgetDraft, readDraft, sameDocument } from './drafts/draft-storage';
+import { createWorkbenchStore, WorkbenchContext, type Origin } from './state/store';
+import { Workbench } from './workbench';
+
+export type WorkbenchSource =
+  | { readonly kind: 'new' }
+  | { readonly kind: 'preset'; readonly id: string }
+  | { readonly kind: 'shared'; readonly token: string };
+
+interface Opened {
+  readonly document: PresetDocument;
+  readonly origin: Origin;
+}
+
+async function openSource(source: WorkbenchSource, signedIn: boolean, signal: AbortSignal): Promise<Opened> {
+  if (source.kind === 'new') return { document: createEmptyPreset(), origin: { kind: 'new' } };
+  if (source.kind === 'shared') {
+    const shared = await fetchShared(source.token, signal);
+    return { document: shared.document, origin: { kind: 'shared', token: source.token, signedIn } };
+  }
+  const body = await fetchPreset(source.id, signal);
+  return { document: body.document, origin: originOf(body) };
+}
+
+/** The bench with what was opened on it; an earlier visit's draft is offered first. */
+function OpenedBench({ opened, userId }: { readonly opened: Opened; readonly userId: string | undefined }) {
+  const key = draftKey(opened.origin, userId);
+  const store = useMemo(() => createWorkbenchStore(opened.document, opened.origin), [opened]);
+  const [draft, setDraft] = useState(() => {
+    const kept = key ? readDraft(key) : null;
+    return kept && !sameDocument(kept.document, opened.document) ? kept : null;
+  });
+  const version = opened.origin.kind === 'preset' ? opened.origin.version : null;
+
+  const handleRestore = () => {
+    if (!draft) return;
+    const { origin } = opened;
+    if (origin.kind === 'preset' && draft.baseVersion !== null) {
+      // Saving will find the newer version and ask how to keep both.
+      store.getState().set({ origin: { ...origin, version: draft.baseVersion } });
+    }
+    store.getState().edit('restoring the draft', () => draft.document);
+    setDraft(null);
+  };
+  const handleDiscard = () => {
+    if (key) forgetDraft(key);
+    setDraft(null);
+  };
+  return (
+    <WorkbenchContext.Provider value={store}>
+      <Workbench draftKey={draft ? null : key} />
+      {draft ? (
+        <DraftOffer draft={draft} version={version} onRestore={handleRestore} onDiscard={handleDiscard} />
+      ) : null}
+    </WorkbenchContext.Provider>
+  );
+}
+
+export default function WorkbenchPage({ source }: { readonly source: WorkbenchSource }) {
+  const session = useSession();
+  const user = session.data?.user;
+  const opened = useQuery({
+    queryKey: ['bench', source, user?.id ?? ''],
+    queryFn: ({ signal }) => openSource(source, Boolean(user), signal),
+    enabled: !session.isPending,
+    // The bench keeps its own copy: a refetch must not replace what is being edited.
+    staleTime: Infinity,
+    gcTime: 0,
+    refetchOnWindowFocus: false,
+    refetchOnReconnect: false,
+  });
+  if (opened.isError) {
+    return (
+      <ErrorState
+        error={opened.error}
+        actions={
+          <Link to="/presets" className={buttonClasses('plain')}>
+            To the presets
+          </Link>
+        }
+      />
+    );
+  }
+  if (!opened.data) return <LoadingState label="Opening the preset…" />;
+  return <OpenedBench opened={opened.data} userId={user?.id} />;
+}
