@@ -74,10 +74,11 @@ export class EngineSession implements EngineApi {
     onProgress: (progress: Progress<SplitSweepResult>) => void,
   ): Promise<SplitSweepResult> {
     const model = this.modelOfOwn();
-    const began = performance.now();
-    const run = sweepSplitAndTwin(model, request, { isCancelled: () => this.cancelled.has(job) });
-    const result = await this.runJob(job, run, onProgress);
-    return timed(result, performance.now() - began);
+    const run = sweepSplitAndTwin(model, request, {
+      isCancelled: () => this.cancelled.has(job),
+      clock: () => performance.now(),
+    });
+    return this.runJob(job, run, onProgress);
   }
 
   secondOpinion(request: ExploreRequest): SecondOpinion {
@@ -120,9 +121,4 @@ export class EngineSession implements EngineApi {
     if (!compiled?.ok) throw new Error(NO_MODEL);
     return compiled.model;
   }
-}
-
-/** The engine has no clock: the time that a sweep took is known out here. */
-function timed(result: SplitSweepResult, milliseconds: number): SplitSweepResult {
-  return { ...result, split: { ...result.split, milliseconds } };
 }

@@ -45,6 +45,8 @@ describe('the engine behind the face of the workers', () => {
     expect(pooled?.type).toBe('neutral');
     expect(found.plane?.note).toMatch(/total with shares.*coexistence equilibrium/);
     expect(found.plane?.lines.every((line) => line.segments.length > 0)).toBe(true);
+    // Unequal mortality damps what is neutral when pooled.
+    expect(found.verdict?.answer).toBe('stabilises');
     expect(found.milliseconds).toBeGreaterThan(0);
     engine.dispose();
   });
@@ -92,6 +94,8 @@ describe('the engine behind the face of the workers', () => {
     expect(swept.split.status).toBe('complete');
     expect(swept.split.points).toBeGreaterThan(10);
     expect(swept.twin?.status).toBe('complete');
+    expect(swept.split.milliseconds).toBeGreaterThan(0);
+    expect(swept.verdict.sentence.length).toBeGreaterThan(20);
     // The coexistence branch of case B1: x = 1 - (0.3 s)^2 at spread s.
     const branch = swept.split.branches.find((one) => one.absent.length === 0);
     branch?.parameters.forEach((s, k) => {
