@@ -10,6 +10,8 @@ import { startsOf } from './trajectories';
 export interface SplitSweepOptions {
   /** Asked between slices; true ends the sweep with what was found. */
   readonly isCancelled?: () => boolean;
+  /** Long-run bands past Hopf points; true unless told. */
+  readonly bands?: boolean;
   /** Milliseconds; the engine has no clock of its own. */
   readonly clock?: () => number;
 }
@@ -36,6 +38,7 @@ export function* sweepSplitAndTwin(
     to: request.to,
     parameterLabel: labelOf(model, request.parameter),
     ...(options.clock ? { clock: options.clock } : {}),
+    ...(options.bands === undefined ? {} : { bands: options.bands }),
   };
   // The verdict rests on the equilibria at the present numbers as well. They are paired before the sweeps
   // begin, since pairing moves the parameters of the split system.

@@ -57,6 +57,8 @@ export const trajectoryTaskSchema = z.strictObject({
 export const equilibriaTaskSchema = z.strictObject({
   task: z.literal('equilibria'),
   ...common,
+  /** States to start the search from besides its own, by class; they also set the size of a guessed box. */
+  starts: values.optional(),
   /** Box to search, by class; else the document's. */
   box: z.record(z.string(), z.tuple([finite, finite])).optional(),
 });
@@ -67,6 +69,8 @@ export const sweepTaskSchema = z.strictObject({
   parameter: z.string().min(1).max(80),
   from: finite,
   to: finite,
+  /** A state to begin from besides what the search finds, by class. */
+  starts: values.optional(),
   box: z.record(z.string(), z.tuple([finite, finite])).optional(),
   /** Long-run bands past Hopf points. */
   bands: z.boolean().default(true),
