@@ -18,22 +18,26 @@ export interface Timing {
 
 const WARM_CALLS = 3;
 
-/** Median over rounds of the time of one call; each round calls until `roundMilliseconds` are spent. */
+/**
+ * Time of one call: the fastest of each round, then the median over rounds, so that other work on the
+ * machine counts as little as can be. A round calls until `roundMilliseconds` are spent.
+ */
 export function time(work: () => void, rounds = 7, roundMilliseconds = 60): Timing {
   for (let k = 0; k < WARM_CALLS; k += 1) work();
-  const perCall: number[] = [];
+  const fastest: number[] = [];
   for (let round = 0; round < rounds; round += 1) {
-    const began = performance.now();
-    let calls = 0;
-    let spent: number;
+    const end = performance.now() + roundMilliseconds;
+    let best = Infinity;
+    let now: number;
     do {
+      const began = performance.now();
       work();
-      calls += 1;
-      spent = performance.now() - began;
-    } while (spent < roundMilliseconds);
-    perCall.push(spent / calls);
+      now = performance.now();
+      best = Math.min(best, now - began);
+    } while (now < end);
+    fastest.push(best);
   }
-  return { median: median(perCall), fastest: Math.min(...perCall) };
+  return { median: median(fastest), fastest: Math.min(...fastest) };
 }
 
 export function median(values: readonly number[]): number {

@@ -1,11 +1,10 @@
 import { existsSync, readFileSync } from 'node:fs';
 import { join } from 'node:path';
-import { fileURLToPath } from 'node:url';
 import { gzipSync } from 'node:zlib';
 
 import { absent, atMost, type Row } from '../measure';
 
-const CLIENT = fileURLToPath(new URL('../../../dist/client/', import.meta.url));
+const CLIENT = join('dist', 'client');
 const NAME = 'first load: script that the start page names, gzip';
 const KILOBYTES = 200;
 

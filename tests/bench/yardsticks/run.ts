@@ -2,9 +2,9 @@ import { execFileSync } from 'node:child_process';
 import { mkdtempSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
-import { fileURLToPath } from 'node:url';
 
-const here = (file: string): string => fileURLToPath(new URL(file, import.meta.url));
+/** The bench runs at the root of the project. */
+const here = (file: string): string => join('tests', 'bench', 'yardsticks', file);
 
 export interface NativeRun {
   readonly milliseconds: number;
