@@ -1,15 +1,18 @@
 import type { ExplicitTableau } from './explicit-tableau';
-import { scaledNorm, type MethodSetting, type OneStepMethod } from './one-step-method';
+import type { MethodSetting, OneStepMethod } from './one-step-method';
 
-/** Nonzero weights of a row and the stages they belong to. */
+/** Nonzero weights of a row, and where the stages they belong to begin in the flat array of slopes. */
 interface SparseRow {
-  readonly stages: Int32Array;
+  readonly offsets: Int32Array;
   readonly weights: Float64Array;
 }
 
-function sparse(row: readonly number[]): SparseRow {
+function sparse(row: readonly number[], n: number): SparseRow {
   const stages = row.flatMap((weight, j) => (weight === 0 ? [] : [j]));
-  return { stages: Int32Array.from(stages), weights: Float64Array.from(stages, (j) => row[j]) };
+  return {
+    offsets: Int32Array.from(stages, (j) => j * n),
+    weights: Float64Array.from(stages, (j) => row[j]),
+  };
 }
 
 /**
@@ -35,10 +38,13 @@ export class ExplicitRungeKutta implements OneStepMethod {
   private readonly errorUsesEnd: boolean;
   private readonly denseStages: readonly SparseRow[];
   private readonly denseRows: readonly SparseRow[];
-  private readonly k: Float64Array[];
+  /** All slopes, stage after stage, and a view of each. */
+  private readonly slopes: Float64Array;
+  private readonly k: readonly Float64Array[];
   private readonly stage: Float64Array;
-  private readonly error: Float64Array;
-  private readonly densePart: Float64Array[];
+  /** Coefficients of the dense output, row after row. */
+  private readonly dense: Float64Array;
+  private readonly denseCount: number;
   private previous: Float64Array;
   private proposal: Float64Array;
   private t = 0;
@@ -59,18 +65,20 @@ export class ExplicitRungeKutta implements OneStepMethod {
     this.smallestFactor = tableau.smallestFactor;
     this.largestFactor = tableau.largestFactor;
     this.stageCount = tableau.b.length;
-    this.rows = tableau.a.map(sparse);
-    this.weights = sparse(tableau.b);
-    this.errorRow = sparse(tableau.error);
-    this.lowErrorRow = tableau.lowOrderError ? sparse(tableau.lowOrderError) : null;
+    this.rows = tableau.a.map((row) => sparse(row, n));
+    this.weights = sparse(tableau.b, n);
+    this.errorRow = sparse(tableau.error, n);
+    this.lowErrorRow = tableau.lowOrderError ? sparse(tableau.lowOrderError, n) : null;
     this.errorUsesEnd = tableau.error.length > this.stageCount;
-    this.denseStages = tableau.denseA.map(sparse);
-    this.denseRows = tableau.dense.map(sparse);
+    this.denseStages = tableau.denseA.map((row) => sparse(row, n));
+    this.denseRows = tableau.dense.map((row) => sparse(row, n));
     const stages = this.stageCount + 1 + tableau.denseA.length;
-    this.k = Array.from({ length: stages }, () => new Float64Array(n));
-    this.densePart = Array.from({ length: tableau.dense.length + 3 }, () => new Float64Array(n));
+    const slopes = new Float64Array(stages * n);
+    this.slopes = slopes;
+    this.k = Array.from({ length: stages }, (_, j) => slopes.subarray(j * n, (j + 1) * n));
+    this.denseCount = tableau.dense.length + 3;
+    this.dense = new Float64Array(this.denseCount * n);
     this.stage = new Float64Array(n);
-    this.error = new Float64Array(n);
     this.state = new Float64Array(n);
     this.previous = new Float64Array(n);
     this.proposal = new Float64Array(n);
@@ -91,9 +99,7 @@ export class ExplicitRungeKutta implements OneStepMethod {
   attempt(t: number, h: number): number {
     const { k, tableau, stageCount } = this;
     if (this.accepted) {
-      const first = k[stageCount];
-      k[stageCount] = k[0];
-      k[0] = first;
+      k[0].set(k[stageCount]);
       this.accepted = false;
     }
     this.denseReady = false;
@@ -120,13 +126,12 @@ export class ExplicitRungeKutta implements OneStepMethod {
 
   interpolate(theta: number, out: Float64Array): void {
     if (!this.denseReady) this.prepareDense();
-    const { n, previous, densePart } = this;
+    const { n, previous, dense, denseCount } = this;
     const rest = 1 - theta;
     for (let i = 0; i < n; i += 1) {
       let sum = 0;
-      for (let m = densePart.length - 1; m >= 0; m -= 1) {
-        sum = (sum + densePart[m][i]) * (m % 2 === 0 ? theta : rest);
-      }
+      for (let m = denseCount - 1; m >= 0; m -= 1)
+        sum = (sum + dense[m * n + i]) * (m % 2 === 0 ? theta : rest);
       out[i] = previous[i] + sum;
     }
   }
@@ -156,53 +161,64 @@ export class ExplicitRungeKutta implements OneStepMethod {
     this.endKnown = true;
   }
 
-  /** out = base + h sum of weight * stage. */
+  /** out = base + h sum of weight * slope. */
   private combine(row: SparseRow, base: Float64Array, h: number, out: Float64Array): void {
-    const { n, k } = this;
-    const { stages, weights } = row;
-    for (let i = 0; i < n; i += 1) out[i] = base[i];
-    for (let q = 0; q < stages.length; q += 1) {
-      const slope = k[stages[q]];
-      const factor = h * weights[q];
-      for (let i = 0; i < n; i += 1) out[i] += factor * slope[i];
+    const { n, slopes } = this;
+    const { offsets, weights } = row;
+    const terms = offsets.length;
+    for (let i = 0; i < n; i += 1) {
+      let sum = 0;
+      for (let q = 0; q < terms; q += 1) sum += weights[q] * slopes[offsets[q] + i];
+      out[i] = base[i] + h * sum;
     }
   }
 
-  private weigh(row: SparseRow, factor: number, out: Float64Array): void {
-    const { n, k } = this;
-    out.fill(0);
-    for (let q = 0; q < row.stages.length; q += 1) {
-      const slope = k[row.stages[q]];
-      const weight = factor * row.weights[q];
-      for (let i = 0; i < n; i += 1) out[i] += weight * slope[i];
+  /** Root mean square of an estimate over tolerance, over h. */
+  private estimate(row: SparseRow): number {
+    const { n, slopes, state, proposal, setting } = this;
+    const { offsets, weights } = row;
+    const terms = offsets.length;
+    let squares = 0;
+    for (let i = 0; i < n; i += 1) {
+      let sum = 0;
+      for (let q = 0; q < terms; q += 1) sum += weights[q] * slopes[offsets[q] + i];
+      const size = Math.max(Math.abs(state[i]), Math.abs(proposal[i]));
+      const ratio = sum / (setting.absoluteTolerance + setting.relativeTolerance * size);
+      squares += ratio * ratio;
     }
+    return Math.sqrt(squares / n);
   }
 
   private errorOverTolerance(): number {
-    const { state, proposal, error, setting, n, h } = this;
-    this.weigh(this.errorRow, h, error);
-    const high = scaledNorm(error, state, proposal, setting, n);
+    const step = Math.abs(this.h);
+    const high = this.estimate(this.errorRow) * step;
     if (!this.lowErrorRow) return high;
-    this.weigh(this.lowErrorRow, h, error);
-    const low = scaledNorm(error, state, proposal, setting, n);
+    const low = this.estimate(this.lowErrorRow) * step;
     const squared = high * high + 0.01 * low * low;
     return squared === 0 ? 0 : (high * high) / Math.sqrt(squared);
   }
 
   private prepareDense(): void {
-    const { n, k, h, t, stageCount, densePart, previous, state } = this;
+    const { n, k, h, t, stageCount, dense, previous, state } = this;
     const { denseC } = this.tableau;
-    this.denseStages.forEach((row, s) => {
-      this.combine(row, previous, h, this.proposal);
+    for (let s = 0; s < this.denseStages.length; s += 1) {
+      this.combine(this.denseStages[s], previous, h, this.proposal);
       this.evaluate(t + denseC[s] * h, this.proposal, k[stageCount + 1 + s]);
-    });
+    }
     for (let i = 0; i < n; i += 1) {
       const change = state[i] - previous[i];
-      densePart[0][i] = change;
-      densePart[1][i] = h * k[0][i] - change;
-      densePart[2][i] = 2 * change - h * (k[0][i] + k[stageCount][i]);
+      dense[i] = change;
+      dense[n + i] = h * k[0][i] - change;
+      dense[2 * n + i] = 2 * change - h * (k[0][i] + k[stageCount][i]);
     }
-    this.denseRows.forEach((row, m) => this.weigh(row, h, densePart[m + 3]));
+    for (let m = 0; m < this.denseRows.length; m += 1) {
+      const { offsets, weights } = this.denseRows[m];
+      for (let i = 0; i < n; i += 1) {
+        let sum = 0;
+        for (let q = 0; q < offsets.length; q += 1) sum += weights[q] * this.slopes[offsets[q] + i];
+        dense[(m + 3) * n + i] = h * sum;
+      }
+    }
     this.denseReady = true;
   }
 }
