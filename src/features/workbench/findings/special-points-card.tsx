@@ -66,10 +66,7 @@ function Row({
   readonly selected: boolean;
   readonly onChoose: () => void;
 }) {
-  const value = (point: SpecialPointRow['split']) =>
-    point
-      ? formatToTolerance(point.parameter, Math.max(point.accuracy * range, Math.abs(point.parameter) * 1e-4))
-      : 'none';
+  const value = (point: SpecialPointRow['split']) => (point ? formatNumber(point.parameter, 4) : 'none');
   const point = row.split ?? row.twin;
   return (
     <>
@@ -101,6 +98,14 @@ function Row({
       {selected && row.split ? (
         <tr className="bg-panel">
           <td colSpan={4} className="px-1 pb-2 text-sm text-muted">
+            <p>
+              At{' '}
+              <span className="figures">
+                {formatToTolerance(row.split.parameter, row.split.accuracy * range)}
+              </span>
+              , located to <span className="figures">{formatNumber(row.split.accuracy, 1)}</span> of the
+              range.
+            </p>
             {row.split.meaning}
             {row.split.hopf ? (
               <>

@@ -1,5 +1,8 @@
+import { Fragment } from 'react';
+
 import type { Verdict, VerdictEvidence } from '@/engine/verdict/contract';
 import { formatNumber } from '@/graphics/numbers';
+import { joinClasses } from '@/lib/join-classes';
 
 import { useWorkbench } from '../state/store';
 import { Card } from './card';
@@ -23,20 +26,28 @@ function EvidenceTable({ evidence }: { readonly evidence: readonly VerdictEviden
       </thead>
       <tbody>
         {evidence.map((one) => (
-          <tr key={one.label} className="border-t align-baseline">
-            <th scope="row" className="py-1 pr-1 text-left font-normal">
-              {one.label}
-              {one.unit ? <span className="text-muted"> ({one.unit})</span> : null}
-              {one.note ? <span className="block text-xs text-muted">{one.note}</span> : null}
-            </th>
-            <td className="figures py-1 pl-2 text-right whitespace-nowrap">{cell(one.pooled)}</td>
-            <td className="figures py-1 pl-2 text-right font-semibold whitespace-nowrap">
-              <span aria-hidden className="font-normal text-muted">
-                →{' '}
-              </span>
-              {cell(one.split)}
-            </td>
-          </tr>
+          <Fragment key={one.label}>
+            <tr className="border-t align-baseline">
+              <th scope="row" className="pt-1 pr-1 text-left font-normal">
+                {one.label}
+                {one.unit ? <span className="text-muted"> ({one.unit})</span> : null}
+              </th>
+              <td className="figures pt-1 pl-2 text-right whitespace-nowrap">{cell(one.pooled)}</td>
+              <td className="figures pt-1 pl-1 text-right font-semibold whitespace-nowrap">
+                <span aria-hidden className="font-normal text-muted">
+                  →{' '}
+                </span>
+                {cell(one.split)}
+              </td>
+            </tr>
+            {one.note ? (
+              <tr>
+                <td colSpan={3} className="pb-1 text-xs text-muted">
+                  {one.note}
+                </td>
+              </tr>
+            ) : null}
+          </Fragment>
         ))}
       </tbody>
     </table>
@@ -57,10 +68,20 @@ function Reasons({ title, items }: { readonly title: string; readonly items: rea
   );
 }
 
+/** Letters beyond which a sentence is set smaller, so that the evidence stays in view. */
+const LONG_SENTENCE = 110;
+
 function VerdictBody({ verdict }: { readonly verdict: Verdict }) {
   return (
     <>
-      <p className="font-heading text-xl leading-snug font-medium">{verdict.sentence}</p>
+      <p
+        className={joinClasses(
+          'font-heading leading-snug font-medium',
+          verdict.sentence.length > LONG_SENTENCE ? 'text-[1.05rem]' : 'text-xl',
+        )}
+      >
+        {verdict.sentence}
+      </p>
       {verdict.evidence.length > 0 ? <EvidenceTable evidence={verdict.evidence} /> : null}
       <Reasons title="What it rests on" items={verdict.restsOn} />
       <Reasons title="What it leaves open" items={verdict.leavesOpen} />

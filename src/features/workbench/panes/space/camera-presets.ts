@@ -6,10 +6,10 @@ interface Preset {
 }
 
 export const CAMERA_PRESETS = {
-  oblique: { label: 'oblique', position: [1.45, 1.15, 3.5] },
-  x: { label: 'along x', position: [4.1, 0, 0.001] },
-  y: { label: 'along y', position: [0, 0, 4.1] },
-  z: { label: 'along z', position: [0, 4.1, 0.001] },
+  oblique: { label: 'oblique', position: [1.8, 1.5, 4.4] },
+  x: { label: 'along x', position: [4.9, 0, 0.001] },
+  y: { label: 'along y', position: [0, 0, 4.9] },
+  z: { label: 'along z', position: [0, 4.9, 0.001] },
 } as const satisfies Record<string, Preset>;
 
 export type CameraPreset = keyof typeof CAMERA_PRESETS;

@@ -96,6 +96,19 @@ export function bandColumn(
   return total >= 0 ? [total, poolingShare(model, quantity.of)] : null;
 }
 
+/** Stretches of a band that are settled throughout, or nowhere; they overlap by one point. */
+function settledRuns(band: Band): readonly (readonly [number, number])[] {
+  const runs: (readonly [number, number])[] = [];
+  const count = band.parameters.length;
+  let from = 0;
+  for (let k = 1; k <= count; k++) {
+    if (k < count && band.settled[k] === band.settled[from]) continue;
+    runs.push([from, Math.min(k, count - 1)]);
+    from = k;
+  }
+  return runs;
+}
+
 function bands(
   model: PresetDocument,
   sweep: SweepResult,
@@ -105,22 +118,25 @@ function bands(
 ): PlotBand[] {
   return sweep.bands.flatMap((band, order) => {
     const column = bandColumn(model, band, shown.quantity);
-    if (!column || band.parameters.length === 0) return [];
+    if (!column) return [];
     const m = band.quantities.length;
-    const pick = (values: Float64Array) =>
-      Float64Array.from(band.parameters, (_value, k) => column[1] * (values[k * m + column[0]] ?? NaN));
-    const settled = band.settled.every((one) => one === 1);
-    return {
-      id: `${twin ? 'twin' : 'own'}-band:${shown.label}:${order}`,
-      label: `${twin ? 'pooled twin, ' : ''}${shown.label}, long-run range${settled ? '' : ' (as far as seen)'}`,
-      colour: twin ? grey : shown.colour,
-      x: band.parameters,
-      low: pick(band.lowest),
-      high: pick(band.highest),
-      opacity: twin ? 0.16 : 0.2,
-      ...(settled ? {} : { dash: [2, 3] }),
-      twin,
-    };
+    return settledRuns(band).map(([from, to], part): PlotBand => {
+      const x = band.parameters.slice(from, to + 1);
+      const pick = (values: Float64Array) =>
+        Float64Array.from(x, (_value, k) => column[1] * (values[(from + k) * m + column[0]] ?? NaN));
+      const settled = band.settled[from] === 1;
+      return {
+        id: `${twin ? 'twin' : 'own'}-band:${shown.label}:${order}:${part}`,
+        label: `${twin ? 'pooled twin, ' : ''}${shown.label}, long-run range${settled ? '' : ' (as far as seen)'}`,
+        colour: twin ? grey : shown.colour,
+        x,
+        low: pick(band.lowest),
+        high: pick(band.highest),
+        opacity: twin ? 0.16 : 0.2,
+        ...(settled ? {} : { dash: [2, 3] }),
+        twin,
+      };
+    });
   });
 }
 
