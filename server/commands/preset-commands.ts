@@ -1,0 +1,294 @@
+import type { Transaction } from 'sequelize';
+
+import { LIMITS } from '@/engine/schema/limits';
+import type { PresetDocument } from '@/engine/schema/preset';
+
+import type { Dependencies } from '../dependencies';
+import { refuseNotAllowed, refuseNotFound, refuseStaleSave } from '../errors';
+import { hashToken, makeId, makeToken } from '../ids';
+import type { Person } from '../middleware/current-user';
+import type { Preset } from '../models/preset';
+import type { PresetVersion } from '../models/preset-version';
+import type { ShareLink } from '../models/share-link';
+import { demand, mayPlaceIn } from '../policies/preset-policy';
+import { populationsOf } from '../presenters/present-preset';
+import { checkDocument } from './check-document';
+
+export interface PresetAndVersion {
+  preset: Preset;
+  version: PresetVersion;
+}
+
+const WITH_NAMES = [{ association: 'owner' }, { association: 'lab' }];
+
+/** A preset that the person may see, with names; refused as absent otherwise. */
+export async function findPreset(
+  { database }: Dependencies,
+  id: string,
+  transaction?: Transaction,
+): Promise<Preset> {
+  const preset = await database.models.Preset.findOne({
+    where: { id, deletedAt: null },
+    include: WITH_NAMES,
+    ...(transaction ? { transaction } : {}),
+  });
+  if (preset === null) throw refuseNotFound();
+  return preset;
+}
+
+export async function findVersion(
+  { database }: Dependencies,
+  presetId: string,
+  number: number,
+  transaction?: Transaction,
+): Promise<PresetVersion> {
+  const version = await database.models.PresetVersion.findOne({
+    where: { presetId, number },
+    include: [{ association: 'author' }],
+    ...(transaction ? { transaction } : {}),
+  });
+  if (version === null) throw refuseNotFound('This preset has no version of that number.');
+  return version;
+}
+
+async function readBack(dependencies: Dependencies, id: string): Promise<PresetAndVersion> {
+  const preset = await findPreset(dependencies, id);
+  return { preset, version: await findVersion(dependencies, id, preset.headNumber) };
+}
+
+const shownFields = (document: PresetDocument) => ({
+  title: document.title,
+  summary: document.summary,
+  tagLines: document.tags.join('\n'),
+  populations: populationsOf(document),
+});
+
+async function replaceTags(
+  { database }: Dependencies,
+  presetId: string,
+  tags: readonly string[],
+  transaction: Transaction,
+) {
+  const { PresetTag } = database.models;
+  await PresetTag.destroy({ where: { presetId }, transaction });
+  const distinct = [...new Map(tags.map((tag) => [tag.toLowerCase(), tag])).values()];
+  if (distinct.length > 0) {
+    await PresetTag.bulkCreate(
+      distinct.map((tag) => ({ presetId, tag })),
+      { transaction },
+    );
+  }
+}
+
+export interface NewPreset {
+  document: PresetDocument;
+  note: string;
+  visibility: 'private' | 'lab';
+  labId: string | null;
+}
+
+export async function createPreset(
+  dependencies: Dependencies,
+  person: Person,
+  { document, note, visibility, labId }: NewPreset,
+): Promise<PresetAndVersion> {
+  const placed = placement(person, visibility, labId);
+  const text = checkDocument(document);
+  const id = makeId();
+  const now = new Date();
+  const { Preset, PresetVersion } = dependencies.database.models;
+  await dependencies.database.change(async (transaction) => {
+    await Preset.create(
+      {
+        id,
+        ownerId: person.id,
+        ...placed,
+        ...shownFields(document),
+        headNumber: 1,
+        createdAt: now,
+        changedAt: now,
+      },
+      { transaction },
+    );
+    await PresetVersion.create(
+      { presetId: id, number: 1, document: text, note, authorId: person.id, savedAt: now },
+      { transaction },
+    );
+    await replaceTags(dependencies, id, document.tags, transaction);
+  });
+  return readBack(dependencies, id);
+}
+
+function placement(person: Person, visibility: 'private' | 'lab', labId: string | null) {
+  if (visibility === 'private') return { visibility, labId: null };
+  const lab = labId ?? (person.memberships.length === 1 ? (person.memberships[0]?.labId ?? null) : null);
+  if (lab === null || !person.memberships.some((one) => one.labId === lab)) {
+    throw refuseNotFound('You are in no lab of that name.');
+  }
+  if (!mayPlaceIn(person, lab))
+    throw refuseNotAllowed('Your role in this lab does not let you open presets to it.');
+  return { visibility, labId: lab };
+}
+
+interface Save {
+  document: PresetDocument;
+  note: string;
+  baseVersion: number;
+  restoredFrom?: number;
+}
+
+/** Adds a version on top of the one it began from; refused when another was saved in between. */
+export async function saveVersion(
+  dependencies: Dependencies,
+  person: Person,
+  id: string,
+  save: Save,
+): Promise<PresetAndVersion> {
+  const { Preset, PresetVersion } = dependencies.database.models;
+  const text = checkDocument(save.document);
+  await dependencies.database.change(async (transaction) => {
+    const preset = await findPreset(dependencies, id, transaction);
+    demand(person, save.restoredFrom === undefined ? 'save' : 'restore', preset);
+    if (preset.headNumber !== save.baseVersion) {
+      const head = await findVersion(dependencies, id, preset.headNumber, transaction);
+      throw refuseStaleSave({
+        number: head.number,
+        author: head.author?.name ?? 'Someone',
+        savedAt: head.savedAt.toISOString(),
+        note: head.note,
+      });
+    }
+    const number = preset.headNumber + 1;
+    const now = new Date();
+    await PresetVersion.create(
+      {
+        presetId: id,
+        number,
+        document: text,
+        note: save.note,
+        authorId: person.id,
+        restoredFrom: save.restoredFrom ?? null,
+        savedAt: now,
+      },
+      { transaction },
+    );
+    await Preset.update(
+      { ...shownFields(save.document), headNumber: number, changedAt: now },
+      { where: { id }, transaction },
+    );
+    await replaceTags(dependencies, id, save.document.tags, transaction);
+  });
+  return readBack(dependencies, id);
+}
+
+/** A new version equal to an old one. */
+export async function restoreVersion(
+  dependencies: Dependencies,
+  person: Person,
+  id: string,
+  number: number,
+  { note, baseVersion }: { note: string; baseVersion: number },
+): Promise<PresetAndVersion> {
+  demand(person, 'restore', await findPreset(dependencies, id));
+  const old = await findVersion(dependencies, id, number);
+  return saveVersion(dependencies, person, id, {
+    document: JSON.parse(old.document) as PresetDocument,
+    note: note || `Restored from version ${number}`,
+    baseVersion,
+    restoredFrom: number,
+  });
+}
+
+/** A copy of a version, private to the one who makes it. */
+export async function copyDocument(
+  dependencies: Dependencies,
+  person: Person,
+  source: PresetVersion,
+  title: string,
+): Promise<PresetAndVersion> {
+  const document = JSON.parse(source.document) as PresetDocument;
+  const named = { ...document, title: (title || `${document.title}, copy`).slice(0, LIMITS.titleLength) };
+  const note = `Copied from “${document.title}”, version ${source.number}`.slice(0, LIMITS.noteLength);
+  return createPreset(dependencies, person, { document: named, note, visibility: 'private', labId: null });
+}
+
+export async function changeVisibility(
+  dependencies: Dependencies,
+  person: Person,
+  id: string,
+  { visibility, labId }: { visibility: 'private' | 'lab'; labId: string | null },
+): Promise<PresetAndVersion> {
+  const preset = await findPreset(dependencies, id);
+  demand(person, 'change visibility', preset);
+  const placed = placement(person, visibility, labId);
+  await dependencies.database.write(() =>
+    dependencies.database.models.Preset.update(placed, { where: { id } }),
+  );
+  return readBack(dependencies, id);
+}
+
+/** Takes a preset out of sight; its versions stay in the file. Its links stop working. */
+export async function deletePreset(dependencies: Dependencies, person: Person, id: string): Promise<void> {
+  demand(person, 'delete', await findPreset(dependencies, id));
+  const { Preset } = dependencies.database.models;
+  await dependencies.database.write(() => Preset.update({ deletedAt: new Date() }, { where: { id } }));
+}
+
+export async function createLink(
+  dependencies: Dependencies,
+  person: Person,
+  presetId: string,
+  label: string,
+): Promise<{ link: ShareLink; token: string }> {
+  demand(person, 'share by link', await findPreset(dependencies, presetId));
+  const token = makeToken();
+  const { ShareLink } = dependencies.database.models;
+  const link = await dependencies.database.write(() =>
+    ShareLink.create({
+      id: makeId(),
+      presetId,
+      tokenHash: hashToken(token),
+      label,
+      createdById: person.id,
+      createdAt: new Date(),
+    }),
+  );
+  return { link, token };
+}
+
+export async function revokeLink(
+  dependencies: Dependencies,
+  person: Person,
+  presetId: string,
+  linkId: string,
+): Promise<void> {
+  demand(person, 'share by link', await findPreset(dependencies, presetId));
+  const { ShareLink } = dependencies.database.models;
+  const link = await ShareLink.findOne({ where: { id: linkId, presetId } });
+  if (link === null) throw refuseNotFound('This preset has no such link.');
+  if (link.revokedAt !== null) return;
+  await dependencies.database.write(() =>
+    ShareLink.update({ revokedAt: new Date() }, { where: { id: linkId } }),
+  );
+}
+
+/** What a link opens: the head version, as long as neither link nor preset is gone. */
+export async function openLink(
+  dependencies: Dependencies,
+  token: string,
+): Promise<PresetAndVersion & { link: ShareLink }> {
+  const gone = refuseNotFound('This link opens nothing: it was withdrawn, or its address is incomplete.');
+  const link = await dependencies.database.models.ShareLink.findOne({
+    where: { tokenHash: hashToken(token) },
+  });
+  if (link === null || link.revokedAt !== null) throw gone;
+  try {
+    return { link, ...(await readBack(dependencies, link.presetId)) };
+  } catch {
+    throw gone;
+  }
+}
+
+export async function countOpening({ database }: Dependencies, link: ShareLink): Promise<void> {
+  await database.write(() => database.models.ShareLink.increment('opened', { where: { id: link.id } }));
+}

@@ -1,0 +1,25 @@
+import { SequelizeStorage, Umzug } from 'umzug';
+
+import type { Database } from '../models/database';
+import { accountsAndLabs } from './001-accounts-and-labs';
+import type { Migration } from './migration';
+import { presetsAndLinks } from './002-presets-and-links';
+
+export const MIGRATIONS: readonly Migration[] = [accountsAndLabs, presetsAndLinks];
+
+/** Steps the schema forward (`up`) and back (`down`); each step is a transaction of its own. */
+export function createMigrator(database: Database) {
+  const runAll = (statements: readonly string[]) =>
+    database.change(async (transaction) => {
+      for (const statement of statements) await database.sequelize.query(statement, { transaction });
+    });
+  return new Umzug({
+    migrations: MIGRATIONS.map(({ name, up, down }) => ({
+      name,
+      up: () => runAll(up),
+      down: () => runAll(down),
+    })),
+    storage: new SequelizeStorage({ sequelize: database.sequelize, tableName: 'schema_migrations' }),
+    logger: undefined,
+  });
+}

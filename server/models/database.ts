@@ -1,0 +1,62 @@
+import type { Sequelize, Transaction } from 'sequelize';
+
+import { connectSqlite } from './connection';
+import { defineLab } from './lab';
+import { defineMembership } from './membership';
+import { definePasswordReset } from './password-reset';
+import { definePendingAccount } from './pending-account';
+import { definePreset } from './preset';
+import { definePresetTag } from './preset-tag';
+import { definePresetVersion } from './preset-version';
+import { defineSessionRecord } from './session-record';
+import { defineShareLink } from './share-link';
+import { TransactionQueue } from './transaction-queue';
+import { defineUser } from './user';
+
+function defineModels(sequelize: Sequelize) {
+  const models = {
+    User: defineUser(sequelize),
+    Lab: defineLab(sequelize),
+    Membership: defineMembership(sequelize),
+    PendingAccount: definePendingAccount(sequelize),
+    PasswordReset: definePasswordReset(sequelize),
+    SessionRecord: defineSessionRecord(sequelize),
+    Preset: definePreset(sequelize),
+    PresetVersion: definePresetVersion(sequelize),
+    PresetTag: definePresetTag(sequelize),
+    ShareLink: defineShareLink(sequelize),
+  };
+  models.Membership.belongsTo(models.User, { as: 'user', foreignKey: 'userId' });
+  models.Membership.belongsTo(models.Lab, { as: 'lab', foreignKey: 'labId' });
+  models.Preset.belongsTo(models.User, { as: 'owner', foreignKey: 'ownerId' });
+  models.Preset.belongsTo(models.Lab, { as: 'lab', foreignKey: 'labId' });
+  models.PresetVersion.belongsTo(models.User, { as: 'author', foreignKey: 'authorId' });
+  return models;
+}
+
+/** The SQLite file behind its models. Read through `models`; change only through `change` or `write`. */
+export class Database {
+  readonly sequelize: Sequelize;
+  readonly models: ReturnType<typeof defineModels>;
+  readonly queue = new TransactionQueue();
+
+  constructor(path: string) {
+    this.sequelize = connectSqlite(path);
+    this.models = defineModels(this.sequelize);
+  }
+
+  /** Runs `work` in a transaction of its own: all of it happens, or none. Give the transaction to each query. */
+  change<Result>(work: (transaction: Transaction) => Promise<Result>): Promise<Result> {
+    return this.queue.run(() => this.sequelize.transaction((transaction) => work(transaction)));
+  }
+
+  /** Runs one statement that changes something, outside a transaction but never beside one. */
+  write<Result>(statement: () => Promise<Result>): Promise<Result> {
+    return this.queue.run(statement);
+  }
+
+  async close(): Promise<void> {
+    await this.queue.idle();
+    await this.sequelize.close();
+  }
+}

@@ -1,0 +1,37 @@
+import { Router } from 'express';
+
+import { duplicatePresetSchema, type SharedBody } from '@/contract/presets';
+import type { PresetDocument } from '@/engine/schema/preset';
+
+import { copyDocument, countOpening, openLink } from '../commands/preset-commands';
+import type { Dependencies } from '../dependencies';
+import { requireSignedIn, signedIn } from '../middleware/current-user';
+import { parseBody } from '../middleware/parse';
+import { presentPreset, presentVersion } from '../presenters/present-preset';
+
+/** What links open, for anyone who has one. */
+export function sharedRoutes(dependencies: Dependencies): Router {
+  const router = Router();
+
+  router.get('/shared/:token', async (request, response) => {
+    const { link, preset, version } = await openLink(dependencies, String(request.params.token));
+    await countOpening(dependencies, link);
+    const body: SharedBody = {
+      title: preset.title,
+      owner: preset.owner?.name ?? '',
+      version: presentVersion(version),
+      document: JSON.parse(version.document) as PresetDocument,
+    };
+    response.json(body);
+  });
+
+  router.post('/shared/:token/copy', requireSignedIn, async (request, response) => {
+    const { version } = await openLink(dependencies, String(request.params.token));
+    // A link shows the head, whatever version is asked for.
+    const { title } = parseBody(request, duplicatePresetSchema);
+    const copy = await copyDocument(dependencies, signedIn(request), version, title);
+    response.status(201).json(presentPreset(signedIn(request), copy.preset, copy.version));
+  });
+
+  return router;
+}
