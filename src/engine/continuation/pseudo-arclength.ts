@@ -1,6 +1,15 @@
 import type { BranchEnd } from './contract';
 import type { Curve } from './curve';
-import { locateZero, pointAlong, type Located } from './locate';
+import { closeCrossings } from './close-crossings';
+import {
+  crossingOfPair,
+  crossingOfZero,
+  crossingsBetween,
+  realCrossings,
+  UPRIGHT,
+  type Crossing,
+} from './crossings';
+import { pointAlong } from './locate';
 import type { BranchPoint, Monitor } from './test-functions';
 
 /** Steps are in scaled arclength: 1 is the swept range, or the scale of a state. */
@@ -18,18 +27,6 @@ export const STEP_DEFAULTS = {
   /** Points in a row at one value of the parameter after which a branch is a line of equilibria. */
   upright: 24,
 } as const;
-
-export type CrossingKind = 'fold' | 'branch' | 'transversal' | 'Hopf' | 'zero';
-
-/** A special point between two points of a branch, before its normal form is known. */
-export interface Crossing {
-  readonly kind: CrossingKind;
-  /** Absent group that invades, for `transversal`; state that reaches zero, for `zero`. */
-  readonly which: number;
-  readonly located: Located;
-  /** Index of the accepted point before it, from the start of this direction. */
-  readonly index: number;
-}
 
 export interface Followed {
   readonly points: BranchPoint[];
@@ -84,8 +81,11 @@ export function* followBranch(
     const index = followed.points.length - 1;
     const zero = crossingOfZero(monitor, current, next, h, index);
     const limit = zero?.located.point ?? next;
-    followed.crossings.push(...crossingsBetween(monitor, current, limit, index));
+    const found = crossingsBetween(monitor, current, limit, index);
+    // Where a population vanishes the determinant does too; several at once leave it to rounding.
+    followed.crossings.push(...(zero ? found.filter((one) => one.kind !== 'branch') : found));
     const hopf = decided ? crossingOfPair(monitor, decided.point, limit, decided.index) : null;
+    if (hopf === null && zero === null && found.length === 0) closeCrossings(monitor, followed, next);
     if (hopf) followed.crossings.push(hopf);
     if (zero) {
       followed.crossings.push(zero);
@@ -143,9 +143,6 @@ export function* followBranch(
   return followed;
 }
 
-/** A tangent with a smaller share of the parameter stands upright. */
-const UPRIGHT = 1e-9;
-
 function within(crossing: Crossing, settings: FollowSettings): boolean {
   const { parameter } = crossing.located.point;
   const slack = 1e-9 * (settings.upper - settings.lower);
@@ -171,98 +168,6 @@ function tooCoarse(a: BranchPoint, b: BranchPoint, decided: BranchPoint | null, 
     if ((real === 1 ? change > 1 : change > 2) && h > 1e-5) return 'several crossings';
   }
   return null;
-}
-
-function changes(a: number, b: number): boolean {
-  return (a < 0 && b > 0) || (a > 0 && b < 0) || (a !== 0 && b === 0);
-}
-
-function foldBetween(a: BranchPoint, b: BranchPoint): boolean {
-  const size = Math.max(Math.abs(a.monitors.fold), Math.abs(b.monitors.fold));
-  return size > UPRIGHT && changes(a.monitors.fold, b.monitors.fold);
-}
-
-function realCrossings(a: BranchPoint, b: BranchPoint): number {
-  let count = foldBetween(a, b) ? 1 : 0;
-  if (changes(a.monitors.branch, b.monitors.branch)) count += 1;
-  a.monitors.transversal.forEach((value, g) => {
-    if (changes(value, b.monitors.transversal[g])) count += 1;
-  });
-  return count;
-}
-
-function crossingsBetween(monitor: Monitor, a: BranchPoint, b: BranchPoint, index: number): Crossing[] {
-  const tests: { kind: CrossingKind; which: number; test: (point: BranchPoint) => number }[] = [
-    { kind: 'fold', which: -1, test: (point) => point.monitors.fold },
-    { kind: 'branch', which: -1, test: (point) => point.monitors.branch },
-    ...monitor.absent.map((_, g) => ({
-      kind: 'transversal' as const,
-      which: g,
-      test: (point: BranchPoint) => point.monitors.transversal[g],
-    })),
-  ];
-  const found: Crossing[] = [];
-  for (const { kind, which, test } of tests) {
-    if (kind === 'fold' ? !foldBetween(a, b) : !changes(test(a), test(b))) continue;
-    const located = locateZero(monitor, a, b, planeDistance(a, b), test);
-    if (located) found.push({ kind, which, located, index });
-  }
-  return found;
-}
-
-/** Scaled arclength from a to b, on the planes across the tangent of a. */
-function planeDistance(a: BranchPoint, b: BranchPoint): number {
-  let along = 0;
-  for (let k = 0; k < a.w.length; k += 1) along += a.tangent[k] * (b.w[k] - a.w[k]);
-  return along;
-}
-
-function crossingOfZero(
-  monitor: Monitor,
-  a: BranchPoint,
-  b: BranchPoint,
-  h: number,
-  index: number,
-): Crossing | null {
-  const { lowest, lowestState } = b.monitors;
-  if (!(lowest < 0)) return null;
-  const slot = monitor.curve.active.indexOf(lowestState);
-  if (!(a.w[slot] > 0)) return null;
-  const located = locateZero(monitor, a, b, h, (point) => point.w[slot]);
-  return located && { kind: 'zero', which: lowestState, located, index };
-}
-
-/** A pair that crosses the imaginary axis: two more growing, or two fewer, without a real crossing between. */
-function crossingOfPair(monitor: Monitor, a: BranchPoint, b: BranchPoint, index: number): Crossing | null {
-  if (b.monitors.undecided > 0) return null;
-  const change = b.monitors.growing - a.monitors.growing;
-  if (Math.abs(change) !== 2 || realCrossings(a, b) > 0) return null;
-  const located = locatePair(monitor, a, b, a.monitors.growing);
-  return located && { kind: 'Hopf', which: -1, located, index };
-}
-
-const BISECTIONS = 6;
-
-/** Brackets the crossing by counting growing eigenvalues, then finds the zero of the pair's real part. */
-function locatePair(monitor: Monitor, a: BranchPoint, b: BranchPoint, growing: number): Located | null {
-  let low = 0;
-  let high = planeDistance(a, b);
-  for (let k = 0; k < BISECTIONS; k += 1) {
-    const middle = (low + high) / 2;
-    const point = pointAlong(monitor, a, middle);
-    if (point === null) return null;
-    if (point.monitors.undecided > 0) break;
-    if (point.monitors.growing === growing) low = middle;
-    else high = middle;
-  }
-  const from = low === 0 ? a : pointAlong(monitor, a, low);
-  const to = pointAlong(monitor, a, high);
-  if (from === null || to === null) return null;
-  const realPart = (point: BranchPoint): number => {
-    if (!monitor.curve.evaluate(point.w) || !monitor.spectrum.update(monitor.curve.jacobian)) return NaN;
-    return monitor.spectrum.nearestPair().re;
-  };
-  return locateZero(monitor, from, to, planeDistance(from, to), realPart);
 }
 
 /** The point of the branch at a given value of the parameter, between or next to two points. */

@@ -51,6 +51,13 @@ export class Spectrum {
     return this.n > 0 ? this.re[0] : -Infinity;
   }
 
+  /** Real part of the eigenvalue nearest to the imaginary axis; NaN where there are none. */
+  get nearest(): number {
+    let best = NaN;
+    for (let i = 0; i < this.n; i += 1) if (!(Math.abs(this.re[i]) >= Math.abs(best))) best = this.re[i];
+    return best;
+  }
+
   /** 1 attracts, 0 repels, 2 not told from neutral. */
   get attracts(): 0 | 1 | 2 {
     if (this.growing > 0) return 0;
@@ -59,7 +66,8 @@ export class Spectrum {
 
   /** Index into BRANCH_TYPES. */
   get typeIndex(): number {
-    const spiral = this.growing > 0 ? this.spiralAmong(true) : this.spiralAmong(false);
+    // The leading eigenvalues stand first.
+    const spiral = this.n > 0 && this.im[0] !== 0;
     if (this.growing === 0) return this.undecided > 0 ? 6 : spiral ? 1 : 0;
     if (this.shrinking > 0 || this.undecided > 0) return this.hasPair() ? 5 : 4;
     return spiral ? 3 : 2;
@@ -73,11 +81,6 @@ export class Spectrum {
         best = { re: this.re[i], im: this.im[i] };
     }
     return best;
-  }
-
-  /** Whether the leading eigenvalues, of the growing or of all, form a pair. */
-  private spiralAmong(_growing: boolean): boolean {
-    return this.n > 0 && this.im[0] !== 0;
   }
 
   private hasPair(): boolean {

@@ -21,6 +21,8 @@ export interface Monitors {
   readonly lowestState: number;
   readonly growing: number;
   readonly undecided: number;
+  /** Real part of the eigenvalue nearest to the imaginary axis. */
+  readonly nearest: number;
 }
 
 /** One accepted point of a branch. */
@@ -85,6 +87,7 @@ export class Monitor {
       lowestState,
       growing: spectrum.growing,
       undecided: spectrum.undecided,
+      nearest: spectrum.nearest,
     };
   }
 
