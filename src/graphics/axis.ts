@@ -16,7 +16,7 @@ export interface AxisScale {
 }
 
 export function axisLabel(axis: { readonly name: string; readonly unit: string }): string {
-  return axis.unit ? `${axis.name} (${axis.unit})` : axis.name;
+  return axis.unit && axis.unit !== '1' ? `${axis.name} (${axis.unit})` : axis.name;
 }
 
 /** Maps the domain to pixels; values without a logarithm become NaN. */

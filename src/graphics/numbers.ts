@@ -1,6 +1,7 @@
 /** Numbers for people: significant digits, true minus signs, powers of ten written out. */
 
 const MINUS = '\u2212';
+const ROUNDING_DUST = 1e-12;
 const SUPERSCRIPTS = '⁰¹²³⁴⁵⁶⁷⁸⁹';
 
 function superscript(exponent: number): string {
@@ -38,7 +39,9 @@ export function formatShort(value: number, digits = 6): string {
 /** A complex number, or a pair of conjugates when `pair`. */
 export function formatComplex(re: number, im: number, pair = false, digits = 4): string {
   if (im === 0) return formatNumber(re, digits);
+  // Dust of rounding beside the imaginary part is no digit that can be relied on.
+  const real = Math.abs(re) < ROUNDING_DUST * Math.abs(im) ? 0 : re;
   const size = `${formatNumber(Math.abs(im), digits)}i`;
   const joint = pair ? '±' : im < 0 ? MINUS : '+';
-  return `${formatNumber(re, digits)} ${joint} ${size}`;
+  return `${formatNumber(real, digits)} ${joint} ${size}`;
 }

@@ -78,7 +78,7 @@ export function EquilibriumCard({ equilibrium, model, stateNames, twin = false }
         <Chip tone={tone(equilibrium.attracts)}>{equilibrium.type}</Chip>
         <Chip>{equilibrium.feasible ? 'feasible' : 'not feasible'}</Chip>
         {equilibrium.invasions.map((one) => (
-          <Chip key={one.population} tone={one.answer === 'can invade' ? 'bad' : 'plain'}>
+          <Chip key={one.population}>
             <span title={one.reason}>
               {invasionWords(model.populations, one)}
               {one.growthRate !== null ? ` (${formatNumber(one.growthRate, 3)})` : ''}

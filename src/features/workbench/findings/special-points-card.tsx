@@ -43,13 +43,11 @@ function HeaderCell({
     >
       <button
         type="button"
-        className="rounded px-0.5 font-medium text-muted hover:text-ink"
+        className="rounded font-medium whitespace-nowrap text-muted hover:text-ink"
         onClick={() => onSort({ key: column.key, descending: active && !order.descending })}
       >
         {column.label}
-        <span aria-hidden className="inline-block w-3 text-center">
-          {active ? (order.descending ? '↓' : '↑') : ''}
-        </span>
+        {active ? <span aria-hidden>{order.descending ? '↓' : '↑'}</span> : null}
       </button>
     </th>
   );
@@ -57,11 +55,13 @@ function HeaderCell({
 
 function Row({
   row,
+  withTwin,
   range,
   selected,
   onChoose,
 }: {
   readonly row: SpecialPointRow;
+  readonly withTwin: boolean;
   readonly range: number;
   readonly selected: boolean;
   readonly onChoose: () => void;
@@ -90,10 +90,14 @@ function Row({
           </button>
         </th>
         <td className="figures py-1 pl-1.5 text-right whitespace-nowrap">{value(row.split)}</td>
-        <td className="figures py-1 pl-1.5 text-right whitespace-nowrap text-muted">{value(row.twin)}</td>
-        <td className="figures py-1 pl-1.5 text-right whitespace-nowrap">
-          {row.shift === null ? '' : `${row.shift > 0 ? '+' : ''}${formatNumber(row.shift, 3)}`}
-        </td>
+        {withTwin ? (
+          <>
+            <td className="figures py-1 pl-1.5 text-right whitespace-nowrap text-muted">{value(row.twin)}</td>
+            <td className="figures py-1 pl-1.5 text-right whitespace-nowrap">
+              {row.shift === null ? '' : `${row.shift > 0 ? '+' : ''}${formatNumber(row.shift, 3)}`}
+            </td>
+          </>
+        ) : null}
       </tr>
       {selected && row.split ? (
         <tr className="bg-panel">
@@ -137,6 +141,7 @@ export function SpecialPointsCard() {
   const [order, setOrder] = useState<SortOrder>({ key: 'split', descending: false });
   const rows = useMemo(() => (sweep ? sortRows(specialPointRows(sweep), order) : []), [sweep, order]);
   if (!sweep) return null;
+  const columns = sweep.twin ? COLUMNS : COLUMNS.slice(0, 2);
   const name = parameterName(model, sweep.split.parameterKey).name;
   return (
     <Card title="Special points" aside={<span className="text-sm text-muted">along {name}</span>}>
@@ -153,7 +158,7 @@ export function SpecialPointsCard() {
         <table className="w-full border-collapse text-sm">
           <thead>
             <tr>
-              {COLUMNS.map((column) => (
+              {columns.map((column) => (
                 <HeaderCell key={column.key} column={column} order={order} onSort={setOrder} />
               ))}
             </tr>
@@ -163,6 +168,7 @@ export function SpecialPointsCard() {
               <Row
                 key={row.id}
                 row={row}
+                withTwin={sweep.twin !== null}
                 range={Math.abs(sweep.split.to - sweep.split.from)}
                 selected={row.split !== null && row.split.id === selected}
                 onChoose={() => row.split && moveToPoint(store, row.split)}

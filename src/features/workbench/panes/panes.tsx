@@ -50,7 +50,7 @@ function PaneGrid() {
     return (
       <div className="grid gap-3">
         {panes.map((_pane, index) => (
-          <div key={index} className="h-80">
+          <div key={index} className="h-96">
             {cell(index)}
           </div>
         ))}

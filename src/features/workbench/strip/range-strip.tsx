@@ -33,7 +33,7 @@ function SweepFacts() {
   const milliseconds = useWorkbench((state) => state.sweep?.split.milliseconds ?? null);
   if (points === null || milliseconds === null) return null;
   return (
-    <span className="text-sm whitespace-nowrap text-muted">
+    <span className="text-sm whitespace-nowrap text-muted max-sm:hidden">
       {points.toLocaleString('en-GB')} points, {Math.round(milliseconds)} ms
     </span>
   );
@@ -60,7 +60,7 @@ export function RangeStrip() {
           <div className="order-none flex min-w-0 flex-1 basis-80 items-center px-2">
             <StripTrack selection={selection} />
           </div>
-          <div className="flex flex-wrap items-center gap-2">
+          <div className="flex flex-wrap items-center gap-2 max-sm:hidden">
             <RangeField
               key={`from:${selection.parameter}`}
               label="from"

@@ -21,6 +21,8 @@ const KEYS: Readonly<Record<string, number>> = {
   PageUp: 10,
 };
 
+const NAME_SIDES = { start: '-translate-x-1', middle: '-translate-x-1/2', end: '-translate-x-full' } as const;
+
 function useWidth() {
   const element = useRef<HTMLDivElement>(null);
   const [width, setWidth] = useState(600);
@@ -42,7 +44,7 @@ function Ticks({ selection, width }: { readonly selection: SweepSelection; reado
     ...sweep.split.specialPoints.map((point) => ({ point, twin: false })),
     ...(withTwin ? (sweep.twin?.specialPoints ?? []) : []).map((point) => ({ point, twin: true })),
   ];
-  return placeTicks(points, selection.from, selection.to, width).map(({ point, twin, at, row }) => (
+  return placeTicks(points, selection.from, selection.to, width).map(({ point, twin, at, row, side }) => (
     <span
       key={`${twin ? 'twin' : 'own'}${point.id}`}
       className="absolute top-0"
@@ -56,7 +58,8 @@ function Ticks({ selection, width }: { readonly selection: SweepSelection; reado
         row === null ? null : (
           <span
             className={joinClasses(
-              'absolute -translate-x-1/2 text-xs whitespace-nowrap text-muted',
+              'absolute text-xs whitespace-nowrap text-muted',
+              NAME_SIDES[side],
               row === 0 ? 'top-4' : 'top-0',
             )}
           >
@@ -69,7 +72,8 @@ function Ticks({ selection, width }: { readonly selection: SweepSelection; reado
           aria-label={`Go to ${point.kind} at ${formatShort(point.parameter, 5)}`}
           title={`${point.kind} at ${formatShort(point.parameter, 5)}. ${point.meaning}`}
           className={joinClasses(
-            'absolute -translate-x-1/2 rounded text-xs font-medium whitespace-nowrap hover:underline',
+            'absolute rounded text-xs font-medium whitespace-nowrap hover:underline',
+            NAME_SIDES[row === null ? 'middle' : side],
             row === null ? 'top-8 h-5 w-3' : row === 0 ? 'top-4' : 'top-0',
           )}
           onClick={() => moveToPoint(store, point)}

@@ -31,7 +31,9 @@ export interface DiagramLayout {
 const ROW = 150;
 const NODE_HEIGHT = 40;
 const COLUMN = 250;
-const MARGIN_X = 150;
+/** Room for an arrow at the side, and for each letter of its name. */
+const SIDE_ARROW = 46;
+const LETTER = 6.9;
 const MARGIN_Y = 70;
 /** Distance between the ends of several arrows at one side of a node. */
 const FAN = 22;
@@ -45,14 +47,19 @@ export function layoutDiagram(
     .map((population) => diagram.nodes.filter((node) => node.population === population.symbol))
     .filter((layer) => layer.length > 0);
   const widest = Math.max(1, ...layers.map((layer) => layer.length));
-  const width = 2 * MARGIN_X + widest * COLUMN;
+  const outside = diagram.arrows.filter((arrow) => arrow.from === null || arrow.to === null);
+  const margin = SIDE_ARROW + LETTER * outside.reduce((most, arrow) => Math.max(most, arrow.name.length), 8);
+  const nodeWidth = (label: string) => Math.max(90, label.length * 8 + 26);
+  const broadest = diagram.nodes.reduce((most, node) => Math.max(most, nodeWidth(node.label)), 90);
+  const column = Math.max(COLUMN, broadest + 2 * SIDE_ARROW);
+  const width = 2 * margin + (widest - 1) * column + broadest;
   const height = 2 * MARGIN_Y + Math.max(1, layers.length) * ROW - (ROW - NODE_HEIGHT);
   const nodes: PlacedNode[] = layers.flatMap((layer, level) =>
     layer.map((node, k) => ({
       ...node,
-      x: width / 2 + (k - (layer.length - 1) / 2) * COLUMN,
+      x: width / 2 + (k - (layer.length - 1) / 2) * column,
       y: height - MARGIN_Y - NODE_HEIGHT / 2 - level * ROW,
-      width: Math.max(90, node.label.length * 8 + 26),
+      width: nodeWidth(node.label),
     })),
   );
   const at = new Map(nodes.map((node) => [node.id, node]));

@@ -29,7 +29,7 @@ export function ProcessPane() {
   const influences = layout.arrows.find((one) => one.key === picked)?.influences ?? [];
   const hues = new Map(model.populations.map((one) => [one.symbol, one]));
   return (
-    <div className="min-h-0 flex-1 overflow-auto p-2">
+    <div className="grid min-h-0 flex-1 place-items-center overflow-auto p-2">
       <svg
         viewBox={`0 0 ${layout.width} ${layout.height}`}
         className="mx-auto block max-h-full w-full"

@@ -106,7 +106,7 @@ function axisTexts(
   cube: CubeScale,
   project: Projector,
   palette: Palette,
-  width: number,
+  { width, height }: { readonly width: number; readonly height: number },
 ): TextMark[] {
   return EDGES.flatMap((edge, k): TextMark[] => {
     const axis = spec.axes[k];
@@ -119,7 +119,7 @@ function axisTexts(
       return {
         kind: 'text',
         x: Math.max(half, Math.min(width - half, at.x)),
-        y: at.y,
+        y: Math.max(9, Math.min(height - 9, at.y)),
         text: words,
         size: 11.5,
         colour: palette.muted,
@@ -189,7 +189,7 @@ export function projectSpace(
       });
     }
   }
-  marks.push(...axisTexts(spec, cube, project, palette, size.width));
+  marks.push(...axisTexts(spec, cube, project, palette, size));
   for (const one of spec.points) {
     cube.toCube(...one.at, point);
     if (Math.max(Math.abs(point.x), Math.abs(point.y), Math.abs(point.z)) > 1.02) continue;
