@@ -1,19 +1,6 @@
 import type { ExplicitTableau } from './explicit-tableau';
 import type { MethodSetting, OneStepMethod } from './one-step-method';
-
-/** Nonzero weights of a row, and where the stages they belong to begin in the flat array of slopes. */
-interface SparseRow {
-  readonly offsets: Int32Array;
-  readonly weights: Float64Array;
-}
-
-function sparse(row: readonly number[], n: number): SparseRow {
-  const stages = row.flatMap((weight, j) => (weight === 0 ? [] : [j]));
-  return {
-    offsets: Int32Array.from(stages, (j) => j * n),
-    weights: Float64Array.from(stages, (j) => row[j]),
-  };
-}
+import { addWeighted, sparseRow, type SparseRow } from './sparse-row';
 
 /**
  * Explicit Runge-Kutta steps for any tableau, with dense output worked out when first asked for.
@@ -42,6 +29,7 @@ export class ExplicitRungeKutta implements OneStepMethod {
   private readonly slopes: Float64Array;
   private readonly k: readonly Float64Array[];
   private readonly stage: Float64Array;
+  private readonly error: Float64Array;
   /** Coefficients of the dense output, row after row. */
   private readonly dense: Float64Array;
   private readonly denseCount: number;
@@ -65,13 +53,13 @@ export class ExplicitRungeKutta implements OneStepMethod {
     this.smallestFactor = tableau.smallestFactor;
     this.largestFactor = tableau.largestFactor;
     this.stageCount = tableau.b.length;
-    this.rows = tableau.a.map((row) => sparse(row, n));
-    this.weights = sparse(tableau.b, n);
-    this.errorRow = sparse(tableau.error, n);
-    this.lowErrorRow = tableau.lowOrderError ? sparse(tableau.lowOrderError, n) : null;
+    this.rows = tableau.a.map((row) => sparseRow(row, n));
+    this.weights = sparseRow(tableau.b, n);
+    this.errorRow = sparseRow(tableau.error, n);
+    this.lowErrorRow = tableau.lowOrderError ? sparseRow(tableau.lowOrderError, n) : null;
     this.errorUsesEnd = tableau.error.length > this.stageCount;
-    this.denseStages = tableau.denseA.map((row) => sparse(row, n));
-    this.denseRows = tableau.dense.map((row) => sparse(row, n));
+    this.denseStages = tableau.denseA.map((row) => sparseRow(row, n));
+    this.denseRows = tableau.dense.map((row) => sparseRow(row, n));
     const stages = this.stageCount + 1 + tableau.denseA.length;
     const slopes = new Float64Array(stages * n);
     this.slopes = slopes;
@@ -79,6 +67,7 @@ export class ExplicitRungeKutta implements OneStepMethod {
     this.denseCount = tableau.dense.length + 3;
     this.dense = new Float64Array(this.denseCount * n);
     this.stage = new Float64Array(n);
+    this.error = new Float64Array(n);
     this.state = new Float64Array(n);
     this.previous = new Float64Array(n);
     this.proposal = new Float64Array(n);
@@ -163,37 +152,29 @@ export class ExplicitRungeKutta implements OneStepMethod {
 
   /** out = base + h sum of weight * slope. */
   private combine(row: SparseRow, base: Float64Array, h: number, out: Float64Array): void {
-    const { n, slopes } = this;
-    const { offsets, weights } = row;
-    const terms = offsets.length;
-    for (let i = 0; i < n; i += 1) {
-      let sum = 0;
-      for (let q = 0; q < terms; q += 1) sum += weights[q] * slopes[offsets[q] + i];
-      out[i] = base[i] + h * sum;
-    }
+    for (let i = 0; i < this.n; i += 1) out[i] = base[i];
+    addWeighted(row, h, this.slopes, this.n, out);
   }
 
-  /** Root mean square of an estimate over tolerance, over h. */
+  /** Root mean square of an estimate over tolerance. */
   private estimate(row: SparseRow): number {
-    const { n, slopes, state, proposal, setting } = this;
-    const { offsets, weights } = row;
-    const terms = offsets.length;
+    const { n, state, proposal, error } = this;
+    const { absoluteTolerance, relativeTolerance } = this.setting;
+    error.fill(0);
+    addWeighted(row, this.h, this.slopes, n, error);
     let squares = 0;
     for (let i = 0; i < n; i += 1) {
-      let sum = 0;
-      for (let q = 0; q < terms; q += 1) sum += weights[q] * slopes[offsets[q] + i];
       const size = Math.max(Math.abs(state[i]), Math.abs(proposal[i]));
-      const ratio = sum / (setting.absoluteTolerance + setting.relativeTolerance * size);
+      const ratio = error[i] / (absoluteTolerance + relativeTolerance * size);
       squares += ratio * ratio;
     }
     return Math.sqrt(squares / n);
   }
 
   private errorOverTolerance(): number {
-    const step = Math.abs(this.h);
-    const high = this.estimate(this.errorRow) * step;
+    const high = this.estimate(this.errorRow);
     if (!this.lowErrorRow) return high;
-    const low = this.estimate(this.lowErrorRow) * step;
+    const low = this.estimate(this.lowErrorRow);
     const squared = high * high + 0.01 * low * low;
     return squared === 0 ? 0 : (high * high) / Math.sqrt(squared);
   }
@@ -211,14 +192,9 @@ export class ExplicitRungeKutta implements OneStepMethod {
       dense[n + i] = h * k[0][i] - change;
       dense[2 * n + i] = 2 * change - h * (k[0][i] + k[stageCount][i]);
     }
-    for (let m = 0; m < this.denseRows.length; m += 1) {
-      const { offsets, weights } = this.denseRows[m];
-      for (let i = 0; i < n; i += 1) {
-        let sum = 0;
-        for (let q = 0; q < offsets.length; q += 1) sum += weights[q] * this.slopes[offsets[q] + i];
-        dense[(m + 3) * n + i] = h * sum;
-      }
-    }
+    dense.fill(0, 3 * n);
+    for (let m = 0; m < this.denseRows.length; m += 1)
+      addWeighted(this.denseRows[m], h, this.slopes, n, dense, (m + 3) * n);
     this.denseReady = true;
   }
 }

@@ -4,6 +4,9 @@ import type { MethodSetting, OneStepMethod } from './one-step-method';
 
 /** Aim a little below the tolerance, so that few steps are rejected. */
 const SAFETY = 0.9;
+/** Errors this far below the tolerance tell no more. */
+const SMALLEST_ERROR = 1e-14;
+const LOG_FLOOR = Math.log(1e-4);
 /** Cut after an attempt that left the finite numbers. */
 const NOT_FINITE_FACTOR = 0.1;
 /** So many stiff-looking steps without six easy ones between them count as stiffness. */
@@ -26,7 +29,7 @@ export class Stepper {
   steps = 0;
   rejected = 0;
   private h = 0;
-  private lastError = 1e-4;
+  private lastLogError = LOG_FLOOR;
   private stiffSteps = 0;
   private easySteps = 0;
   private finite = true;
@@ -54,7 +57,7 @@ export class Stepper {
     const { method } = this;
     this.time = t;
     this.previousTime = t;
-    this.lastError = 1e-4;
+    this.lastLogError = LOG_FLOOR;
     this.stiffSteps = 0;
     this.finite = method.begin(t, u);
     if (!this.finite || span === 0) return;
@@ -81,10 +84,12 @@ export class Stepper {
         this.time = clipped ? end : this.time + h;
         this.steps += 1;
         this.noteStiffness();
+        // SAFETY error^-exponent lastError^beta; the logarithm of the error serves the next step, too.
+        const logError = Math.log(Math.max(error, SMALLEST_ERROR));
         const factor = this.bound(
-          SAFETY * Math.max(error, 1e-14) ** -exponent * this.lastError ** method.controlBeta,
+          SAFETY * Math.exp(method.controlBeta * this.lastLogError - exponent * logError),
         );
-        this.lastError = Math.max(error, 1e-4);
+        this.lastLogError = Math.max(logError, LOG_FLOOR);
         const next = h * (rejectedHere ? Math.min(factor, 1) : factor);
         // A step cut short by the end says little against the step before it.
         this.h = clipped && Math.abs(next) < Math.abs(this.h) && error < 0.5 ? this.h : next;
