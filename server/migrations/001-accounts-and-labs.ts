@@ -9,12 +9,12 @@ export const accountsAndLabs: Migration = {
       email TEXT NOT NULL COLLATE NOCASE UNIQUE,
       passwordHash TEXT NOT NULL,
       demo INTEGER NOT NULL DEFAULT 0 CHECK (demo IN (0, 1)),
-      createdAt TEXT NOT NULL
+      createdAt DATETIME NOT NULL
     )`,
     `CREATE TABLE labs (
       id TEXT PRIMARY KEY NOT NULL,
       name TEXT NOT NULL,
-      createdAt TEXT NOT NULL
+      createdAt DATETIME NOT NULL
     )`,
     `CREATE TABLE memberships (
       userId TEXT NOT NULL REFERENCES users (id) ON DELETE CASCADE,
@@ -28,13 +28,13 @@ export const accountsAndLabs: Migration = {
       name TEXT NOT NULL,
       email TEXT NOT NULL COLLATE NOCASE,
       passwordHash TEXT NOT NULL,
-      expiresAt TEXT NOT NULL
+      expiresAt DATETIME NOT NULL
     )`,
     `CREATE INDEX pending_accounts_by_email ON pending_accounts (email)`,
     `CREATE TABLE password_resets (
       tokenHash TEXT PRIMARY KEY NOT NULL,
       userId TEXT NOT NULL REFERENCES users (id) ON DELETE CASCADE,
-      expiresAt TEXT NOT NULL
+      expiresAt DATETIME NOT NULL
     )`,
     `CREATE INDEX password_resets_by_user ON password_resets (userId)`,
     `CREATE TABLE sessions (
@@ -43,9 +43,9 @@ export const accountsAndLabs: Migration = {
       userId TEXT NOT NULL REFERENCES users (id) ON DELETE CASCADE,
       agent TEXT NOT NULL,
       data TEXT NOT NULL,
-      expires TEXT NOT NULL,
-      createdAt TEXT NOT NULL,
-      lastSeenAt TEXT NOT NULL
+      expires DATETIME NOT NULL,
+      createdAt DATETIME NOT NULL,
+      lastSeenAt DATETIME NOT NULL
     )`,
     `CREATE INDEX sessions_by_user ON sessions (userId)`,
     `CREATE INDEX sessions_by_expiry ON sessions (expires)`,

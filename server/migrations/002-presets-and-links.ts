@@ -12,11 +12,11 @@ export const presetsAndLinks: Migration = {
       title TEXT NOT NULL,
       summary TEXT NOT NULL,
       tagLines TEXT NOT NULL,
-      populations TEXT NOT NULL,
+      populations JSON NOT NULL,
       headNumber INTEGER NOT NULL CHECK (headNumber > 0),
-      createdAt TEXT NOT NULL,
-      changedAt TEXT NOT NULL,
-      deletedAt TEXT,
+      createdAt DATETIME NOT NULL,
+      changedAt DATETIME NOT NULL,
+      deletedAt DATETIME,
       CHECK ((starterKey IS NULL) = (ownerId IS NOT NULL)),
       CHECK ((starterKey IS NOT NULL) = (visibility = 'starter')),
       CHECK ((labId IS NOT NULL) = (visibility = 'lab'))
@@ -32,7 +32,7 @@ export const presetsAndLinks: Migration = {
       note TEXT NOT NULL,
       authorId TEXT REFERENCES users (id) ON DELETE RESTRICT,
       restoredFrom INTEGER,
-      savedAt TEXT NOT NULL,
+      savedAt DATETIME NOT NULL,
       PRIMARY KEY (presetId, number)
     )`,
     `CREATE TRIGGER preset_versions_never_change BEFORE UPDATE ON preset_versions
@@ -64,8 +64,8 @@ export const presetsAndLinks: Migration = {
       tokenHash TEXT NOT NULL UNIQUE,
       label TEXT NOT NULL,
       createdById TEXT NOT NULL REFERENCES users (id) ON DELETE RESTRICT,
-      createdAt TEXT NOT NULL,
-      revokedAt TEXT,
+      createdAt DATETIME NOT NULL,
+      revokedAt DATETIME,
       opened INTEGER NOT NULL DEFAULT 0
     )`,
     `CREATE INDEX share_links_by_preset ON share_links (presetId)`,
