@@ -1,5 +1,6 @@
 import { findEquilibriaPair } from '@/engine/explore/equilibria-pair';
 import { judgeModel, pairEquilibria } from '@/engine/explore/judge';
+import { answersUnderOtherMeans } from '@/engine/explore/other-means';
 import { sweepSplitAndTwin } from '@/engine/explore/split-sweep';
 import { integrateTo } from '@/engine/integrators/driver';
 import type { MethodName } from '@/engine/integrators/contract';
@@ -112,7 +113,10 @@ function runEquilibria(model: CompiledModel, task: TaskOf<'equilibria'>): Record
   const values = task.parameters ?? {};
   const p = model.valuesToParameters(values);
   const found = finish(findEquilibriaPair(model, values, { starts: [startsOf(model, task)] }));
-  const verdict = task.twin ? judgeModel(model, p, found, pairEquilibria(model, p, found)) : null;
+  const others = task.twin ? finish(answersUnderOtherMeans(model, values)) : [];
+  const verdict = task.twin
+    ? judgeModel(model, p, found, pairEquilibria(model, p, found), null, others)
+    : null;
   return {
     split: equilibriaJson(model.system, found.split),
     twin: task.twin && found.twin && model.twin.system ? equilibriaJson(model.twin.system, found.twin) : null,

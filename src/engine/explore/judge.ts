@@ -39,6 +39,7 @@ export interface JudgedSweeps {
  * The verdict at parameters p, from the equilibria known there and the sweeps made so far.
  *
  * @param pairs from `pairEquilibria` at the same parameters
+ * @param underOtherMeans from `answersUnderOtherMeans`, where that was worked out
  */
 export function judgeModel(
   model: CompiledModel,
@@ -46,6 +47,7 @@ export function judgeModel(
   found: EquilibriaPair | null,
   pairs: readonly EquilibriumPair[] | null,
   sweeps: JudgedSweeps | null = null,
+  underOtherMeans: VerdictInput['underOtherMeans'] = [],
 ): Verdict {
   const { document, report } = model;
   const spreadIndex = model.parameterIndex(SPREAD_KEY);
@@ -58,6 +60,7 @@ export function judgeModel(
     timeUnit: document.timeUnit,
     split: found?.split ?? null,
     pooled: found?.twin ?? null,
+    underOtherMeans,
     ...(pairs ? { pairs } : {}),
     ...(sweeps ? { splitSweep: sweeps.split, pooledSweep: sweeps.twin } : {}),
     ...(swept ? { parameterLabel: swept.label, parameterUnit: swept.unit } : {}),

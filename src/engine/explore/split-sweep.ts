@@ -5,6 +5,7 @@ import type { CompiledSystem } from '../system/contract';
 import type { EquilibriaPair, SplitSweepResult, SweepRequest } from './contract';
 import { findEquilibriaPair, splitBox, twinBox } from './equilibria-pair';
 import { judgeModel, pairEquilibria } from './judge';
+import { answersUnderOtherMeans, type OtherMean } from './other-means';
 import { startsOf } from './trajectories';
 
 export interface SplitSweepOptions {
@@ -44,10 +45,14 @@ export function* sweepSplitAndTwin(
   // begin, since pairing moves the parameters of the split system.
   const found = yield* pairAtPresent(model, request, options);
   const pairs = pairEquilibria(model, p, found);
-  const combine = (split: SweepResult, twin: SweepResult | null): SplitSweepResult => ({
+  const combine = (
+    split: SweepResult,
+    twin: SweepResult | null,
+    others: readonly OtherMean[] = [],
+  ): SplitSweepResult => ({
     split,
     twin,
-    verdict: judgeModel(model, p, found, pairs, { parameter: request.parameter, split, twin }),
+    verdict: judgeModel(model, p, found, pairs, { parameter: request.parameter, split, twin }, others),
   });
   const split = yield* sweepOne(
     model.system,
@@ -66,7 +71,20 @@ export function* sweepSplitAndTwin(
     (partial) => combine(split, partial),
     [share, share],
   );
-  return combine(split, twin);
+  if (twin.status === 'cancelled') return combine(split, twin);
+  return combine(split, twin, yield* underOtherMeans(model, request));
+}
+
+function* underOtherMeans(
+  model: CompiledModel,
+  request: SweepRequest,
+): Generator<Progress<SplitSweepResult>, readonly OtherMean[]> {
+  const work = answersUnderOtherMeans(model, request.values);
+  for (;;) {
+    const next = work.next();
+    if (next.done) return next.value;
+    yield { fraction: 1, stage: 'the same under other means', partial: null };
+  }
 }
 
 function* pairAtPresent(

@@ -18,8 +18,9 @@ export const EQUAL_MARGINS = { relative: 1e-7, absolute: 1e-11 } as const;
 /** Compares stability at one equilibrium, pooled and split. Rates are per `timeUnit`. */
 export function comparePair(pair: EquilibriumPair, timeUnit: string): PairFinding {
   const { split, pooled } = pair;
-  const splitMargin = pair.dynamicLeading === null ? split.margin : -pair.dynamicLeading;
-  const pooledMargin = pooled?.margin ?? null;
+  const counted = pair.dynamicLeading === null ? split.margin : -pair.dynamicLeading;
+  const splitMargin = split.attracts === 'neutral' ? 0 : counted;
+  const pooledMargin = pooled?.attracts === 'neutral' ? 0 : (pooled?.margin ?? null);
   const say = (answer: VerdictAnswer, sentence: string): PairFinding => ({
     answer,
     sentence,

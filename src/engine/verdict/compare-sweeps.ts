@@ -34,9 +34,11 @@ export function compareSweeps(split: SweepResult, pooled: SweepResult): SweepCom
   values.sort((a, b) => a - b);
   const mine = values.map((value) => statusAt(split, value));
   const theirs = values.map((value) => statusAt(pooled, value));
+  const onlyIn = (a: SweepResult, b: SweepResult) => (value: number) =>
+    statusAt(a, value) === 'attracts' && statusAt(b, value) === 'does not attract';
   return {
-    gained: stretches(values, (k) => mine[k] === 'attracts' && theirs[k] === 'does not attract'),
-    lost: stretches(values, (k) => theirs[k] === 'attracts' && mine[k] === 'does not attract'),
+    gained: stretches(values, onlyIn(split, pooled)),
+    lost: stretches(values, onlyIn(pooled, split)),
     comparable: mine.some((one) => one !== 'none') && theirs.some((one) => one !== 'none'),
     shifts,
   };
@@ -69,16 +71,27 @@ function leadingAt(branch: Branch, value: number): number | null {
   return best;
 }
 
-function stretches(values: readonly number[], holds: (k: number) => boolean): Stretch[] {
+/** Stretches of a range where a condition holds, their ends bisected between samples. */
+function stretches(values: readonly number[], holds: (value: number) => boolean): Stretch[] {
   const found: { from: number; to: number }[] = [];
-  let open = false;
-  values.forEach((value, k) => {
-    if (!holds(k)) open = false;
-    else if (open) found[found.length - 1].to = value;
-    else {
-      found.push({ from: value, to: value });
-      open = true;
-    }
+  const held = values.map(holds);
+  held.forEach((now, k) => {
+    const before = k > 0 && held[k - 1];
+    if (now && !before)
+      found.push({ from: k === 0 ? values[0] : edge(holds, values[k - 1], values[k]), to: values[k] });
+    if (!now && before) found[found.length - 1].to = edge(holds, values[k], values[k - 1]);
+    else if (now) found[found.length - 1].to = values[k];
   });
   return found;
+}
+
+/** Where a condition begins to hold between a value where it does not and one where it does. */
+function edge(holds: (value: number) => boolean, outside: number, inside: number): number {
+  let [a, b] = [outside, inside];
+  for (let k = 0; k < 40; k += 1) {
+    const middle = (a + b) / 2;
+    if (holds(middle)) b = middle;
+    else a = middle;
+  }
+  return b;
 }

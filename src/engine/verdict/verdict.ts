@@ -37,9 +37,8 @@ export function judge(input: VerdictInput): Verdict {
   const findings = pairs.map((pair) => comparePair(pair, input.timeUnit));
   const comparison = sweepsOf(input);
   const here = findings.length === 0 ? missing(input) : together(findings);
-  const { answer, sentence } = alongTheSweep(input, here, comparison);
   return {
-    ...underMeans(input, answer, sentence),
+    ...underMeans(input, here, alongTheSweep(input, here, comparison)),
     evidence: [...equilibriumEvidence(pairs, findings, input.timeUnit), ...sweepEvidence(input, comparison)],
     ...context(input, pairs, comparison),
   };
@@ -158,41 +157,65 @@ function sweepsOf(input: VerdictInput): SweepComparison | null {
 /** Joins the answer at the present numbers with what the sweep shows along its range. */
 function alongTheSweep(input: VerdictInput, here: Answered, comparison: SweepComparison | null): Answered {
   if (comparison === null || !comparison.comparable) return here;
-  const name = input.parameterLabel ?? input.splitSweep?.parameterKey ?? 'the parameter';
   const { gained, lost } = comparison;
-  const inStretches = (list: SweepComparison['gained']): string =>
-    listed(
-      list.map(({ from, to }) =>
-        from === to ? `near ${inWords(from)}` : `from ${inWords(from)} to ${inWords(to)}`,
-      ),
-    );
   if (gained.length === 0 && lost.length === 0) return here;
-  const gain = `for ${name} ${inStretches(gained)} coexistence attracts only with the split`;
-  const loss = `for ${name} ${inStretches(lost)} it attracts only when pooled`;
+  const name = sweptName(input);
+  const range = input.splitSweep ?? { from: 0, to: 0 };
+  const gain = `for ${name} ${inStretches(gained, range)} coexistence attracts only with the split`;
+  const loss = `for ${name} ${inStretches(lost, range)} coexistence attracts only when pooled`;
   if (gained.length > 0 && lost.length > 0)
     return { answer: 'depends', sentence: `It depends on ${name}: ${gain}, ${loss}.` };
-  const helps = gained.length > 0;
-  const agrees: readonly VerdictAnswer[] = helps ? ['stabilises', 'stabilises partly'] : ['destabilises'];
-  const opposes: readonly VerdictAnswer[] = helps ? ['destabilises'] : ['stabilises', 'stabilises partly'];
-  const added = helps
-    ? `F${gain.slice(1)}.`
-    : `For ${name} ${inStretches(lost)} coexistence attracts only when pooled.`;
-  if (agrees.includes(here.answer)) return { answer: here.answer, sentence: `${here.sentence} ${added}` };
-  if (opposes.includes(here.answer) || here.answer === 'no effect found' || here.answer === 'depends')
-    return {
-      answer: 'depends',
-      sentence: `It depends on ${name}. At the present numbers: ${here.sentence} ${added}`,
-    };
-  return { answer: here.answer, sentence: `${here.sentence} Along the sweep: ${lowered(added)}` };
+  const added = `${capitalised(gained.length > 0 ? gain : loss)}.`;
+  const along = gained.length > 0 ? 1 : -1;
+  const now = directionOf(here.answer);
+  if (now === along) return { answer: here.answer, sentence: `${here.sentence} ${added}` };
+  if (now === null && here.answer !== 'depends')
+    return { answer: here.answer, sentence: `${here.sentence} Along the sweep: ${lowered(added)}` };
+  return {
+    answer: 'depends',
+    sentence: `It depends on ${name}. At the present numbers: ${lowered(here.sentence)} ${added}`,
+  };
 }
 
-function underMeans(input: VerdictInput, answer: VerdictAnswer, sentence: string): Answered {
-  const others = (input.underOtherMeans ?? []).filter((other) => other.answer !== answer);
-  if (others.length === 0) return { answer, sentence };
+/** 1 towards stability, -1 away from it, 0 neither; null where nothing was decided. */
+function directionOf(answer: VerdictAnswer): 1 | -1 | 0 | null {
+  if (answer === 'stabilises' || answer === 'stabilises partly') return 1;
+  if (answer === 'destabilises') return -1;
+  return answer === 'no effect found' ? 0 : null;
+}
+
+function sweptName(input: VerdictInput): string {
+  const label = input.parameterLabel ?? input.splitSweep?.parameterKey ?? 'parameter';
+  if (label.length <= 3 || label.includes(':')) return label;
+  return `the ${/^[A-Z][a-z]/.test(label) ? lowered(label) : label}`;
+}
+
+/** An end of a stretch this near to the end of the range, as a share of it, is called that end. */
+const NEAR_END = 1e-3;
+
+function inStretches(list: SweepComparison['gained'], range: { from: number; to: number }): string {
+  const near = NEAR_END * Math.abs(range.to - range.from);
+  const end = (value: number): string =>
+    inWords([range.from, range.to].find((side) => Math.abs(side - value) <= near) ?? value);
+  return listed(
+    list.map(({ from, to }) =>
+      end(from) === end(to) ? `near ${end(from)}` : `between ${end(from)} and ${end(to)}`,
+    ),
+  );
+}
+
+/** Turns the answer to `depends` where another mean would point the other way at the present numbers. */
+function underMeans(input: VerdictInput, here: Answered, whole: Answered): Answered {
+  const now = directionOf(here.answer);
+  const others = (input.underOtherMeans ?? []).filter((other) => {
+    const direction = directionOf(other.answer);
+    return now !== null && direction !== null && direction !== now;
+  });
+  if (others.length === 0) return whole;
   const against = listed(others.map((other) => `with the ${other.mean} held ${phrase(other.answer)}`));
   return {
     answer: 'depends',
-    sentence: `It depends on which mean is held: ${against}. With the means held now: ${sentence}`,
+    sentence: `It depends on which mean is held: ${against}. With the means held now: ${lowered(whole.sentence)}`,
   };
 }
 
@@ -216,9 +239,9 @@ function context(
         ]
       : []),
   ];
-  const other = (input.underOtherMeans ?? []).length > 0;
+  const others = input.underOtherMeans ?? [];
   const leavesOpen = [
-    ...(other || held === ''
+    ...(others.length > 0 || held === ''
       ? []
       : [
           `Whether the answer holds under another mean: now ${held} is held, and in saturating models the choice can turn the answer.`,
@@ -240,6 +263,10 @@ function partialSweep({ splitSweep, pooledSweep }: VerdictInput): boolean {
   return [splitSweep, pooledSweep].some(
     (one) => one !== null && one !== undefined && one.status !== 'complete',
   );
+}
+
+function capitalised(sentence: string): string {
+  return sentence.charAt(0).toUpperCase() + sentence.slice(1);
 }
 
 function lowered(sentence: string): string {
