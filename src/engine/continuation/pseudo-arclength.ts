@@ -136,7 +136,9 @@ export function* followBranch(
       followed.end = { reason: 'closed on itself', message: 'The branch closed on itself.' };
       return followed;
     }
-    h = Math.min(settings.largestStep, h * (bend(current, next) > 0.998 ? STEP_DEFAULTS.grow : 1));
+    // Far beyond its scale a state is followed in steps of its own size.
+    const largest = settings.largestStep * next.w.reduce((most, value) => Math.max(most, Math.abs(value)), 1);
+    h = Math.min(largest, h * (bend(current, next) > 0.998 ? STEP_DEFAULTS.grow : 1));
     current = next;
     yield followed.points.length;
   }

@@ -1,6 +1,7 @@
 import type { CompiledSystem } from '../system/contract';
 import type { HopfForm, SpecialPoint, SpecialPointKind } from './contract';
 import { firstLyapunovCoefficient } from './hopf-normal-form';
+import { kinkNear } from './kink-near';
 import { pointAlong } from './locate';
 import type { BranchPoint, Monitor } from './test-functions';
 
@@ -21,13 +22,13 @@ export function describeHopf(monitor: Monitor, at: BranchPoint): HopfForm | null
   if (pairIsOutside(monitor, omega)) return null;
   const crossingSpeed = speedOfCrossing(monitor, at);
   curve.evaluate(at.w);
-  if (!curve.system.smooth) {
+  if (kinkNear(curve.system, at.u, curve.active, curve.stateScale)) {
     return {
       omega,
       l1: null,
       criticality: 'withheld',
       crossingSpeed,
-      meaning: `Cycles of period near ${digits((2 * Math.PI) / omega)} begin here; whether they attract is withheld, because the model has a kink (min, max, abs or a conditional).`,
+      meaning: `Cycles of period near ${digits((2 * Math.PI) / omega)} begin here; whether they attract is withheld, because the model has a kink here (min, max, abs or a conditional) and no third derivative.`,
     };
   }
   const l1 = firstLyapunovCoefficient(curve.system, at.u, curve.jacobian, curve.active, omega);
@@ -120,7 +121,7 @@ export function makeSpecialPoint(monitor: Monitor, system: CompiledSystem, input
     eigenvalues: monitor.spectrum.list(),
     branch: input.branch,
     index: input.index,
-    accuracy: input.accuracy,
+    accuracy: Math.max(input.accuracy, Number.EPSILON),
     feasible: system.nonnegative.every(
       (needed, i) => !needed || at.u[i] >= -1e-7 * monitor.curve.stateScale[i],
     ),
@@ -128,6 +129,11 @@ export function makeSpecialPoint(monitor: Monitor, system: CompiledSystem, input
     invades: input.invades ?? [],
     meaning: input.hopf?.meaning ?? meaningOf(kind, input.invades ?? [], input.label),
   };
+}
+
+/** The same transcritical point with other invaders. */
+export function withInvaders(point: SpecialPoint, invades: readonly string[]): SpecialPoint {
+  return { ...point, invades, meaning: meaningOf(point.kind, invades, '') };
 }
 
 function meaningOf(kind: SpecialPointKind, invades: readonly string[], label: string): string {

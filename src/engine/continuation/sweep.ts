@@ -5,12 +5,12 @@ import type { CompiledSystem } from '../system/contract';
 import { integrateBand, repellingStretch } from './bands';
 import { assembleBranch, assembledIndex } from './branch-assembly';
 import { BranchSet } from './branch-set';
-import type { Band, Progress, SpecialPoint, SweepResult } from './contract';
+import type { Band, Branch, Progress, SpecialPoint, SweepResult } from './contract';
 import { refineBoundaryCrossing } from './boundary-crossing';
 import { Curve } from './curve';
 import type { Crossing } from './crossings';
 import { followBranch, STEP_DEFAULTS, type Followed } from './pseudo-arclength';
-import { describeHopf, makeSpecialPoint } from './special-points';
+import { describeHopf, makeSpecialPoint, withInvaders } from './special-points';
 import { invadingBranch, isPitchfork, secondDirection, stepAcross } from './switch-branch';
 import { Monitor, type AbsentGroup, type BranchPoint } from './test-functions';
 
@@ -66,6 +66,16 @@ interface Start {
   readonly w: Float64Array | null;
 }
 
+const NOT_ISOLATED =
+  'Some states that rest lie on a whole curve of such states at one value of the parameter; those cannot be followed.';
+const NOT_DIFFERENTIABLE =
+  'Some states that rest have no Jacobian, as where the last pair would have to meet; they are not drawn.';
+const NEUTRAL_STRETCH =
+  'Along a stretch a real part cannot be told from zero, so that the equilibrium is neutral or nearly so there; no Hopf point is claimed on it.';
+
+/** So many neighbouring points without decision are a stretch. */
+const STRETCH = 3;
+
 const NEEDS_PERIOD_MAP =
   'The formulas contain the time t, so that nothing rests: a sweep would need the period map, which this version does not compute.';
 
@@ -110,6 +120,8 @@ class SweepRun {
   private count = 0;
   private readonly began: number;
   private budgetSpent = false;
+  /** Sentences that the message of the result ends with. */
+  private readonly notes = new Set<string>();
 
   constructor(
     private readonly system: CompiledSystem,
@@ -148,8 +160,10 @@ class SweepRun {
         step = search.next();
       }
       for (const one of step.value.equilibria) {
-        if (one.feasible && one.type !== 'not differentiable')
-          found.push({ state: one.state, parameter: value });
+        if (!one.feasible) continue;
+        if (one.type === 'not isolated') this.notes.add(NOT_ISOLATED);
+        else if (one.type === 'not differentiable') this.notes.add(NOT_DIFFERENTIABLE);
+        else found.push({ state: one.state, parameter: value });
       }
     }
     this.chooseScale(found.map((one) => one.state));
@@ -219,6 +233,11 @@ class SweepRun {
   }
 
   private *followOne(start: Start, set: BranchSet): Generator<Progress<SweepResult>, void> {
+    // A corrector that slid onto a smaller face has found a branch of that face.
+    if (start.w !== null && this.activeOf(start.state).length < start.active.length) {
+      this.enqueue(start.state, start.parameter);
+      return;
+    }
     const curve = this.curveOn(start.active);
     const groups = this.groupsAbsent(start.active);
     const monitor = new Monitor(curve, groups);
@@ -360,7 +379,7 @@ class SweepRun {
     const group = monitor.absent[crossing.which];
     if (!monitor.curve.evaluate(at.w)) return;
     const { vector } = nullVector(monitor.block(crossing.which), group.states.length);
-    const active = [...monitor.curve.active, ...group.states].sort((a, b) => a - b);
+    const active = this.withFed([...monitor.curve.active, ...group.states]);
     const wide = this.curveOn(active);
     const w = invadingBranch(wide, at.u, at.parameter, group.states, vector);
     const mixed = vector.some((x) => x > 1e-9) && vector.some((x) => x < -1e-9);
@@ -376,6 +395,18 @@ class SweepRun {
       wide.load(w);
       this.queue.push({ state: wide.u.slice(), parameter: wide.parameterAt(w), active, w });
     }
+  }
+
+  /** Present states together with absent populations that they feed, so that the rest stays absent. */
+  private withFed(present: readonly number[]): number[] {
+    const states = this.system.stateSymbols.map((_, i) => i);
+    let active = [...present];
+    const rest = (): number[] => states.filter((i) => !active.includes(i));
+    while (!this.absenceLasts(rest())) {
+      const fed = rest().filter((i) => !this.absenceLasts([i]));
+      active = fed.length > 0 ? [...active, ...fed] : states;
+    }
+    return active.sort((a, b) => a - b);
   }
 
   private treatBranchPoint(monitor: Monitor, common: Place): void {
@@ -406,11 +437,7 @@ class SweepRun {
         known.state.every((value, i) => Math.abs(value - point.state[i]) < 1e-4 * this.stateScale[i]),
     );
     if (twin >= 0) {
-      const known = this.points[twin];
-      if (known.kind === 'branch point' || (known.kind === 'fold' && point.kind !== 'fold'))
-        this.points[twin] = point;
-      else if (known.kind === point.kind && point.invades.length > 0 && point.accuracy < known.accuracy)
-        this.points[twin] = point;
+      this.points[twin] = merged(this.points[twin], point);
       return;
     }
     this.points.push(point);
@@ -446,9 +473,12 @@ class SweepRun {
 
   summary(): string {
     const branches = this.set?.branches.length ?? 0;
-    if (branches === 0) return 'No equilibrium was found along the range.';
-    const spent = this.budgetSpent ? ' The point budget was spent, so that branches may be missing.' : '';
-    return `${branches} ${branches === 1 ? 'branch' : 'branches'}, ${this.count} points.${spent}`;
+    if (this.set?.branches.some(hasNeutralStretch)) this.notes.add(NEUTRAL_STRETCH);
+    const spent = this.budgetSpent ? ['The point budget was spent, so that branches may be missing.'] : [];
+    const count = branches === 1 ? '1 branch' : `${branches} branches`;
+    const told =
+      branches === 0 ? 'No equilibrium was followed along the range.' : `${count}, ${this.count} points.`;
+    return [told, ...spent, ...this.notes].join(' ');
   }
 
   result(status: SweepResult['status'], message: string): SweepResult {
@@ -468,4 +498,23 @@ class SweepRun {
       milliseconds: (options.clock?.() ?? 0) - this.began,
     };
   }
+}
+
+function hasNeutralStretch(branch: Branch): boolean {
+  let run = 0;
+  return branch.attracts.some((value, k) => {
+    run = value === 2 && branch.feasible[k] === 1 ? run + 1 : 0;
+    return run >= STRETCH;
+  });
+}
+
+/** Of two views of one point the more telling, and of equals the sharper; invaders of both. */
+function merged(known: SpecialPoint, point: SpecialPoint): SpecialPoint {
+  const tells = (one: SpecialPoint): number => ['fold', 'branch point'].indexOf(one.kind) + 1 || 3;
+  const better =
+    tells(point) > tells(known) || (tells(point) === tells(known) && point.accuracy < known.accuracy);
+  const kept = better ? point : known;
+  const other = better ? known : point;
+  const more = other.kind === kept.kind ? other.invades.filter((one) => !kept.invades.includes(one)) : [];
+  return more.length === 0 ? kept : withInvaders(kept, [...kept.invades, ...more]);
 }
