@@ -76,8 +76,8 @@ export function LibraryFilters({ query, page, onChange }: LibraryFiltersProps) {
     ['me', 'me'] as const,
     ...(page?.owners ?? []).map((owner) => [owner.id, owner.name] as const),
   ];
-  const tags = [
-    ['', 'any'] as const,
+  const tags: (readonly [string, string])[] = [
+    ['', 'any'],
     ...(page?.tags ?? []).map(({ tag, count }) => [tag, `${tag} (${count})`] as const),
   ];
   if (query.tag && !tags.some(([tag]) => tag === query.tag)) tags.push([query.tag, query.tag]);

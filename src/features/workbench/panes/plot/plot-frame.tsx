@@ -13,6 +13,7 @@ import { useTheme } from '@/lib/theme';
 import { useWorkbench, useWorkbenchStore } from '../../state/store';
 import type { ViewInput } from '../views/view-input';
 import { useShownModel } from '../use-shown-model';
+import { watchPictures } from '../watch-pictures';
 import { ExportDialog } from './export-dialog';
 import type { ExportSource } from './export-source';
 import { PlotHandles } from './plot-handles';
@@ -125,7 +126,7 @@ export function PlotFrame({ build, axes, onMoveHandle, onDrawn }: PlotFrameProps
       if (entry) view.resize(Math.floor(entry.contentRect.width), Math.floor(entry.contentRect.height));
     });
     observer.observe(frame.current);
-    const unsubscribe = store.subscribe(view.requestDraw);
+    const unsubscribe = watchPictures(store, 'handles', view.requestDraw);
     view.requestDraw();
     void document.fonts?.ready.then(view.requestDraw);
     return () => {

@@ -14,9 +14,11 @@ import type { ExportSource } from '../plot/export-source';
 import { PlotLegend } from '../plot/plot-legend';
 import { TableDialog } from '../plot/table-dialog';
 import { useShownModel } from '../use-shown-model';
+import { watchPictures } from '../watch-pictures';
 import { CAMERA_PRESETS, moveCameraByKey, presetPosition, type CameraPreset } from './camera-presets';
 import { projectSpace } from './project-space';
-import { SpaceScene, type SceneLink } from './space-scene';
+import { SceneLink } from './scene-link';
+import { SpaceScene } from './space-scene';
 import { spaceSpec, spaceTables, type SpaceSpec } from './space-spec';
 import { StartHandle } from './start-handle';
 
@@ -61,11 +63,7 @@ export default function SpacePane({ view, axes }: SpacePaneProps) {
   const theme = useTheme((state) => state.theme);
   const palette = PALETTES[theme];
   const overlay = useRef<HTMLCanvasElement>(null);
-  const [link] = useState<SceneLink>(() => ({
-    camera: null,
-    invalidate: () => undefined,
-    reset: () => undefined,
-  }));
+  const [link] = useState(() => new SceneLink());
   const [words, setWords] = useState<SpaceSpec | null>(null);
   const [dialog, setDialog] = useState<'export' | 'table' | null>(null);
   const shown = useRef<{ camera: Camera; spec: SpaceSpec } | null>(null);
@@ -75,7 +73,7 @@ export default function SpacePane({ view, axes }: SpacePaneProps) {
     () => ({ spec: spaceSpec(view, { state: store.getState(), model, palette, axes }), palette }),
     [view, store, model, palette, axes],
   );
-  const watch = useCallback((notify: () => void) => store.subscribe(notify), [store]);
+  const watch = useCallback((notify: () => void) => watchPictures(store, 'results', notify), [store]);
 
   const handleFrame = useCallback(
     (camera: Camera, spec: SpaceSpec) => {
@@ -108,14 +106,13 @@ export default function SpacePane({ view, axes }: SpacePaneProps) {
     if (hasWebgl() || !overlay.current) return;
     const canvas = overlay.current;
     const draw = () => {
-      link.camera ??= obliqueCamera(1, 1);
       handleFrame(cameraFor(link.camera, canvas.clientWidth || 1, canvas.clientHeight || 1), build().spec);
     };
-    link.invalidate = draw;
+    link.attach(link.camera ?? obliqueCamera(1, 1), draw);
     draw();
     const observer = new ResizeObserver(draw);
     observer.observe(canvas);
-    const unsubscribe = store.subscribe(draw);
+    const unsubscribe = watchPictures(store, 'results', draw);
     return () => {
       observer.disconnect();
       unsubscribe();
@@ -173,7 +170,7 @@ export default function SpacePane({ view, axes }: SpacePaneProps) {
           </div>
         ) : null}
         <canvas ref={overlay} aria-hidden className="pointer-events-none absolute inset-0 h-full w-full" />
-        {words?.start ? <StartHandle shown={shown} place={placeStart} /> : null}
+        {words?.start ? <StartHandle shownRef={shown} placeRef={placeStart} /> : null}
         {words?.empty ? (
           <div className="absolute inset-0 grid place-items-center rounded-md bg-raised p-6 text-center">
             <p className="max-w-sm text-muted">{words.empty}</p>

@@ -7,13 +7,8 @@ import type { Palette } from '@/graphics/palette';
 
 import { CAMERA_PRESETS } from './camera-presets';
 import { SceneLines } from './scene-lines';
+import type { SceneLink } from './scene-link';
 import type { SpaceSpec } from './space-spec';
-
-export interface SceneLink {
-  camera: Camera | null;
-  invalidate: () => void;
-  reset: () => void;
-}
 
 interface SceneProps {
   readonly build: () => { readonly spec: SpaceSpec; readonly palette: Palette };
@@ -34,8 +29,7 @@ function Lines({ build, watch, link, onFrame }: SceneProps) {
     invalidate();
   }, [lines, size, invalidate]);
   useEffect(() => {
-    link.camera = camera;
-    link.invalidate = () => invalidate();
+    link.attach(camera, () => invalidate());
     invalidate();
     return watch(() => invalidate());
   }, [watch, invalidate, camera, link]);
@@ -57,10 +51,10 @@ function Controls({ link }: { readonly link: SceneLink }) {
       maxDistance={20}
       onChange={() => invalidate()}
       ref={(controls) => {
-        link.reset = () => {
+        link.onCentre(() => {
           controls?.target.set(0, 0, 0);
           controls?.update();
-        };
+        });
       }}
     />
   );

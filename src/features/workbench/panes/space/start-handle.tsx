@@ -7,20 +7,20 @@ import { cubeProjector, cubeScale } from './project-space';
 import type { SpaceSpec } from './space-spec';
 
 interface StartHandleProps {
-  readonly shown: RefObject<{ camera: Camera; spec: SpaceSpec } | null>;
-  readonly place: RefObject<(() => void) | null>;
+  readonly shownRef: RefObject<{ camera: Camera; spec: SpaceSpec } | null>;
+  readonly placeRef: RefObject<(() => void) | null>;
 }
 
 /** Open ring at the start of the trajectory; dragging moves it in the plane that faces the viewer. */
-export function StartHandle({ shown, place }: StartHandleProps) {
+export function StartHandle({ shownRef, placeRef }: StartHandleProps) {
   const store = useWorkbenchStore();
   const ring = useRef<HTMLButtonElement>(null);
   const dragging = useRef(false);
 
   useEffect(() => {
-    place.current = () => {
+    placeRef.current = () => {
       const element = ring.current;
-      const { camera, spec } = shown.current ?? {};
+      const { camera, spec } = shownRef.current ?? {};
       const parent = element?.parentElement;
       if (!element || !camera || !spec?.start || !parent) return;
       const at = cubeScale(spec).toCube(...spec.start.at, new Vector3());
@@ -28,14 +28,14 @@ export function StartHandle({ shown, place }: StartHandleProps) {
       element.style.transform = `translate(${pixel.x}px, ${pixel.y}px)`;
       element.style.visibility = Number.isFinite(pixel.x + pixel.y) ? 'visible' : 'hidden';
     };
-    place.current();
+    placeRef.current();
     return () => {
-      place.current = null;
+      placeRef.current = null;
     };
-  }, [place, shown]);
+  }, [placeRef, shownRef]);
 
   function handleMove(event: PointerEvent<HTMLButtonElement>) {
-    const { camera, spec } = shown.current ?? {};
+    const { camera, spec } = shownRef.current ?? {};
     const box = event.currentTarget.parentElement?.getBoundingClientRect();
     if (!dragging.current || !camera || !spec?.start || !box) return;
     const cube = cubeScale(spec);

@@ -7,8 +7,9 @@ import { LEVA_THEME } from './leva-theme';
 import { setParameterValue } from './parameter-edits';
 import { ParameterRow } from './parameter-row';
 
+/** Leva hands on an input named `value` alone, without what stands beside it; hence `amount`. */
 interface RowInput {
-  readonly value: number;
+  readonly amount: number;
   readonly index: number;
 }
 
@@ -23,7 +24,7 @@ function LevaRow() {
 /** A number of leva's store, drawn as a row of ours. */
 const parameterRow = createPlugin<RowInput, number, { index: number }>({
   component: LevaRow,
-  normalize: ({ value, index }) => ({ value, settings: { index } }),
+  normalize: ({ amount, index }) => ({ value: amount, settings: { index } }),
   sanitize: (value: unknown) => Number(value),
 });
 
@@ -42,7 +43,7 @@ export default function LevaParameters() {
         parameters.map((parameter, index) => [
           parameter.symbol,
           {
-            ...parameterRow({ value: parameter.value, index }),
+            ...parameterRow({ amount: parameter.value, index }),
             onChange: (value: number, _path: string, context: { initial: boolean; fromPanel: boolean }) => {
               if (context.initial || !context.fromPanel) return;
               edit(
