@@ -21,6 +21,8 @@ type Status = 'attracts' | 'does not attract' | 'none';
 
 /** Values along the range at which both are compared, beside those between shifted special points. */
 const SAMPLES = 400;
+/** Ends of stretches this near to a located special point, as a share of the range, lie there. */
+const NEAR_POINT = 2e-3;
 /** Leading real parts this small are not counted as attracting. */
 const SMALLEST_RATE = 1e-10;
 
@@ -36,9 +38,14 @@ export function compareSweeps(split: SweepResult, pooled: SweepResult): SweepCom
   const theirs = values.map((value) => statusAt(pooled, value));
   const onlyIn = (a: SweepResult, b: SweepResult) => (value: number) =>
     statusAt(a, value) === 'attracts' && statusAt(b, value) === 'does not attract';
+  // Between the points of a branch real parts are interpolated; located special points are exact.
+  const located = [split, pooled].flatMap((sweep) => sweep.specialPoints.map((point) => point.parameter));
+  const exact = (value: number): number =>
+    located.find((point) => Math.abs(point - value) <= NEAR_POINT * Math.abs(to - from)) ?? value;
+  const atPoints = (stretch: Stretch): Stretch => ({ from: exact(stretch.from), to: exact(stretch.to) });
   return {
-    gained: stretches(values, onlyIn(split, pooled)),
-    lost: stretches(values, onlyIn(pooled, split)),
+    gained: stretches(values, onlyIn(split, pooled)).map(atPoints),
+    lost: stretches(values, onlyIn(pooled, split)).map(atPoints),
     comparable: mine.some((one) => one !== 'none') && theirs.some((one) => one !== 'none'),
     shifts,
   };

@@ -227,19 +227,22 @@ function context(
   const cautions = input.harvested ? [CAUTION] : [];
   if (pairs === null) return { restsOn: [], leavesOpen: [], cautions };
   const held = listed(input.twin.pooledTraits.map((trait) => `the ${trait.mean} mean of ${trait.trait}`));
+  const others = input.underOtherMeans ?? [];
   const restsOn = [
     input.twin.reason,
     ...(pairs.length > 0
       ? ['Eigenvalues at the coexistence equilibrium, each with a bound on its error.']
       : []),
     ...(input.pairs ? ['Split and pooled equilibria paired by following each along the spread dial.'] : []),
+    ...(others.length > 0
+      ? [`The same comparison with the ${listed(others.map((one) => one.mean))} held.`]
+      : []),
     ...(comparison
       ? [
           `Both sweeps of ${input.parameterLabel ?? input.splitSweep?.parameterKey ?? 'the parameter'}; special points paired by kind and place.`,
         ]
       : []),
   ];
-  const others = input.underOtherMeans ?? [];
   const leavesOpen = [
     ...(others.length > 0 || held === ''
       ? []
