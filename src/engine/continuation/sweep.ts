@@ -10,6 +10,7 @@ import { refineBoundaryCrossing } from './boundary-crossing';
 import { Curve } from './curve';
 import type { Crossing } from './crossings';
 import { followBranch, STEP_DEFAULTS, type Followed } from './pseudo-arclength';
+import { pointAlong } from './locate';
 import { describeHopf, makeSpecialPoint, withInvaders } from './special-points';
 import { invadingBranch, isPitchfork, secondDirection, stepAcross } from './switch-branch';
 import { Monitor, type AbsentGroup, type BranchPoint } from './test-functions';
@@ -72,6 +73,9 @@ const NOT_DIFFERENTIABLE =
   'Some states that rest have no Jacobian, as where the last pair would have to meet; they are not drawn.';
 const NEUTRAL_STRETCH =
   'Along a stretch a real part cannot be told from zero, so that the equilibrium is neutral or nearly so there; no Hopf point is claimed on it.';
+
+/** Distance, in scaled arclength, by which a start is moved off a special point. */
+const BESIDE_SPECIAL = 7.3e-4;
 
 /** So many neighbouring points without decision are a stretch. */
 const STRETCH = 3;
@@ -162,8 +166,9 @@ class SweepRun {
       for (const one of step.value.equilibria) {
         if (!one.feasible) continue;
         if (one.type === 'not isolated') this.notes.add(NOT_ISOLATED);
-        else if (one.type === 'not differentiable') this.notes.add(NOT_DIFFERENTIABLE);
-        else found.push({ state: one.state, parameter: value });
+        else if (one.type === 'not differentiable') {
+          if (one.absent.length > 0) this.notes.add(NOT_DIFFERENTIABLE);
+        } else found.push({ state: one.state, parameter: value });
       }
     }
     this.chooseScale(found.map((one) => one.state));
@@ -249,11 +254,13 @@ class SweepRun {
     }
     const tangent = new Float64Array(curve.m + 1);
     if (!curve.evaluate(w) || !curve.firstTangent(tangent)) return;
-    const forthStart = monitor.pointAt(w, tangent);
-    const backStart = monitor.pointAt(
-      w,
-      tangent.map((value) => -value),
-    );
+    const forthStart = this.besideSpecial(monitor, monitor.pointAt(w, tangent));
+    const backStart =
+      forthStart &&
+      monitor.pointAt(
+        forthStart.w,
+        forthStart.tangent.map((value) => -value),
+      );
     if (forthStart === null || backStart === null) return;
     const directions: Followed[] = [];
     for (const first of [backStart, forthStart]) {
@@ -293,6 +300,16 @@ class SweepRun {
         });
       }
     }
+  }
+
+  /** A start at a special point would hide it: its neighbour within the range serves instead. */
+  private besideSpecial(monitor: Monitor, start: BranchPoint | null): BranchPoint | null {
+    if (start === null || start.monitors.undecided === 0) return start;
+    for (const s of [BESIDE_SPECIAL, -BESIDE_SPECIAL]) {
+      const beside = pointAlong(monitor, start, s);
+      if (beside && beside.parameter > this.lower && beside.parameter < this.upper) return beside;
+    }
+    return start;
   }
 
   private isWhole(group: AbsentGroup): boolean {
