@@ -25,6 +25,8 @@ export const FACE_SEARCH_DEFAULTS = {
   carryEvery: 8,
   /** New roots that one deflated start may bring. */
   deflations: 3,
+  /** Rounds of starts on a face that keeps bringing new equilibria. */
+  rounds: 8,
   /** A free state below this share of its scale, whose absence lasts, counts as absent. */
   absentShare: 1e-9,
   /** A state below this share of its scale is rounding of zero. */
@@ -43,6 +45,8 @@ export class FaceSearch {
   private next = 0;
   private curvePoints = 0;
   private ownCount = 0;
+  private rounds = 1;
+  private foundAt = -1;
   private readonly queue: Float64Array[];
 
   constructor(
@@ -67,12 +71,21 @@ export class FaceSearch {
   private get total(): number {
     const m = this.face.free.length;
     if (m === 0) return 0;
-    return this.queue.length + (m === 1 ? 0 : this.options.starts);
+    return this.queue.length + (m === 1 ? 0 : this.options.starts * this.rounds);
+  }
+
+  /** Another round of starts where the last one still brought something new. */
+  private extend(): boolean {
+    const news = this.foundAt >= this.total - this.options.starts;
+    if (this.face.free.length < 2 || !news || this.ownCount < 2) return false;
+    if (this.rounds >= FACE_SEARCH_DEFAULTS.rounds) return false;
+    this.rounds += 1;
+    return true;
   }
 
   /** Does up to a slice of starts; false when the face is done. */
   advance(): boolean {
-    if (this.next >= this.total) return false;
+    if (this.next >= this.total && !this.extend()) return false;
     const last = Math.min(this.total, this.next + FACE_SEARCH_DEFAULTS.slice);
     const x = new Float64Array(this.face.free.length);
     for (; this.next < last; this.next += 1) {
@@ -80,7 +93,11 @@ export class FaceSearch {
       if (given) x.set(this.queue[this.next]);
       else startPoint(this.system, this.face, this.box, this.next - this.queue.length, this.options.seed, x);
       this.tryFrom(x, given);
-      if (this.ownCount > FACE_SEARCH_DEFAULTS.found) this.next = this.total;
+      if (this.ownCount > FACE_SEARCH_DEFAULTS.found) {
+        this.next = this.total;
+        this.foundAt = -1;
+        return true;
+      }
     }
     return true;
   }
@@ -162,6 +179,7 @@ export class FaceSearch {
       if (this.curvePoints > FACE_SEARCH_DEFAULTS.curvePoints) return false;
     }
     this.ownCount += 1;
+    this.foundAt = this.next;
     this.found.push(equilibrium);
     return true;
   }
