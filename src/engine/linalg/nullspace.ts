@@ -17,6 +17,7 @@ export function nullspace(
   cols: number,
   tolerance = NULL_TOLERANCE,
 ): Float64Array[] {
+  if (cols === 0) return [];
   // Padded with zero rows, since the decomposition wants at least as many rows as columns.
   const padded = Matrix.zeros(Math.max(rows, cols), cols);
   for (let i = 0; i < rows; i += 1)
