@@ -33,6 +33,8 @@ export function refineBoundaryCrossing(
     return monitor.pointAt(trial, across);
   };
   const first = parameter / curve.parameterScale;
+  const near = (point: BranchPoint): BranchPoint | null =>
+    curve.active.every((i) => Math.abs(point.u[i] - state[i]) < FAR * curve.stateScale[i]) ? point : null;
   let a = first;
   let b = first + FIRST;
   let before = at(a);
@@ -40,7 +42,7 @@ export function refineBoundaryCrossing(
   for (let k = 0; k < ITERATIONS && before && point; k += 1) {
     const ga: number = before.monitors.transversal[group];
     const gb: number = point.monitors.transversal[group];
-    if (gb === 0 || Math.abs(b - a) < TOLERANCE || ga === gb) return point;
+    if (gb === 0 || Math.abs(b - a) < TOLERANCE || ga === gb) return near(point);
     const next: number = b - (gb * (b - a)) / (gb - ga);
     if (!(Math.abs(next - first) < FAR)) return null;
     a = b;
@@ -48,5 +50,5 @@ export function refineBoundaryCrossing(
     b = next;
     point = at(b);
   }
-  return point;
+  return point && near(point);
 }

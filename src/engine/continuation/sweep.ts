@@ -238,6 +238,8 @@ class SweepRun {
   }
 
   private *followOne(start: Start, set: BranchSet): Generator<Progress<SweepResult>, void> {
+    // Entered beyond an end of the range, the branch is not seen within it.
+    if (start.parameter < this.lower || start.parameter > this.upper) return;
     // A corrector that slid onto a smaller face has found a branch of that face.
     if (start.w !== null && this.activeOf(start.state).length < start.active.length) {
       this.enqueue(start.state, start.parameter);
