@@ -20,6 +20,7 @@ export interface Eigenvalue {
 
 /** Whether an absent population can grow from low density, and how that was decided. */
 export interface Invasion {
+  /** Its symbol; several joined by ` and ` where they can only grow together. */
   readonly population: string;
   /** `not-invariant`: absence does not last (immigration), so the question does not arise. */
   readonly answer: 'can invade' | 'cannot invade' | 'undecided' | 'not-invariant';
@@ -27,6 +28,8 @@ export interface Invasion {
   readonly growthRate: number | null;
   readonly method: 'transversal block' | 'homogeneous growth rate' | 'none';
   readonly reason: string;
+  /** Shares of its classes, in the order of the state, at which it grows or declines in the long run. */
+  readonly composition?: readonly number[];
 }
 
 export interface Equilibrium {

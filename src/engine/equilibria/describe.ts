@@ -1,4 +1,4 @@
-import type { CompiledSystem } from '../system/contract';
+import type { CompiledSystem, StatePopulation } from '../system/contract';
 import { centreProven, type MotionConstant } from './centre-proven';
 import { classify, eigenvalueList, type Classification } from './classify';
 import { compositionJacobian } from './composition';
@@ -6,7 +6,7 @@ import type { Eigenvalue, Equilibrium, Invasion } from './contract';
 import { curveThrough } from './curve-through';
 import { differentiabilityAt } from './differentiability';
 import { faceProblem, wholeSpace, type Face } from './face-system';
-import { invasionOf } from './invasion';
+import { invasionOf, jointInvasion } from './invasion';
 import { dropState } from './face-system';
 import { relativeResidual } from './newton';
 import { jacobianUncertainty, spectrumOf, type Spectrum } from './spectrum';
@@ -63,10 +63,11 @@ export function describeEquilibrium(
     absent.flatMap((one) => [...one.states]),
     scale,
   );
+  if (atKink !== null && absent.length > 1) invasions.push(jointInvasion(system, absent, u));
   const spectrum = atKink === null ? spectrumOf(J, n, uncertainty) : null;
   const classification =
     spectrum === null
-      ? withoutDerivative(system, invasions, absent.length, atKink)
+      ? withoutDerivative(system, invasions, absent, atKink)
       : classify(spectrum, {
           provesNeutral: (re, im) => centreProven(options.constantsOfMotion?.() ?? [], u, J, re, im),
           isOnCurve: () => curveThrough(system, u, wholeSpace(system), J, scale),
@@ -107,12 +108,12 @@ function kinkAt(
 function withoutDerivative(
   system: CompiledSystem,
   invasions: readonly Invasion[],
-  absentCount: number,
+  absent: readonly StatePopulation[],
   reason: string | null,
 ): Classification {
   const grows = invasions.some((one) => one.answer === 'can invade');
   const allDecline =
-    absentCount === system.populations.length && invasions.every((one) => one.answer === 'cannot invade');
+    absent.length === system.populations.length && invasions.every((one) => one.answer === 'cannot invade');
   return {
     type: 'not differentiable',
     attracts: grows ? 'no' : allDecline ? 'yes' : 'unknown',

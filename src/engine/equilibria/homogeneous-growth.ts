@@ -73,23 +73,24 @@ function settle(
         reason: 'the per capita rates at vanishing density depend on the density itself',
       };
 
+  // Rates of loss and gain cancel where v settles, so the step keeps to the fastest rate met on the way.
+  let fastest = 0;
+  let share: number = HOMOGENEOUS_DEFAULTS.stepShare;
+  let before = Infinity;
   for (let k = 0; k < HOMOGENEOUS_DEFAULTS.iterations; k += 1) {
     if (!evaluate(WHISKER)) return notFinite();
     const growthRate = h.reduce((sum, x) => sum + x, 0);
-    let fastest = 0;
     for (let a = 0; a < m; a += 1)
       if (v[a] > 1e-12) fastest = Math.max(fastest, Math.abs(h[a]) / v[a], Math.abs(h[a]));
     if (fastest === 0) return { status: 'settled', growthRate: 0, composition: v };
-    const tau = HOMOGENEOUS_DEFAULTS.stepShare / fastest;
     let moved = 0;
-    for (let a = 0; a < m; a += 1) {
-      // Change of composition: h - (sum h) v, on the simplex sum v = 1.
-      const change = h[a] - growthRate * v[a];
-      moved = Math.max(moved, Math.abs(change) / fastest);
-      v[a] = Math.max(0, v[a] + tau * change);
-    }
-    v.set(normalised(v));
+    for (let a = 0; a < m; a += 1) moved = Math.max(moved, Math.abs(h[a] - growthRate * v[a]) / fastest);
     if (moved < HOMOGENEOUS_DEFAULTS.tolerance) return { status: 'settled', growthRate, composition: v };
+    if (moved > before) share /= 2;
+    before = moved;
+    // Change of composition: h - (sum h) v, on the simplex sum v = 1.
+    for (let a = 0; a < m; a += 1) v[a] = Math.max(0, v[a] + (share / fastest) * (h[a] - growthRate * v[a]));
+    v.set(normalised(v));
   }
   return { status: 'not-settled', reason: 'the composition at low density does not settle' };
 }

@@ -43,18 +43,8 @@ export function invasionOf(
       method: 'none',
       reason: `The absence of ${population.name} does not last: something feeds it from outside, so the question does not arise.`,
     };
-  const smoothHere = differentiabilityAt(system, u, states, scale);
-  if (!smoothHere.differentiable) {
-    const growth = homogeneousGrowth(system, u, states);
-    if (growth.status !== 'settled')
-      return answer(null, 0, 'none', `No derivative at zero density, and ${growth.reason}.`);
-    return answer(
-      growth.growthRate,
-      1e-10 * (1 + Math.abs(growth.growthRate)),
-      'homogeneous growth rate',
-      'Births depend on both sexes to the first degree, so the growth rate at low density is that of the composition which settles.',
-    );
-  }
+  if (!differentiabilityAt(system, u, states, scale).differentiable)
+    return growthFromZero(system, population.symbol, states, u);
   const m = states.length;
   const n = system.dimension;
   const block = new Float64Array(m * m);
@@ -71,5 +61,55 @@ export function invasionOf(
     Math.abs(rate) <= spectrum.error[0]
       ? 'Its growth rate from low density is zero within the accuracy reached.'
       : `From low density it ${verb} at the leading eigenvalue of its own block.`,
+  );
+}
+
+/** Accuracy of a growth rate once its composition has settled, relative to the rate and in all. */
+const SETTLED = 1e-10;
+
+/** Growth from vanishing density of classes that have no derivative there. */
+function growthFromZero(
+  system: CompiledSystem,
+  name: string,
+  states: readonly number[],
+  u: Float64Array,
+): Invasion {
+  const growth = homogeneousGrowth(system, u, states);
+  if (growth.status !== 'settled')
+    return {
+      population: name,
+      answer: 'undecided',
+      growthRate: null,
+      method: 'none',
+      reason: `No derivative at zero density, and ${growth.reason}.`,
+    };
+  const { growthRate } = growth;
+  const decided = Math.abs(growthRate) > SETTLED * (1 + Math.abs(growthRate));
+  return {
+    population: name,
+    answer: !decided ? 'undecided' : growthRate > 0 ? 'can invade' : 'cannot invade',
+    growthRate,
+    method: 'homogeneous growth rate',
+    reason:
+      'Births depend on several classes to the first degree, so the growth rate at low density is that of the composition which settles.',
+    composition: Array.from(growth.composition),
+  };
+}
+
+/**
+ * Invasion by several absent populations together, which can succeed where none of them grows alone (sexes
+ * written as populations of their own). Asked only where the rates have no derivative at their absence.
+ */
+export function jointInvasion(
+  system: CompiledSystem,
+  populations: readonly StatePopulation[],
+  u: Float64Array,
+): Invasion {
+  const name = populations.map((one) => one.symbol).join(' and ');
+  return growthFromZero(
+    system,
+    name,
+    populations.flatMap((one) => [...one.states]),
+    u,
   );
 }

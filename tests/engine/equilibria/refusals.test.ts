@@ -24,7 +24,26 @@ describe('a mating function of degree one (closed forms derived by hand)', () =>
     expect(zero.type).toBe('not differentiable');
     expect(zero.eigenvalues).toEqual([]);
     expect(zero.margin).toBeNull();
+    expect(zero.attracts).toBe('no');
+    // Neither sex grows alone; together at (b - um - uf)/2 with females 1/2 + (um - uf)/(2 b).
+    const [males, females, both] = zero.invasions;
+    expect([males.growthRate, females.growthRate]).toEqual([-0.8, -0.5]);
+    expect(both).toMatchObject({
+      population: 'M and F',
+      answer: 'can invade',
+      method: 'homogeneous growth rate',
+    });
+    expect(both.growthRate).toBeCloseTo(0.85, 10);
+    expect(both.composition?.[1]).toBeCloseTo(0.55, 10);
     expect(result.equilibria).toHaveLength(2);
+  });
+
+  it('dies out from low density below the threshold b = 1.3', () => {
+    const zero = nearest(equilibriaOf(textbook(twoSexes(1.29), parameters)), [0, 0]);
+    expect(zero.attracts).toBe('yes');
+    expect(zero.invasions[2].growthRate).toBeCloseTo(-0.005, 10);
+    const at = nearest(equilibriaOf(textbook(twoSexes(1.3), parameters)), [0, 0]);
+    expect(at.attracts).toBe('unknown');
   });
 
   it('sees the same through a guard against 0/0', () => {
