@@ -12,6 +12,7 @@ import { answerErrors, refuseUnknownRoute } from './middleware/errors';
 import { refuseForgeries } from './middleware/forgery';
 import { securityHeaders } from './middleware/security-headers';
 import { createSessions } from './middleware/sessions';
+import { refuseNul } from './middleware/sound-text';
 import { accountRoutes } from './routes/account-routes';
 import { demoRoutes } from './routes/demo-routes';
 import { healthRoutes } from './routes/health-routes';
@@ -31,7 +32,7 @@ function apiRouter(dependencies: Dependencies): Router {
   });
   router.use(healthRoutes(dependencies));
   router.use(createSessions(database, settings), refuseForgeries(settings));
-  router.use(express.json({ limit: LARGEST_BODY, strict: true }), findPerson(dependencies));
+  router.use(express.json({ limit: LARGEST_BODY, strict: true }), refuseNul, findPerson(dependencies));
   router.use(
     accountRoutes(dependencies),
     labRoutes(dependencies),

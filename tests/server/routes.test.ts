@@ -1,0 +1,275 @@
+import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+
+import type { PresetBody } from '@/contract/presets';
+import type { Role } from '@/contract/rights';
+
+import { DEMO_LAB } from '../../server/seeds/demo';
+import { sampleDocument, startTestServer, Visitor, type TestServer } from '../support/test-server';
+
+type Who = 'visitor' | Role | 'outsider';
+type Method = 'get' | 'post' | 'patch' | 'delete';
+interface Row {
+  readonly method: Method;
+  readonly path: string;
+  readonly body?: () => unknown;
+  /** Status by who asks. */
+  readonly expect: Readonly<Record<Who, number>>;
+}
+
+let server: TestServer;
+const people = new Map<Who, Visitor>();
+/** Presets of the researcher: one private, one open to the lab. */
+let own: PresetBody;
+let lab: PresetBody;
+let token = '';
+let linkId = '';
+
+const all = (status: number, visitor = status): Record<Who, number> => ({
+  visitor,
+  supervisor: status,
+  researcher: status,
+  student: status,
+  collaborator: status,
+  outsider: status,
+});
+const signedInOnly = (status: number) => all(status, 401);
+const by = (row: Partial<Record<Who, number>>): Record<Who, number> => ({ ...signedInOnly(404), ...row });
+
+beforeAll(async () => {
+  server = await startTestServer();
+  for (const role of ['supervisor', 'researcher', 'student', 'collaborator'] as const) {
+    people.set(role, await server.person(role));
+  }
+  people.set('visitor', new Visitor(server.app));
+  const outsider = new Visitor(server.app);
+  await outsider.post('/accounts', {
+    name: 'Out Sider',
+    email: 'out@example.org',
+    password: 'a long enough one',
+  });
+  await server.mailArrived();
+  const mail = (await server.mailbox.list())[0];
+  const confirm = /confirm\?token=([\w-]+)/.exec(mail?.text ?? '')?.[1];
+  expect((await outsider.post('/accounts/confirm', { token: confirm })).status).toBe(201);
+  people.set('outsider', outsider);
+  const researcher = people.get('researcher');
+  own = (await researcher?.post('/presets', { document: sampleDocument('Own') }))?.body as PresetBody;
+  lab = (
+    await researcher?.post('/presets', {
+      document: sampleDocument('Lab'),
+      visibility: 'lab',
+      labId: DEMO_LAB.id,
+    })
+  )?.body as PresetBody;
+  const made = await researcher?.post(`/presets/${lab.preset.id}/links`, { label: 'for a reviewer' });
+  token = (made?.body as { token: string }).token;
+  linkId = (made?.body as { link: { id: string } }).link.id;
+});
+afterAll(() => server.close());
+
+const save = () => ({ document: sampleDocument('Changed'), note: '', baseVersion: 999 });
+
+/** Every route that exists, with what each may get. Saves use a stale base, so that nothing changes: 409 means allowed. */
+const rows = (): Row[] => [
+  { method: 'get', path: '/health', expect: all(200) },
+  { method: 'get', path: '/ready', expect: all(200) },
+  { method: 'get', path: '/session', expect: all(200) },
+  { method: 'post', path: '/session', body: () => ({}), expect: all(400) },
+  { method: 'post', path: '/accounts', body: () => ({}), expect: all(400) },
+  { method: 'post', path: '/accounts/confirm', body: () => ({ token: 'x'.repeat(43) }), expect: all(400) },
+  {
+    method: 'post',
+    path: '/password/forgotten',
+    body: () => ({ email: 'nobody@example.org' }),
+    expect: all(202),
+  },
+  {
+    method: 'post',
+    path: '/password/reset',
+    body: () => ({ token: 'x'.repeat(43), password: 'long enough here' }),
+    expect: all(400),
+  },
+  {
+    method: 'post',
+    path: '/password/change',
+    body: () => ({ current: 'wrong', next: 'long enough here' }),
+    expect: signedInOnly(400),
+  },
+  { method: 'patch', path: '/account', body: () => ({ name: '' }), expect: signedInOnly(400) },
+  { method: 'get', path: '/account/sessions', expect: signedInOnly(200) },
+  { method: 'delete', path: '/account/sessions/nothing', expect: signedInOnly(404) },
+  { method: 'get', path: `/labs/${DEMO_LAB.id}`, expect: { ...signedInOnly(200), outsider: 404 } },
+  { method: 'get', path: '/labs/none', expect: signedInOnly(404) },
+  { method: 'get', path: '/presets', expect: signedInOnly(200) },
+  { method: 'post', path: '/presets', body: () => ({ document: {} }), expect: signedInOnly(400) },
+  { method: 'get', path: '/presets/none', expect: signedInOnly(404) },
+  { method: 'get', path: `/presets/${own.preset.id}`, expect: by({ researcher: 200 }) },
+  { method: 'get', path: `/presets/${lab.preset.id}`, expect: { ...signedInOnly(200), outsider: 404 } },
+  {
+    method: 'patch',
+    path: `/presets/${own.preset.id}`,
+    body: () => ({ visibility: 'public' }),
+    expect: by({ researcher: 400 }),
+  },
+  {
+    method: 'patch',
+    path: `/presets/${lab.preset.id}`,
+    body: () => ({ visibility: 'public' }),
+    expect: { ...signedInOnly(403), researcher: 400, outsider: 404 },
+  },
+  { method: 'post', path: `/presets/${own.preset.id}/versions`, body: save, expect: by({ researcher: 409 }) },
+  {
+    method: 'post',
+    path: `/presets/${lab.preset.id}/versions`,
+    body: save,
+    expect: {
+      visitor: 401,
+      supervisor: 409,
+      researcher: 409,
+      student: 403,
+      collaborator: 403,
+      outsider: 404,
+    },
+  },
+  {
+    method: 'get',
+    path: `/presets/${lab.preset.id}/versions`,
+    expect: { ...signedInOnly(200), outsider: 404 },
+  },
+  {
+    method: 'get',
+    path: `/presets/${lab.preset.id}/versions/1`,
+    expect: { ...signedInOnly(200), outsider: 404 },
+  },
+  { method: 'get', path: `/presets/${lab.preset.id}/versions/7`, expect: signedInOnly(404) },
+  {
+    method: 'post',
+    path: `/presets/${lab.preset.id}/versions/1/restore`,
+    body: () => ({ baseVersion: 999 }),
+    expect: {
+      visitor: 401,
+      supervisor: 409,
+      researcher: 409,
+      student: 403,
+      collaborator: 403,
+      outsider: 404,
+    },
+  },
+  {
+    method: 'post',
+    path: `/presets/${lab.preset.id}/duplicate`,
+    body: () => ({}),
+    expect: { ...signedInOnly(201), outsider: 404 },
+  },
+  {
+    method: 'get',
+    path: `/presets/${lab.preset.id}/links`,
+    expect: {
+      visitor: 401,
+      supervisor: 200,
+      researcher: 200,
+      student: 403,
+      collaborator: 403,
+      outsider: 404,
+    },
+  },
+  {
+    method: 'post',
+    path: `/presets/${lab.preset.id}/links`,
+    body: () => ({ label: 'x'.repeat(9000) }),
+    expect: {
+      visitor: 401,
+      supervisor: 400,
+      researcher: 400,
+      student: 403,
+      collaborator: 403,
+      outsider: 404,
+    },
+  },
+  {
+    method: 'delete',
+    path: `/presets/${lab.preset.id}/links/none`,
+    expect: {
+      visitor: 401,
+      supervisor: 404,
+      researcher: 404,
+      student: 403,
+      collaborator: 403,
+      outsider: 404,
+    },
+  },
+  { method: 'get', path: `/shared/${token}`, expect: all(200) },
+  { method: 'get', path: '/shared/none', expect: all(404) },
+  { method: 'post', path: `/shared/${token}/copy`, body: () => ({}), expect: signedInOnly(201) },
+  { method: 'get', path: '/demo/accounts', expect: all(200) },
+  { method: 'get', path: '/demo/mail', expect: all(200) },
+  { method: 'get', path: '/demo/mail/none', expect: all(404) },
+  // Last, because they end things.
+  { method: 'delete', path: `/presets/${own.preset.id}`, expect: by({ researcher: 204 }) },
+  {
+    method: 'delete',
+    path: `/presets/${lab.preset.id}`,
+    expect: {
+      visitor: 401,
+      student: 403,
+      collaborator: 403,
+      outsider: 404,
+      supervisor: 204,
+      researcher: 404,
+    },
+  },
+  { method: 'delete', path: '/account/sessions', expect: signedInOnly(204) },
+  { method: 'delete', path: '/session', expect: signedInOnly(204) },
+];
+
+const ORDER: readonly Who[] = ['visitor', 'outsider', 'collaborator', 'student', 'supervisor', 'researcher'];
+
+async function ask(who: Who, { method, path, body }: Row) {
+  const visitor = people.get(who);
+  if (!visitor) throw new Error(who);
+  return method === 'get' ? visitor.get(path) : visitor.send(method, path, body?.());
+}
+
+describe('every route with every role', () => {
+  it('answers as the table says, and never with a fault of the server', async () => {
+    const wrong: string[] = [];
+    for (const row of rows()) {
+      for (const who of ORDER) {
+        const { status } = await ask(who, row);
+        if (status !== row.expect[who])
+          wrong.push(`${row.method} ${row.path} as ${who}: ${status}, not ${row.expect[who]}`);
+      }
+    }
+    expect(wrong).toEqual([]);
+  });
+
+  it('knows every route of the application', () => {
+    interface Layer {
+      readonly route?: { readonly path: string; readonly methods: Readonly<Record<string, boolean>> };
+      readonly handle?: { readonly stack?: readonly Layer[] };
+    }
+    const found: string[] = [];
+    const walk = (layers: readonly Layer[]) => {
+      for (const { route, handle } of layers) {
+        if (route) for (const method of Object.keys(route.methods)) found.push(`${method} ${route.path}`);
+        else if (handle?.stack) walk(handle.stack);
+      }
+    };
+    walk((server.app as unknown as { router: { stack: Layer[] } }).router.stack);
+    const shape = (path: string) =>
+      path
+        .replace(own.preset.id, ':id')
+        .replace(lab.preset.id, ':id')
+        .replace(/\/presets\/none/, '/presets/:id')
+        .replace(/\/versions\/\d+/, '/versions/:number')
+        .replace(/\/links\/none/, '/links/:linkId')
+        .replace(/\/labs\/.*/, '/labs/:labId')
+        .replace(new RegExp(`/shared/(${token}|none)`), '/shared/:token')
+        .replace(/\/sessions\/nothing/, '/sessions/:id')
+        .replace(/\/mail\/none/, '/mail/:id');
+    const covered = new Set(rows().map(({ method, path }) => `${method} ${shape(path)}`));
+    expect(found.length).toBeGreaterThan(30);
+    expect(found.filter((route) => !covered.has(route))).toEqual([]);
+    expect(linkId).not.toBe('');
+  });
+});
