@@ -42,7 +42,7 @@ export const threeLevelFoodChain = presetSchema.parse({
   knownFacts: [
     {
       kind: 'equilibrium',
-      at: { x: 5 * ((2 + Math.sqrt(8.5)) / 6), y: 0.625, z: 49.0410144 },
+      at: { x: 5 * ((2 + Math.sqrt(8.5)) / 6), y: 0.625, z: 49.04099853951806 },
       tolerance: 1e-6,
       type: 'saddle focus',
       source: 'Closed form in the notes; z = (a x/(1 + w x) - d)(1 + v y)/c. Derived by hand.',
