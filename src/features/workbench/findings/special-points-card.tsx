@@ -74,7 +74,7 @@ function Row({
         <th scope="row" className="py-1 text-left font-normal">
           <button
             type="button"
-            className="flex items-center gap-1.5 rounded text-left hover:underline disabled:no-underline"
+            className="flex items-center gap-1 rounded text-left hover:underline disabled:no-underline"
             disabled={!row.split}
             aria-pressed={selected}
             onClick={onChoose}
@@ -89,12 +89,14 @@ function Row({
             </span>
           </button>
         </th>
-        <td className="figures py-1 pl-1.5 text-right whitespace-nowrap">{value(row.split)}</td>
+        <td className="figures py-1 pl-1 text-right text-xs whitespace-nowrap">{value(row.split)}</td>
         {withTwin ? (
           <>
-            <td className="figures py-1 pl-1.5 text-right whitespace-nowrap text-muted">{value(row.twin)}</td>
-            <td className="figures py-1 pl-1.5 text-right whitespace-nowrap">
-              {row.shift === null ? '' : `${row.shift > 0 ? '+' : ''}${formatNumber(row.shift, 3)}`}
+            <td className="figures py-1 pl-1 text-right text-xs whitespace-nowrap text-muted">
+              {value(row.twin)}
+            </td>
+            <td className="figures py-1 pl-1 text-right text-xs whitespace-nowrap">
+              {row.shift === null ? '' : `${row.shift > 0 ? '+' : ''}${formatNumber(row.shift, 2)}`}
             </td>
           </>
         ) : null}
@@ -155,7 +157,7 @@ export function SpecialPointsCard() {
             : sweep.split.message}
         </p>
       ) : (
-        <table className="w-full border-collapse text-sm">
+        <table className="w-full border-collapse text-[13px]">
           <thead>
             <tr>
               {columns.map((column) => (

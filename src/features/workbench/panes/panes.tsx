@@ -21,7 +21,7 @@ function useIsPhone(): boolean {
 /** Two panes side by side above, the rest beneath: one row up to two panes, else two. */
 function rowsOf(count: number, arrangement: Arrangement): readonly (readonly number[])[] {
   const indices = Array.from({ length: count }, (_value, k) => k);
-  if (arrangement === 'sweep' && count === 2) return [[0], [1]];
+  if (arrangement !== 'explore' && count === 2) return [[0], [1]];
   return count <= 2 ? [indices] : [indices.slice(0, 2), indices.slice(2)];
 }
 

@@ -13,7 +13,7 @@ export function EquationsPane() {
   return (
     <div
       role="region"
-      aria-label="Typeset equations"
+      aria-label="Equations, set large"
       tabIndex={0}
       className="grid min-h-0 flex-1 content-start gap-4 overflow-auto p-5 text-lg"
     >

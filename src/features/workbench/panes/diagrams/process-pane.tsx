@@ -26,7 +26,7 @@ export function ProcessPane() {
         Nothing to draw yet. Add a population and a process in the model rail.
       </p>
     );
-  const influences = layout.arrows.find((one) => one.key === picked)?.influences ?? [];
+  const influences = layout.arrows.find((one) => one.process === picked)?.influences ?? [];
   const hues = new Map(model.populations.map((one) => [one.symbol, one]));
   return (
     <div className="grid min-h-0 flex-1 place-items-center overflow-auto p-2">
@@ -52,15 +52,15 @@ export function ProcessPane() {
         {layout.arrows.map((arrow) => (
           <g
             key={arrow.key}
-            onPointerEnter={() => setPicked(arrow.key)}
+            onPointerEnter={() => setPicked(arrow.process)}
             onPointerLeave={() => setPicked(null)}
           >
             <path d={arrow.d} fill="none" stroke="transparent" strokeWidth={14} />
             <path
               d={arrow.d}
               fill="none"
-              stroke={picked === arrow.key ? palette.accent : palette.muted}
-              strokeWidth={picked === arrow.key ? 2.4 : 1.6}
+              stroke={picked === arrow.process ? palette.accent : palette.muted}
+              strokeWidth={picked === arrow.process ? 2.4 : 1.6}
               markerEnd={`url(#${marker})`}
             />
             <text
@@ -73,7 +73,11 @@ export function ProcessPane() {
               strokeWidth={4}
               paintOrder="stroke"
             >
-              {arrow.name}
+              {arrow.label.map((line, k) => (
+                <tspan key={line} x={arrow.labelX} dy={k === 0 ? (arrow.label.length - 1) * -7 : 15}>
+                  {line}
+                </tspan>
+              ))}
             </text>
           </g>
         ))}

@@ -132,7 +132,7 @@ function axisTexts(
     };
     return [
       ...axisTicks(axis, TICKS).map((tick) => text(scale(tick.value), 1, tick.label, {})),
-      text(k === 2 ? 1.14 : 0, k === 2 ? 0.2 : 2.6, axisLabel(axis), { size: 13, colour: palette.ink }),
+      text(k === 2 ? 1.14 : 0, k === 2 ? 0.2 : 3.3, axisLabel(axis), { size: 13, colour: palette.ink }),
     ];
   });
 }
