@@ -255,6 +255,9 @@ function context(
     ...(Math.abs(input.spread) < 0.3
       ? ['Small spreads act at second order, so effects at this spread are small by nature.']
       : []),
+    ...([input.split, input.pooled].some((one) => one?.status === 'cancelled')
+      ? ['The search for equilibria was stopped before its end; others may exist.']
+      : []),
     ...(partialSweep(input)
       ? ['The sweep was stopped before its end; the rest of its range is not counted.']
       : []),
