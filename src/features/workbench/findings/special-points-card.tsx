@@ -116,7 +116,7 @@ function Row({
             {row.split.hopf ? (
               <>
                 {' '}
-                {row.split.hopf.meaning}
+                {row.split.hopf.meaning === row.split.meaning ? null : row.split.hopf.meaning}
                 {row.split.hopf.l1 === null ? null : (
                   <span className="block">
                     First Lyapunov coefficient{' '}

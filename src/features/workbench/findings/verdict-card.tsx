@@ -7,8 +7,12 @@ import { joinClasses } from '@/lib/join-classes';
 import { useWorkbench } from '../state/store';
 import { Card } from './card';
 
+/** Below this a margin of rates of order one is rounding. */
+const DUST = 1e-12;
+
 function EvidenceTable({ evidence }: { readonly evidence: readonly VerdictEvidence[] }) {
-  const cell = (value: number | null) => (value === null ? 'none' : formatNumber(value, 3));
+  const cell = (value: number | null) =>
+    value === null ? 'none' : value !== 0 && Math.abs(value) < DUST ? '≈ 0' : formatNumber(value, 3);
   return (
     <table className="mt-2 w-full border-collapse text-sm">
       <thead>

@@ -56,6 +56,9 @@ function chromeOf(spec: PlotSpec): Chrome {
   return { key, legend, notes, empty, title, description, handles };
 }
 
+/** Width of a ring, in pixels. */
+const RING = 13;
+
 export function PlotFrame({ build, axes, onMoveHandle, onDrawn }: PlotFrameProps) {
   const store = useWorkbenchStore();
   const model = useShownModel();
@@ -88,12 +91,16 @@ export function PlotFrame({ build, axes, onMoveHandle, onDrawn }: PlotFrameProps
   useEffect(() => {
     if (!canvas.current || !frame.current) return;
     const placeHandles = (view: PlotView) => {
+      const rings: { x: number; y: number }[] = [];
       for (const handle of view.spec?.handles ?? []) {
         const element = handleElements.current.get(handle.id);
         const layout = view.layout;
         if (!element || !layout) continue;
-        const x = layout.x(handle.x);
         const y = handle.shape === 'vertical' ? layout.top : layout.y(handle.y);
+        const beneath = rings.filter((ring) => Math.hypot(ring.x - layout.x(handle.x), ring.y - y) < RING);
+        // Rings at one place stand side by side, so that each can be taken hold of.
+        const x = layout.x(handle.x) + RING * beneath.length;
+        if (handle.shape === 'ring') rings.push({ x: layout.x(handle.x), y });
         const inside = x >= layout.left - 6 && x <= layout.left + layout.innerWidth + 6;
         const insideY =
           handle.shape === 'vertical' || (y >= layout.top - 8 && y <= layout.top + layout.innerHeight + 8);
@@ -190,6 +197,7 @@ export function PlotFrame({ build, axes, onMoveHandle, onDrawn }: PlotFrameProps
           tabIndex={0}
           className="absolute inset-0 overflow-hidden rounded-b-md"
           onKeyDown={handleKey}
+          onBlur={() => showReading(null)}
           {...pointer}
         >
           <canvas ref={canvas} aria-hidden className="block" />

@@ -118,7 +118,10 @@ function axisTexts(
       const at = project(x + edge.out[0] * away, y + edge.out[1] * away, z + edge.out[2] * away);
       return {
         kind: 'text',
-        x: Math.max(half, Math.min(width - half, at.x)),
+        x:
+          more.anchor === 'start'
+            ? Math.min(width - 2 * half, at.x)
+            : Math.max(half, Math.min(width - half, at.x)),
         y: Math.max(9, Math.min(height - 9, at.y)),
         text: words,
         size: 11.5,
@@ -132,7 +135,11 @@ function axisTexts(
     };
     return [
       ...axisTicks(axis, TICKS).map((tick) => text(scale(tick.value), 1, tick.label, {})),
-      text(k === 2 ? 1.14 : 0, k === 2 ? 0.2 : 3.3, axisLabel(axis), { size: 13, colour: palette.ink }),
+      text(k === 2 ? 1.14 : 0, k === 2 ? 0.2 : 3.3, axisLabel(axis), {
+        size: 13,
+        colour: palette.ink,
+        ...(k === 1 ? { anchor: 'start' } : {}),
+      }),
     ];
   });
 }
