@@ -3,6 +3,7 @@ import { insideBox, type StateBox } from './box';
 import type { Equilibrium } from './contract';
 import { describeEquilibrium, type DescriptionOptions } from './describe';
 import { dropState, faceProblem, liftState, type Face } from './face-system';
+import { absenceOf, makeFace } from './faces';
 import { scanLine } from './line-scan';
 import { sameState } from './merge';
 import { newton, type NewtonOutcome } from './newton';
@@ -43,7 +44,6 @@ export const FACE_SEARCH_DEFAULTS = {
 export class FaceSearch {
   tried = 0;
   private next = 0;
-  private curvePoints = 0;
   private ownCount = 0;
   private rounds = 1;
   private foundAt = -1;
@@ -113,7 +113,10 @@ export class FaceSearch {
       const nonnegative = this.face.free.map((i) => this.system.nonnegative[i]);
       for (const direction of [1, -1] as const) {
         const end = pseudoTransient(plain, x, nonnegative, direction);
-        if (end !== null) this.keep(this.face, newton(perCapita, end, { scale }));
+        if (end === null) continue;
+        // Undivided first: a trajectory on which a population dies out ends on a smaller face.
+        this.keep(this.face, newton(plain, end, { scale }));
+        this.keep(this.face, newton(perCapita, end, { scale }));
       }
     }
     if (this.next % FACE_SEARCH_DEFAULTS.deflateEvery !== 0) return;
@@ -147,10 +150,13 @@ export class FaceSearch {
 
   private keepOnSubface(face: Face, x: Float64Array, vanished: readonly number[]): boolean {
     const absent = [...face.absent, ...vanished].sort((a, b) => a - b);
-    const subface = this.faces.find(
+    const listed = this.faces.find(
       (other) => other.absent.length === absent.length && other.absent.every((i, k) => i === absent[k]),
     );
-    if (subface === undefined) return false;
+    // Not every face is listed where there are many; this one is met by chance.
+    const lasts = listed !== undefined || absenceOf(this.system, absent, this.scale) === 'lasts';
+    if (!lasts) return false;
+    const subface = listed ?? makeFace(this.system, absent, false, this.scale);
     if (subface.free.length === 0) return this.accept(subface, new Float64Array(0), 0);
     const start = dropState(subface, liftState(face, x, this.system.dimension));
     const scale = dropState(subface, this.scale);
@@ -174,13 +180,18 @@ export class FaceSearch {
       this.options.describe,
     );
     if (equilibrium === null || equilibrium.residual > FACE_SEARCH_DEFAULTS.largestResidual) return false;
-    if (equilibrium.type === 'not isolated') {
-      this.curvePoints += 1;
-      if (this.curvePoints > FACE_SEARCH_DEFAULTS.curvePoints) return false;
-    }
+    if (equilibrium.type === 'not isolated' && this.curveIsRepresented(state)) return false;
     this.ownCount += 1;
     this.foundAt = this.next;
     this.found.push(equilibrium);
     return true;
+  }
+
+  /** Whether enough points of curves of equilibria are known with the same states at zero. */
+  private curveIsRepresented(state: Float64Array): boolean {
+    const alike = this.found.filter(
+      (one) => one.type === 'not isolated' && one.state.every((x, i) => (x === 0) === (state[i] === 0)),
+    );
+    return alike.length >= FACE_SEARCH_DEFAULTS.curvePoints;
   }
 }

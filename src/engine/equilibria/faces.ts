@@ -67,32 +67,36 @@ export function invariantFaces(system: CompiledSystem, high: Float64Array): Face
     n <= FACE_LIMITS.statesTriedSingly
       ? Array.from({ length: n }, (_, i) => [i])
       : unitsOfManyStates(system, high);
-  const subsets = subsetsBySize(units.length, FACE_LIMITS.faces * 4);
+  const subsets = subsetsFromBothEnds(units.length, FACE_LIMITS.faces);
   const faces: Face[] = [];
-  let capped = subsets.capped;
   for (const subset of subsets.list) {
     const absent = subset.flatMap((k) => units[k]).sort((a, b) => a - b);
-    if (new Set(absent).size !== absent.length) continue;
     const absence = absent.length === 0 ? 'lasts' : absenceOf(system, absent, high);
-    if (absence === 'does not last') continue;
-    if (faces.length >= FACE_LIMITS.faces) {
-      capped = true;
-      break;
-    }
-    faces.push(makeFace(system, absent, absence === 'lasts, but is 0/0', high));
+    if (absence !== 'does not last')
+      faces.push(makeFace(system, absent, absence === 'lasts, but is 0/0', high));
   }
-  // Subsets were made from the fullest face on, so that a cap never loses coexistence.
-  return { faces: faces.reverse(), capped };
+  return { faces: faces.sort((a, b) => b.absent.length - a.absent.length), capped: subsets.capped };
+}
+
+/**
+ * Subsets of 0..count-1 up to a limit: where there are more, those with fewest members and those with
+ * most, so that neither coexistence nor extinction is lost.
+ */
+export function subsetsFromBothEnds(count: number, limit: number): { list: number[][]; capped: boolean } {
+  if (2 ** count <= limit) return subsetsBySize(count, limit);
+  const { list } = subsetsBySize(count, limit / 2);
+  const all = Array.from({ length: count }, (_, k) => k);
+  const complements = list.map((subset) => all.filter((k) => !subset.includes(k)));
+  const seen = new Set(list.map((subset) => subset.join(' ')));
+  return { list: [...list, ...complements.filter((subset) => !seen.has(subset.join(' ')))], capped: true };
 }
 
 function unitsOfManyStates(system: CompiledSystem, high: Float64Array): number[][] {
   const units: number[][] = [];
-  for (const population of system.populations) {
-    const states = [...population.states];
-    const single = states.filter((i) => absenceOf(system, [i], high) !== 'does not last');
-    if (states.length > 1 && single.length === states.length && states.length <= 3)
-      units.push(...states.map((i) => [i]));
-    else units.push(states);
+  for (const { states } of system.populations) {
+    const bredTrue =
+      states.length <= 3 && states.every((i) => absenceOf(system, [i], high) !== 'does not last');
+    units.push(...(bredTrue ? states.map((i) => [i]) : [[...states]]));
   }
   return units;
 }

@@ -66,7 +66,7 @@ export function* findEquilibria(
       const search = new FaceSearch(system, face, list.faces, box, scale, found, {
         seed: options.seed ?? SEARCH_DEFAULTS.seed,
         starts: Math.max(SEARCH_DEFAULTS.startsLeast, Math.min(wanted, perFace)),
-        given: [...starts, ...found.map((e) => e.state)],
+        given: starts,
         describe: options,
       });
       while (search.advance()) {
@@ -101,7 +101,7 @@ function completeMessage(
   const where = faces === 1 ? 'one face' : `${faces} faces`;
   const text = `Found ${count} from ${tried} starts on ${where} of the state box; a search from starts is no proof that there are no more.`;
   return capped
-    ? `${text} There were more combinations of absent classes than the search looks at; those with most classes absent were left out.`
+    ? `${text} There were more combinations of absent classes than the search looks at; those with about half of the classes absent were left out.`
     : text;
 }
 
