@@ -63,7 +63,8 @@ export class SceneLines {
   private readonly edges = new LineSegments(new BufferGeometry(), new LineBasicMaterial());
   private readonly point = new Vector3();
 
-  constructor() {
+  /** @param strands how often each line is drawn, a little aside each time */
+  constructor(private readonly strands: number) {
     this.group.add(this.grid, this.edges);
   }
 
@@ -121,7 +122,7 @@ export class SceneLines {
     const attribute = new BufferAttribute(new Float32Array(capacity * 3), 3);
     attribute.setUsage(DynamicDrawUsage);
     geometry.setAttribute('position', attribute);
-    const strands = (twin ? ASIDE.slice(0, 2) : ASIDE).map((aside) => {
+    const strands = ASIDE.slice(0, Math.min(this.strands, twin ? 2 : ASIDE.length)).map((aside) => {
       const strand = new Line(geometry, asideMaterial(colour, dashed, opacity, aside, this.size));
       strand.frustumCulled = false;
       this.group.add(strand);

@@ -21,16 +21,11 @@ import { SceneLink } from './scene-link';
 import { SpaceScene } from './space-scene';
 import { spaceSpec, spaceTables, type SpaceSpec } from './space-spec';
 import { StartHandle } from './start-handle';
+import { hasWebgl } from './webgl';
 
 interface SpacePaneProps {
   readonly view: 'space' | 'space-diagram';
   readonly axes: readonly Quantity[];
-}
-
-let webgl: boolean | null = null;
-function hasWebgl(): boolean {
-  webgl ??= Boolean(document.createElement('canvas').getContext('webgl2'));
-  return webgl;
 }
 
 function obliqueCamera(width: number, height: number): PerspectiveCamera {

@@ -9,6 +9,7 @@ import { CAMERA_PRESETS } from './camera-presets';
 import { SceneLines } from './scene-lines';
 import type { SceneLink } from './scene-link';
 import type { SpaceSpec } from './space-spec';
+import { webglKind } from './webgl';
 
 interface SceneProps {
   readonly build: () => { readonly spec: SpaceSpec; readonly palette: Palette };
@@ -22,7 +23,7 @@ function Lines({ build, watch, link, onFrame }: SceneProps) {
   const invalidate = useThree((state) => state.invalidate);
   const camera = useThree((state) => state.camera);
   const size = useThree((state) => state.size);
-  const lines = useMemo(() => new SceneLines(), []);
+  const lines = useMemo(() => new SceneLines(webglKind() === 'software' ? 2 : 3), []);
   useEffect(() => () => lines.dispose(), [lines]);
   useEffect(() => {
     lines.size.set(size.width, size.height);
@@ -34,9 +35,11 @@ function Lines({ build, watch, link, onFrame }: SceneProps) {
     return watch(() => invalidate());
   }, [watch, invalidate, camera, link]);
   useFrame(() => {
+    const began = performance.now();
     const { spec, palette } = build();
     lines.update(spec, palette);
     onFrame(camera, spec);
+    performance.measure('moiety:space-drawn', { start: began, end: performance.now() });
   });
   return <primitive object={lines.group} />;
 }
@@ -62,10 +65,11 @@ function Controls({ link }: { readonly link: SceneLink }) {
 
 /** The live scene: drawn only when something changed. */
 export function SpaceScene(props: SceneProps) {
+  const software = webglKind() === 'software';
   return (
     <Canvas
       frameloop="demand"
-      dpr={[1, 2]}
+      dpr={software ? 1 : [1, 2]}
       gl={{ antialias: true, alpha: true }}
       camera={{ position: [...CAMERA_PRESETS.oblique.position], fov: 38, near: 0.05, far: 60 }}
       aria-hidden
