@@ -1,6 +1,5 @@
-import type { CompiledSystem } from '../system/contract';
 import type { Branch } from './contract';
-import { Curve } from './curve';
+import type { SweepScope } from './sweep-scope';
 
 /** Neighbouring points nearer than this, in scaled units, may be on one branch; the corrector decides. */
 const NEAR = 0.15;
@@ -11,17 +10,13 @@ export class BranchSet {
   readonly branches: Branch[] = [];
   private readonly actives: (readonly number[])[] = [];
 
-  constructor(
-    private readonly system: CompiledSystem,
-    private readonly parameters: Float64Array,
-    private readonly parameterIndex: number,
-    private readonly stateScale: Float64Array,
-    private readonly parameterScale: number,
-  ) {}
+  constructor(private readonly scope: SweepScope) {}
 
-  add(branch: Branch, active: readonly number[]): void {
+  /** Returns the index of the branch. */
+  add(branch: Branch, active: readonly number[]): number {
     this.branches.push(branch);
     this.actives.push(active);
+    return this.branches.length - 1;
   }
 
   /** Whether an equilibrium at a value of the parameter lies on a branch of the same face. */
@@ -33,20 +28,13 @@ export class BranchSet {
 
   private isOn(branch: Branch, active: readonly number[], state: Float64Array, parameter: number): boolean {
     const n = branch.dimension;
-    const curve = new Curve(
-      this.system,
-      this.parameters,
-      this.parameterIndex,
-      active,
-      this.stateScale,
-      this.parameterScale,
-    );
+    const curve = this.scope.curveOn(active);
     const across = new Float64Array(active.length + 1);
     across[active.length] = 1;
     for (let k = 0; k + 1 < branch.parameters.length; k += 1) {
       const low = branch.parameters[k];
       const high = branch.parameters[k + 1];
-      const slack = 1e-9 * this.parameterScale;
+      const slack = 1e-9 * this.scope.parameterScale;
       if (parameter < Math.min(low, high) - slack || parameter > Math.max(low, high) + slack) continue;
       const share = high === low ? 0 : (parameter - low) / (high - low);
       const guess = new Float64Array(n);
@@ -57,7 +45,7 @@ export class BranchSet {
       if (this.distance(guess, state, active) > NEAR) continue;
       if (this.distance(guess, state, active) < SAME) return true;
       const w = curve.pointOf(guess, parameter);
-      if (curve.correct(w, across, parameter / this.parameterScale) < 0) continue;
+      if (curve.correct(w, across, parameter / this.scope.parameterScale) < 0) continue;
       const corrected = curve.pointOf(state, parameter);
       if (w.every((value, j) => Math.abs(value - corrected[j]) < SAME)) return true;
     }
@@ -65,7 +53,7 @@ export class BranchSet {
   }
 
   private distance(a: Float64Array, b: Float64Array, active: readonly number[]): number {
-    return Math.max(0, ...active.map((i) => Math.abs(a[i] - b[i]) / this.stateScale[i]));
+    return Math.max(0, ...active.map((i) => Math.abs(a[i] - b[i]) / this.scope.stateScale[i]));
   }
 }
 
