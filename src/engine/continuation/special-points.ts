@@ -42,21 +42,35 @@ export function describeHopf(monitor: Monitor, at: BranchPoint): HopfForm | null
       meaning: `The equilibrium turns here with a period near ${period}, but the first Lyapunov coefficient is not told from zero, so that nothing can be said of small cycles.`,
     };
   }
-  return l1 < 0
-    ? {
-        omega,
-        l1,
-        criticality: 'supercritical',
-        crossingSpeed,
-        meaning: `Supercritical: small attracting cycles of period near ${period} grow smoothly from the equilibrium where it begins to repel.`,
-      }
-    : {
-        omega,
-        l1,
-        criticality: 'subcritical',
-        crossingSpeed,
-        meaning: `Subcritical: small repelling cycles of period near ${period} surround the equilibrium while it still attracts; past this point the run jumps away.`,
-      };
+  const criticality = l1 < 0 ? 'supercritical' : 'subcritical';
+  const meaning = repelsOtherwise(monitor, at, omega) ? REPELS_OTHERWISE[criticality] : MEANING[criticality];
+  return { omega, l1, criticality, crossingSpeed, meaning: meaning(period) };
+}
+
+type Sentence = Readonly<Record<'supercritical' | 'subcritical', (period: string) => string>>;
+
+const MEANING: Sentence = {
+  supercritical: (period) =>
+    `Supercritical: small attracting cycles of period near ${period} grow smoothly from the equilibrium where it begins to repel.`,
+  subcritical: (period) =>
+    `Subcritical: small repelling cycles of period near ${period} surround the equilibrium while it still attracts; past this point the run jumps away.`,
+};
+
+/** Where another eigenvalue grows on both sides, the pair does not decide what attracts. */
+const REPELS_OTHERWISE: Sentence = {
+  supercritical: (period) =>
+    `Supercritical: small cycles of period near ${period} grow smoothly from the equilibrium, but it repels in another direction on both sides of this point, and so do they.`,
+  subcritical: (period) =>
+    `Subcritical: small repelling cycles of period near ${period} surround the equilibrium, which repels in another direction on both sides of this point.`,
+};
+
+/** Whether an eigenvalue besides the imaginary pair grows, absent populations included. */
+function repelsOtherwise(monitor: Monitor, at: BranchPoint, omega: number): boolean {
+  const { curve, spectrum } = monitor;
+  if (!curve.evaluate(at.w) || !spectrum.update(curve.jacobian)) return false;
+  return spectrum
+    .list()
+    .some(({ re, im }) => re > OUTSIDE * omega && !(Math.abs(Math.abs(im) - omega) < OUTSIDE * omega));
 }
 
 /** l1 has the dimension of 1/state²; compared with the scale of the states it is told from zero or not. */

@@ -141,6 +141,12 @@ describe('many populations', () => {
     expect(Math.abs(invasions[0].parameter - 2 / 19)).toBeLessThan(1e-10);
     const x = 2 / 19;
     expect(Math.abs(invasions[1].parameter - x / (1 - 0.625 / (1 + 3 * x)))).toBeLessThan(1e-10);
+    // Without z a pair crosses as well, but there z can invade: those cycles do not attract.
+    const [without, coexistence] = pointsOf(result, 'Hopf');
+    expect(without.state[2]).toBe(0);
+    expect(without.eigenvalues[0].re).toBeGreaterThan(0);
+    expect(without.meaning).toMatch(/repels in another direction/);
+    expect(coexistence.meaning).toMatch(/small attracting cycles/);
   });
 });
 
