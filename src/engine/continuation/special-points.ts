@@ -1,3 +1,4 @@
+import type { Eigenvalue } from '../equilibria/contract';
 import type { CompiledSystem } from '../system/contract';
 import type { HopfForm, SpecialPoint, SpecialPointKind } from './contract';
 import { firstLyapunovCoefficient } from './hopf-normal-form';
@@ -65,12 +66,14 @@ const REPELS_OTHERWISE: Sentence = {
 };
 
 /** Whether an eigenvalue besides the imaginary pair grows, absent populations included. */
+export function growsBesidesPair(eigenvalues: readonly Eigenvalue[], omega: number): boolean {
+  const share = OUTSIDE * omega;
+  return eigenvalues.some(({ re, im }) => re > share && !(Math.abs(Math.abs(im) - omega) < share));
+}
+
 function repelsOtherwise(monitor: Monitor, at: BranchPoint, omega: number): boolean {
   const { curve, spectrum } = monitor;
-  if (!curve.evaluate(at.w) || !spectrum.update(curve.jacobian)) return false;
-  return spectrum
-    .list()
-    .some(({ re, im }) => re > OUTSIDE * omega && !(Math.abs(Math.abs(im) - omega) < OUTSIDE * omega));
+  return curve.evaluate(at.w) && spectrum.update(curve.jacobian) && growsBesidesPair(spectrum.list(), omega);
 }
 
 /** l1 has the dimension of 1/state²; compared with the scale of the states it is told from zero or not. */

@@ -4,6 +4,7 @@ import { BranchSet } from './branch-set';
 import type { Band, Progress, SweepResult } from './contract';
 import { STEP_DEFAULTS } from './pseudo-arclength';
 import { findSeeds, scaleOfStates, type Seed } from './seeds';
+import { growsBesidesPair } from './special-points';
 import { SpecialPointList } from './special-point-list';
 import {
   NEEDS_PERIOD_MAP,
@@ -107,7 +108,12 @@ class SweepRun {
   }
 
   *integrateBands(): Generator<Progress<SweepResult>, void> {
-    const hopfs = this.points.list().filter((point) => point.kind === 'Hopf' && point.feasible);
+    // Where another direction repels as well, the long run near the equilibrium is not the cycle's.
+    const hopfs = this.points
+      .list()
+      .filter(
+        ({ feasible, hopf, eigenvalues }) => feasible && hopf && !growsBesidesPair(eigenvalues, hopf.omega),
+      );
     for (const [k, hopf] of hopfs.entries()) {
       const stretch = repellingStretch(this.set.branches[hopf.branch], hopf);
       if (stretch === null) continue;

@@ -133,7 +133,7 @@ describe('many populations', () => {
         init: { x: 0.5, y: 0.1, z: 1 },
         nonnegative: true,
       },
-      { parameter: 'K', from: 0.05, to: 1.5 },
+      { parameter: 'K', from: 0.05, to: 1.5, bands: true },
     );
     const invasions = pointsOf(result, 'transcritical');
     expect(invasions.map((point) => point.invades)).toEqual([['y'], ['z']]);
@@ -147,6 +147,8 @@ describe('many populations', () => {
     expect(without.eigenvalues[0].re).toBeGreaterThan(0);
     expect(without.meaning).toMatch(/repels in another direction/);
     expect(coexistence.meaning).toMatch(/small attracting cycles/);
+    expect(result.bands).toHaveLength(1);
+    expect(Math.min(...result.bands[0].parameters)).toBeGreaterThan(coexistence.parameter);
   });
 });
 
