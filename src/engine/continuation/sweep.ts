@@ -11,6 +11,7 @@ import {
   NO_RANGE,
   NO_SUCH_PARAMETER,
   NOT_FOLLOWED,
+  NOT_ISOLATED,
   STOPPED,
   summarise,
 } from './sweep-message';
@@ -26,6 +27,9 @@ export const SWEEP_DEFAULTS = {
   branchBudget: 60,
   largestStep: STEP_DEFAULTS.largest,
 } as const;
+
+/** Share of the range that a line of states at one value may differ by rounding. */
+const UPRIGHT_WIDTH = 1e-9;
 
 /** Shares of the progress at which the stages end. */
 const STAGES = { seeds: 0.3, branches: 0.7 } as const;
@@ -193,6 +197,10 @@ class SweepRun {
       this.notes.add(NOT_FOLLOWED);
       return;
     }
+    if (this.isUpright(found.branch.parameters)) {
+      this.notes.add(NOT_ISOLATED);
+      return;
+    }
     const branch = this.set.add(found.branch, entry.active);
     this.count += found.branch.parameters.length;
     for (const { crossing, place } of found.crossings) {
@@ -200,6 +208,12 @@ class SweepRun {
       if (treated.point) this.points.record(treated.point);
       this.queue.push(...treated.entries);
     }
+  }
+
+  /** Whether a whole line of states rests at one value of the parameter, which is no branch. */
+  private isUpright(parameters: Float64Array): boolean {
+    const width = Math.max(...parameters) - Math.min(...parameters);
+    return parameters.length >= STEP_DEFAULTS.upright && width < UPRIGHT_WIDTH * this.scope.parameterScale;
   }
 
   private progress(fraction: number, stage: string): Progress<SweepResult> {

@@ -90,6 +90,23 @@ describe('what is withheld or refused', () => {
     );
     expect(runSweep(system, { parameter: 'q', from: 0, to: 1 }).message).toMatch(/not one of this model/);
   });
+  it('a line of equilibria at one value of the parameter is said, not drawn as a branch', () => {
+    const result = runSweep(
+      {
+        equations: ["x' = x*(p - x - y)", "y' = y*(1 - x - y)"],
+        parameters: { p: 0.5 },
+        init: { x: 1, y: 1 },
+        nonnegative: true,
+      },
+      { parameter: 'p', from: 0.1, to: 2 },
+    );
+    expect(result.message).toMatch(/whole curve of such states/);
+    expect(result.branches.map((branch) => branch.absent.join(' ')).sort()).toEqual(['x', 'x y', 'y']);
+    // Each excludes the other on its side of p = 1.
+    expect(pointsOf(result, 'transcritical').map((point) => Math.round(point.parameter * 1e9) / 1e9)).toEqual(
+      [1, 1],
+    );
+  });
   it('no equilibrium at all is said', () => {
     const result = runSweep(
       { equations: ["x' = 1 + p^2"], parameters: { p: 1 } },
