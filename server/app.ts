@@ -6,13 +6,13 @@ import { pinoHttp } from 'pino-http';
 
 import type { Dependencies } from './dependencies';
 import { makeId } from './ids';
-import { concealTokens } from './logger';
+import { concealTokens, describeError } from './logger';
 import { findPerson } from './middleware/current-user';
 import { answerErrors, refuseUnknownRoute } from './middleware/errors';
 import { refuseForgeries } from './middleware/forgery';
 import { securityHeaders } from './middleware/security-headers';
 import { createSessions } from './middleware/sessions';
-import { refuseNul } from './middleware/sound-text';
+import { refuseUnsound } from './middleware/sound-text';
 import { accountRoutes } from './routes/account-routes';
 import { demoRoutes } from './routes/demo-routes';
 import { healthRoutes } from './routes/health-routes';
@@ -32,7 +32,7 @@ function apiRouter(dependencies: Dependencies): Router {
   });
   router.use(healthRoutes(dependencies));
   router.use(createSessions(database, settings), refuseForgeries(settings));
-  router.use(express.json({ limit: LARGEST_BODY, strict: true }), refuseNul, findPerson(dependencies));
+  router.use(express.json({ limit: LARGEST_BODY, strict: true }), refuseUnsound, findPerson(dependencies));
   router.use(
     accountRoutes(dependencies),
     labRoutes(dependencies),
@@ -53,7 +53,8 @@ function clientRouter(folder: string): Router {
   );
   router.use(express.static(folder, { index: false, maxAge: 0 }));
   router.get('/{*splat}', (_request, response) => {
-    response.set('cache-control', 'no-cache').sendFile(join(folder, 'index.html'));
+    // With a root, so that a folder above it may begin with a dot.
+    response.set('cache-control', 'no-cache').sendFile('index.html', { root: folder });
   });
   return router;
 }
@@ -76,6 +77,7 @@ export function createApp(dependencies: Dependencies): Express {
           url: concealTokens(request.url),
         }),
         res: (response: { statusCode: number }) => ({ status: response.statusCode }),
+        err: describeError,
       },
     }),
     securityHeaders(settings),

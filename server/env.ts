@@ -70,7 +70,7 @@ const environmentSchema = z
         .int('Use a whole number.')
         .min(0, 'Use 0 or more.')
         .max(10, 'Use at most 10.')
-        .default(0),
+        .optional(),
     ),
     LOG_LEVEL: optional(
       z
@@ -130,7 +130,8 @@ export function readEnvironment(variables: Record<string, string | undefined>): 
     mailFrom: MAIL_FROM,
     publicUrl,
     sessionSecret: rest.SESSION_SECRET ?? null,
-    trustProxy: rest.TRUST_PROXY,
+    // The server speaks plain http, so an https address means that a proxy stands in front.
+    trustProxy: rest.TRUST_PROXY ?? (publicUrl.startsWith('https:') ? 1 : 0),
     logLevel: rest.LOG_LEVEL,
     secureCookies: publicUrl.startsWith('https:'),
   };

@@ -7,6 +7,13 @@ export function concealTokens(url: string): string {
     .replace(/([?&][^=&#]*token[^=&#]*=)[^&#]*/gi, '$1[token]');
 }
 
+/** Of an error its words and place alone: those of the database carry statements with all their values. */
+export function describeError(error: unknown): object {
+  return error instanceof Error
+    ? { type: error.name, message: error.message, stack: error.stack }
+    : { message: String(error) };
+}
+
 const SECRETS = [
   'password',
   'current',
@@ -23,6 +30,11 @@ const SECRETS = [
 ];
 
 export function createLogger(level: string, destination?: DestinationStream): Logger {
-  const options = { level, base: undefined, redact: { paths: SECRETS, censor: '[concealed]' } };
+  const options = {
+    level,
+    base: undefined,
+    redact: { paths: SECRETS, censor: '[concealed]' },
+    serializers: { err: describeError },
+  };
   return destination === undefined ? pino(options) : pino(options, destination);
 }

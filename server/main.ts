@@ -10,7 +10,7 @@ import { createLogger } from './logger';
 import { startLocalSmtp } from './mail/local-smtp';
 import { Mailbox } from './mail/mailbox';
 import { Mailer } from './mail/mailer';
-import { createRateLimits } from './middleware/rate-limits';
+import { createRateLimits, DEFAULT_RATE_LIMITS, DEMO_RATE_LIMITS } from './middleware/rate-limits';
 import { sweepSessions } from './middleware/sessions';
 import { createMigrator } from './migrations';
 import { Database } from './models/database';
@@ -39,6 +39,9 @@ async function start(environment: Environment): Promise<void> {
 
   const mailbox = new Mailbox(join(environment.dataFolder, 'mail'));
   const localSmtp = environment.smtpUrl === null ? await startLocalSmtp(mailbox, logger) : null;
+  if (localSmtp !== null && !environment.demo) {
+    logger.warn('SMTP_URL is not set: mail is kept as files in the data folder and reaches nobody');
+  }
   const mailer = new Mailer(environment.smtpUrl ?? localSmtp?.url ?? '', environment.mailFrom, logger);
   let ready = true;
   const dependencies: Dependencies = {
@@ -54,7 +57,7 @@ async function start(environment: Environment): Promise<void> {
     mailer,
     mailbox: environment.demo ? mailbox : null,
     passwords: new Passwords(),
-    limits: createRateLimits(),
+    limits: createRateLimits(environment.demo ? DEMO_RATE_LIMITS : DEFAULT_RATE_LIMITS),
     logger,
     isReady: () => ready,
   };

@@ -1,4 +1,4 @@
-import { UniqueConstraintError } from 'sequelize';
+import { Op, UniqueConstraintError } from 'sequelize';
 
 import { refuseBadToken, refuseInvalid } from '../errors';
 import type { Dependencies } from '../dependencies';
@@ -9,6 +9,7 @@ import {
   passwordChangedMessage,
   resetMessage,
 } from '../mail/messages';
+import type { Database } from '../models/database';
 import type { User } from '../models/user';
 
 const HOUR = 60 * 60_000;
@@ -16,6 +17,15 @@ const CONFIRM_WITHIN = 48 * HOUR;
 const RESET_WITHIN = HOUR;
 
 const SPENT = 'This link was used already or is too old. Ask for a new one.';
+
+/** Tidies up. Done where a known and an unknown address part ways, so that both wait for one write. */
+export async function discardExpired(database: Database): Promise<void> {
+  const expired = { where: { expiresAt: { [Op.lt]: new Date() } } };
+  await database.write(async () => {
+    await database.models.PendingAccount.destroy(expired);
+    await database.models.PasswordReset.destroy(expired);
+  });
+}
 
 /** Takes a sign-up; what the mail says differs for a known address, what the caller learns does not. */
 export async function requestAccount(
@@ -25,6 +35,7 @@ export async function requestAccount(
   const known = await database.models.User.findOne({ where: { email } });
   const passwordHash = await passwords.hash(password);
   if (known) {
+    await discardExpired(database);
     mailer.send(knownAddressMessage(email, known.name, settings.publicUrl));
     return;
   }
@@ -72,7 +83,7 @@ export async function requestReset(
   email: string,
 ): Promise<void> {
   const user = await database.models.User.findOne({ where: { email } });
-  if (user === null) return;
+  if (user === null) return discardExpired(database);
   const token = makeToken();
   await database.write(() =>
     database.models.PasswordReset.create({

@@ -2,7 +2,7 @@ import { parseFormula } from '@/engine/expression';
 import { LIMITS } from '@/engine/schema/limits';
 import type { PresetDocument } from '@/engine/schema/preset';
 
-import { refuseInvalid } from '../errors';
+import { refuseInvalid, refuseTooLarge } from '../errors';
 
 /** Every formula of a document with its place, as far as it can be malformed. */
 function* formulasOf(document: PresetDocument): Generator<readonly [string, string]> {
@@ -19,7 +19,9 @@ function* formulasOf(document: PresetDocument): Generator<readonly [string, stri
 export function checkDocument(document: PresetDocument): string {
   const text = JSON.stringify(document);
   if (Buffer.byteLength(text) > LIMITS.documentBytes) {
-    throw refuseInvalid({ document: `A document has at most ${LIMITS.documentBytes / 1024} kB.` });
+    throw refuseTooLarge(
+      `A document has at most ${LIMITS.documentBytes / 1024} kB, so this one was not saved. Shorten its notes or split it.`,
+    );
   }
   const fields: Record<string, string> = {};
   for (const [place, formula] of formulasOf(document)) {

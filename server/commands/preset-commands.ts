@@ -4,7 +4,7 @@ import { LIMITS } from '@/engine/schema/limits';
 import type { PresetDocument } from '@/engine/schema/preset';
 
 import type { Dependencies } from '../dependencies';
-import { refuseNotAllowed, refuseNotFound, refuseStaleSave } from '../errors';
+import { Refusal, refuseNotAllowed, refuseNotFound, refuseStaleSave } from '../errors';
 import { hashToken, makeId, makeToken } from '../ids';
 import type { Person } from '../middleware/current-user';
 import type { Preset } from '../models/preset';
@@ -56,10 +56,12 @@ async function readBack(dependencies: Dependencies, id: string): Promise<PresetA
   return { preset, version: await findVersion(dependencies, id, preset.headNumber) };
 }
 
+const onOneLine = (tag: string) => tag.replace(/\s+/g, ' ');
+
 const shownFields = (document: PresetDocument) => ({
   title: document.title,
   summary: document.summary,
-  tagLines: document.tags.join('\n'),
+  tagLines: document.tags.map(onOneLine).join('\n'),
   populations: populationsOf(document),
 });
 
@@ -71,7 +73,7 @@ async function replaceTags(
 ) {
   const { PresetTag } = database.models;
   await PresetTag.destroy({ where: { presetId }, transaction });
-  const distinct = [...new Map(tags.map((tag) => [tag.toLowerCase(), tag])).values()];
+  const distinct = [...new Map(tags.map(onOneLine).map((tag) => [tag.toLowerCase(), tag])).values()];
   if (distinct.length > 0) {
     await PresetTag.bulkCreate(
       distinct.map((tag) => ({ presetId, tag })),
@@ -284,8 +286,8 @@ export async function openLink(
   if (link === null || link.revokedAt !== null) throw gone;
   try {
     return { link, ...(await readBack(dependencies, link.presetId)) };
-  } catch {
-    throw gone;
+  } catch (error) {
+    throw error instanceof Refusal ? gone : error;
   }
 }
 

@@ -1,5 +1,6 @@
 import type { ErrorRequestHandler, RequestHandler } from 'express';
 import type { Logger } from 'pino';
+import { UniqueConstraintError } from 'sequelize';
 
 import type { ErrorBody } from '@/contract/errors';
 
@@ -11,6 +12,9 @@ export const refuseUnknownRoute: RequestHandler = (_request, _response, next) =>
 /** Faults of body parsing and of addresses, which arrive as errors of the framework's. */
 function asRefusal(error: unknown): Refusal | null {
   if (error instanceof Refusal) return error;
+  if (error instanceof UniqueConstraintError) {
+    return new Refusal(409, 'conflict', 'Someone changed this at the same moment. Reload and try again.');
+  }
   const { type, status } = (error ?? {}) as { type?: unknown; status?: unknown };
   if (type === 'entity.too.large' || status === 413) {
     return refuseTooLarge('The request is larger than the server takes. Shorten the document and try again.');

@@ -39,9 +39,11 @@ function sameText(a: string, b: string): boolean {
   return left.length === right.length && timingSafeEqual(left, right);
 }
 
+/** Browsers say where a request began: by `Sec-Fetch-Site`, whatever proxy it passed, or else by `Origin`. */
 function comesFromElsewhere(request: Request, settings: Settings): boolean {
   const site = request.get('sec-fetch-site');
-  if (site !== undefined && site !== 'same-origin' && site !== 'none') return true;
+  if (site === 'same-origin') return false;
+  if (site !== undefined && site !== 'none') return true;
   const origin = request.get('origin');
   if (origin === undefined) return false;
   if (!URL.canParse(origin)) return true;

@@ -1,6 +1,7 @@
 import connectSessionSequelize from 'connect-session-sequelize';
 import type { RequestHandler } from 'express';
 import session, { type SessionData } from 'express-session';
+import { Op } from 'sequelize';
 
 import type { Settings } from '../dependencies';
 import { hashToken, makeId } from '../ids';
@@ -18,6 +19,8 @@ declare module 'express-session' {
 export const SESSION_COOKIE = 'moiety.session';
 const LIFETIME = 14 * 24 * 60 * 60_000;
 const SWEEP_EVERY = 30 * 60_000;
+/** How exactly it is known when a session was last used; spares a write at every request. */
+const SEEN_EVERY = 60_000;
 
 type Done = (error?: unknown) => void;
 const SequelizeStore = connectSessionSequelize(session.Store);
@@ -25,6 +28,7 @@ const SequelizeStore = connectSessionSequelize(session.Store);
 /** Sessions in the same SQLite file: written through the queue, and named by the hash of the cookie's value. */
 class QueuedStore extends session.Store {
   private readonly inner: InstanceType<typeof SequelizeStore>;
+  private readonly lastSeen = new Map<string, number>();
 
   constructor(private readonly database: Database) {
     super();
@@ -44,11 +48,13 @@ class QueuedStore extends session.Store {
   }
 
   override get(sid: string, done: (error: unknown, data?: SessionData | null) => void): void {
-    this.inner.get(hashToken(sid), (error: unknown, data) => {
-      const ends = data?.cookie.expires;
-      const over = ends ? new Date(ends).getTime() < Date.now() : false;
-      done(error, over ? null : data);
-    });
+    // The column counts: it moves on with every visit, the end noted within the data does not.
+    this.database.models.SessionRecord.findOne({
+      where: { sid: hashToken(sid), expires: { [Op.gt]: new Date() } },
+    }).then(
+      (record) => done(null, record === null ? null : (JSON.parse(record.data) as SessionData)),
+      (error: unknown) => done(error),
+    );
   }
 
   override set(sid: string, data: SessionData, done?: Done): void {
@@ -56,10 +62,22 @@ class QueuedStore extends session.Store {
   }
 
   override touch(sid: string, data: SessionData, done?: Done): void {
-    this.queued((settle) => this.inner.touch(hashToken(sid), data, settle), done);
+    const key = hashToken(sid);
+    const now = Date.now();
+    if (now - (this.lastSeen.get(key) ?? 0) < SEEN_EVERY) {
+      done?.();
+      return;
+    }
+    this.lastSeen.set(key, now);
+    const expires = new Date(data.cookie.expires ?? now + LIFETIME);
+    const { SessionRecord } = this.database.models;
+    this.database
+      .write(() => SessionRecord.update({ expires, lastSeenAt: new Date(now) }, { where: { sid: key } }))
+      .then(() => done?.(), done);
   }
 
   override destroy(sid: string, done?: Done): void {
+    this.lastSeen.delete(hashToken(sid));
     this.queued((settle) => this.inner.destroy(hashToken(sid), settle), done);
   }
 

@@ -57,7 +57,7 @@ export function accountRoutes(dependencies: Dependencies): Router {
     response.status(202).json({ accepted: true });
   });
 
-  router.post('/accounts/confirm', limits.signUp, async (request, response) => {
+  router.post('/accounts/confirm', limits.secrets, async (request, response) => {
     const user = await confirmAccount(dependencies, parseBody(request, confirmAccountSchema).token);
     await beginSession(request, user.id);
     await answerSession(request, response, 201, user.id);
@@ -68,12 +68,12 @@ export function accountRoutes(dependencies: Dependencies): Router {
     response.status(202).json({ accepted: true });
   });
 
-  router.post('/password/reset', limits.signUp, async (request, response) => {
+  router.post('/password/reset', limits.secrets, async (request, response) => {
     await resetPassword(dependencies, parseBody(request, resetPasswordSchema));
     response.status(204).end();
   });
 
-  router.post('/password/change', requireSignedIn, limits.signIn, async (request, response) => {
+  router.post('/password/change', requireSignedIn, limits.secrets, async (request, response) => {
     const { id } = signedIn(request);
     await changePassword(dependencies, id, parseBody(request, changePasswordSchema));
     await beginSession(request, id);

@@ -31,7 +31,7 @@ export const acceptedSchema = z.object({ accepted: z.literal(true) });
 export const mailedTokenSchema = z.string().trim().min(20).max(200);
 /** POST /api/accounts/confirm -> 201 sessionSchema; signs in. 400 `bad-token` when used or expired. */
 export const confirmAccountSchema = z.object({ token: mailedTokenSchema });
-/** POST /api/session -> 200 sessionSchema (with a new csrfToken); DELETE /api/session -> 200 sessionSchema of a visitor. */
+/** POST /api/session -> 200 sessionSchema (with a new csrfToken); DELETE /api/session -> 204; fetch the session again. */
 export const signInSchema = z.object({
   email: emailSchema,
   password: z.string().min(1, 'A password is needed.').max(PASSWORD_LIMITS.longest),

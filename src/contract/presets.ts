@@ -45,7 +45,7 @@ export const duplicatePresetSchema = z.object({
 });
 /** POST /api/presets/:id/versions/:number/restore -> 201 presetBody; makes a new version equal to the old. */
 export const restoreVersionSchema = z.object({ note, baseVersion: z.int().positive() });
-/** POST /api/presets/:id/links -> 201 { link, token, url }: shown once here, kept hashed; url is `/shared/<token>` on PUBLIC_URL. */
+/** POST /api/presets/:id/links -> 201 { link, token, url }: shown once here, kept hashed; url is `/s/<token>` on PUBLIC_URL. */
 export const createLinkSchema = z.object({ label: z.string().trim().max(LIMITS.nameLength).default('') });
 
 export const presetSummarySchema = z.object({

@@ -1,7 +1,10 @@
+import type { Express } from 'express';
+import request from 'supertest';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 
 import type { SessionBody, SessionList } from '@/contract/account';
 
+import { createApp } from '../../server/app';
 import { startTestServer, Visitor, type TestServer } from '../support/test-server';
 
 let server: TestServer;
@@ -23,6 +26,18 @@ async function signUp(email: string, password = 'frogs in the fen'): Promise<Vis
   await visitor.post('/accounts', { name: 'Nia Marsh', email, password });
   await visitor.post('/accounts/confirm', { token: await tokenFromMail(email, 'confirm') });
   return visitor;
+}
+
+/** The session cookie alone, to be carried to another run of the application on the same file. */
+async function signInForCookie(email: string, password: string): Promise<string> {
+  const visitor = new Visitor(server.app);
+  const answer = await visitor.signIn(email, password);
+  const cookies = ([] as string[]).concat(answer.headers['set-cookie'] ?? []);
+  return cookies.find((one) => one.startsWith('moiety.session='))?.split(';')[0] ?? '';
+}
+
+async function sessionBy(cookie: string, app: Express): Promise<SessionBody> {
+  return (await request(app).get('/api/session').set('cookie', cookie)).body as SessionBody;
 }
 
 describe('signing up', () => {
@@ -145,6 +160,31 @@ describe('sessions', () => {
     for (const other of others) expect((await other.session()).user).toBeNull();
   });
 
+  it('move their end and the time last seen with a later visit', async () => {
+    await signUp('rolling@example.org');
+    const { SessionRecord, User } = server.database.models;
+    const user = await User.findOne({ where: { email: 'rolling@example.org' } });
+    const where = { userId: user?.id ?? '' };
+    await SessionRecord.destroy({ where });
+    const cookie = await signInForCookie('rolling@example.org', 'frogs in the fen');
+    const past = new Date(Date.now() - 86_400_000);
+    const soon = new Date(Date.now() + 60_000);
+    // As a session of long ago stands: its end, noted when it began, is nearly there.
+    const record = await SessionRecord.findOne({ where });
+    const data = JSON.parse(record?.data ?? '{}') as { cookie: { expires: string } };
+    data.cookie.expires = past.toISOString();
+    await SessionRecord.update({ expires: soon, lastSeenAt: past, data: JSON.stringify(data) }, { where });
+    // Restarted since, so that nothing is remembered.
+    const restarted = createApp(server.dependencies);
+    expect((await sessionBy(cookie, restarted)).user?.email).toBe('rolling@example.org');
+    await server.database.queue.idle();
+    const after = await SessionRecord.findOne({ where });
+    expect(after?.expires.getTime()).toBeGreaterThan(soon.getTime());
+    expect(after?.lastSeenAt.getTime()).toBeGreaterThan(past.getTime());
+    await SessionRecord.update({ expires: past }, { where });
+    expect((await sessionBy(cookie, restarted)).user).toBeNull();
+  });
+
   it('cannot be ended by someone else', async () => {
     const mine = await signUp('mine@example.org');
     const theirs = await signUp('theirs@example.org');
@@ -161,5 +201,16 @@ describe('without DEMO', () => {
     expect((await visitor.get('/demo/mail')).status).toBe(404);
     expect((await visitor.session()).demo).toBe(false);
     await plain.close();
+  });
+
+  it('lets in no one of the demo, be they seeded or signed in before', async () => {
+    const { dependencies } = server;
+    const cookie = await signInForCookie('student@demo.invalid', 'springtails by sex');
+    expect((await sessionBy(cookie, server.app)).user?.demo).toBe(true);
+    const settings = { ...dependencies.settings, demo: false };
+    const outside = createApp({ ...dependencies, settings, mailbox: null });
+    expect((await sessionBy(cookie, outside)).user).toBeNull();
+    const again = await new Visitor(outside).signIn('student@demo.invalid', 'springtails by sex');
+    expect(again.status).toBe(401);
   });
 });

@@ -31,6 +31,13 @@ describe('settings', () => {
     );
   });
 
+  it('expect a proxy in front of an https address, unless told otherwise', () => {
+    const PUBLIC_URL = 'https://moiety.example.org';
+    expect(readEnvironment({ PUBLIC_URL }).trustProxy).toBe(1);
+    expect(readEnvironment({ PUBLIC_URL, TRUST_PROXY: '2' }).trustProxy).toBe(2);
+    expect(readEnvironment({}).trustProxy).toBe(0);
+  });
+
   it('make cookies secure behind https', () => {
     expect(readEnvironment({ PUBLIC_URL: 'https://moiety.example.org' }).secureCookies).toBe(true);
   });

@@ -36,6 +36,16 @@ describe('requests from elsewhere', () => {
       (await call().set('sec-fetch-site', 'same-origin').send({ document: sampleDocument() })).status,
     ).toBe(201);
   });
+
+  it('believes a browser that says same origin, though a proxy changed the host', async () => {
+    const answer = await researcher
+      .raw('post', '/presets')
+      .set('x-csrf-token', researcher.token)
+      .set('sec-fetch-site', 'same-origin')
+      .set('origin', 'http://localhost:5173')
+      .send({ document: sampleDocument() });
+    expect(answer.status).toBe(201);
+  });
 });
 
 describe('bad input', () => {
@@ -62,6 +72,52 @@ describe('bad input', () => {
     expect(answer.headers['content-type']).toMatch(/application\/json/);
   });
 
+  it.each([
+    ['a body nested beyond measure', `{"document":${'['.repeat(50_000)}${']'.repeat(50_000)}}`],
+    ['a NUL deep inside', '{"document":{"processes":[{"template":{"settings":{"a":"x\\u0000"}}}]}}'],
+    ['a number beyond the largest', '{"document":{"spread":1e999}}'],
+    ['a key that reaches for the prototype', '{"document":{"__proto__":{"title":"x"}}}'],
+  ])('refuses %s', async (_name, text) => {
+    const answer = await researcher
+      .raw('post', '/presets')
+      .set('x-csrf-token', researcher.token)
+      .set('content-type', 'application/json')
+      .send(text);
+    expect([answer.status, code(answer.body)]).toEqual([400, 'invalid']);
+  });
+
+  it('keeps text that only speaks of a NUL', async () => {
+    const title = 'A written \\u0000 is six plain characters';
+    const answer = await researcher.post('/presets', { document: sampleDocument(title) });
+    expect((answer.body as { preset: { title: string } }).preset.title).toBe(title);
+  });
+
+  it('refuses a document beyond its limit that a request could still carry', async () => {
+    const part = { symbol: 'x', name: 'x', hue: 'woad' };
+    const intermediates = Array.from({ length: 60 }, (_one, k) => ({
+      symbol: `a${k}`,
+      formula: Array.from({ length: 900 }, () => 'x').join('+'),
+      meaning: 'm'.repeat(500),
+    }));
+    const processes = Array.from({ length: 120 }, (_one, k) => ({
+      id: `p${k}`,
+      name: 'p',
+      rate: Array.from({ length: 900 }, () => 'x').join('+'),
+      effects: Array.from({ length: 4 }, () => ({
+        class: 'x',
+        amount: '('.repeat(20) + 'x'.padEnd(480) + ')'.repeat(20),
+      })),
+    }));
+    const document = {
+      ...sampleDocument(),
+      populations: [{ ...part, classes: [{ symbol: 'x', name: 'x', start: 1 }] }],
+      intermediates,
+      processes,
+    };
+    const answer = await researcher.post('/presets', { document });
+    expect([answer.status, code(answer.body)]).toEqual([413, 'too-large']);
+  });
+
   it('refuses a body that is no JSON, and one that is too large', async () => {
     const call = () =>
       researcher
@@ -79,6 +135,9 @@ describe('bad input', () => {
     '/presets?pageSize=100000',
     '/presets?sort=drop',
     '/presets?kind[]=x',
+    '/presets?owner=%00',
+    '/presets?tag=a%00b',
+    '/presets?search=a&search=b',
   ])('refuses %s', async (path) => {
     const { status } = await researcher.get(path);
     expect(path.includes('[]') ? [200, 400] : [400]).toContain(status);
@@ -92,7 +151,7 @@ describe('bad input', () => {
     },
   );
 
-  it.each(['"', '*', 'NEAR(', 'a OR b', 'title:x', '--', '%', '_', '🦎', '\u0000'])(
+  it.each(['"', '*', 'NEAR(', 'a OR b', 'title:x', '--', '%', '_', '🦎'])(
     'searches for %j without a fault',
     async (text) => {
       const { status } = await researcher.get(`/presets?search=${encodeURIComponent(text)}`);
@@ -135,6 +194,34 @@ describe('headers and cookies', () => {
 });
 
 describe('limits on attempts', () => {
+  it('does not count sign-ins that succeed', async () => {
+    const strict = await startTestServer({ limits: { windowMinutes: 15, signIn: 2, signUp: 3, mail: 2 } });
+    const statuses: number[] = [];
+    for (let k = 0; k < 4; k += 1) {
+      const answer = await new Visitor(strict.app).signIn('student@demo.invalid', 'springtails by sex');
+      statuses.push(answer.status);
+    }
+    expect(statuses).toEqual([200, 200, 200, 200]);
+    await strict.close();
+  });
+
+  it('stops one place that tries many accounts, and mail to one address by either way', async () => {
+    const strict = await startTestServer({ limits: { windowMinutes: 15, signIn: 1, signUp: 9, mail: 2 } });
+    const visitor = new Visitor(strict.app);
+    const tries: number[] = [];
+    for (let k = 0; k < 11; k += 1) tries.push((await visitor.signIn(`a${k}@example.org`, 'wrong')).status);
+    expect(tries.slice(0, 10)).toEqual(Array(10).fill(401));
+    expect(tries[10]).toBe(429);
+    const email = 'flooded@example.org';
+    const sent = [
+      await visitor.post('/accounts', { name: 'X', email, password: 'a long enough one' }),
+      await visitor.post('/password/forgotten', { email }),
+      await visitor.post('/accounts', { name: 'X', email, password: 'a long enough one' }),
+    ];
+    expect(sent.map(({ status }) => status)).toEqual([202, 202, 429]);
+    await strict.close();
+  });
+
   it('stops guessing after a few tries, for that account alone', async () => {
     const strict = await startTestServer({ limits: { windowMinutes: 15, signIn: 3, signUp: 3, mail: 2 } });
     const visitor = new Visitor(strict.app);
