@@ -84,6 +84,8 @@ const environmentSchema = z
   .refine(({ DEMO, HOST }) => !DEMO || HOST === undefined || LOOPBACK.includes(HOST), {
     path: ['HOST'],
     message: 'With DEMO=1 the server listens on loopback only: leave HOST out, or use 127.0.0.1.',
+    // Said beside the faults of other variables, not after them.
+    when: ({ value }) => typeof value === 'object' && value !== null,
   });
 
 export interface Environment {

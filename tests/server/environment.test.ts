@@ -22,6 +22,9 @@ describe('settings', () => {
   it('listen on loopback alone in the demo', () => {
     expect(readEnvironment({ DEMO: '1' }).host).toBe('127.0.0.1');
     expect(() => readEnvironment({ DEMO: '1', HOST: '0.0.0.0' })).toThrow(/loopback only/);
+    expect(() => readEnvironment({ DEMO: '1', HOST: '0.0.0.0', PORT: 'x' })).toThrow(
+      /PORT: [\s\S]*HOST: .*loopback only/,
+    );
   });
 
   it('name every bad variable at once, in words', () => {
