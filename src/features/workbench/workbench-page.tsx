@@ -54,7 +54,7 @@ function OpenedBench({ opened, userId }: { readonly opened: Opened; readonly use
       // Saving will find the newer version and ask how to keep both.
       store.getState().set({ origin: { ...origin, version: draft.baseVersion } });
     }
-    store.getState().edit('restoring the draft', () => draft.document);
+    store.getState().edit('Restore the draft', () => draft.document);
     setDraft(null);
   };
   const handleDiscard = () => {

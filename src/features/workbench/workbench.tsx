@@ -9,16 +9,19 @@ import { WorkbenchHeader } from './header/workbench-header';
 import { BenchLayout } from './layout/bench-layout';
 import { Notice } from './layout/notice';
 import { SharedBanner } from './layout/shared-banner';
+import { isUnbegun, StartGuide } from './layout/start-guide';
 import { PHONE, useMedia } from './layout/use-media';
 import { useViewInUrl } from './layout/use-view-in-url';
 import { Panes } from './panes';
 import { ModelRail } from './rail';
+import { useWorkbench } from './state/store';
 import { RangeStrip } from './strip';
 
 /** All of the workbench around one document: rails, panes, strip, commands and dialogs. */
 export function Workbench({ draftKey }: { readonly draftKey: string | null }) {
   const context = useCommandContext();
   const readOnly = useMedia(PHONE);
+  const unbegun = useWorkbench((state) => isUnbegun(state.document));
   useEngineDriver();
   useShortcuts(context);
   useViewInUrl();
@@ -29,7 +32,7 @@ export function Workbench({ draftKey }: { readonly draftKey: string | null }) {
         header={<WorkbenchHeader context={context} readOnly={readOnly} />}
         banner={<SharedBanner />}
         rail={<ModelRail readOnly={readOnly} />}
-        panes={<Panes />}
+        panes={unbegun && !readOnly ? <StartGuide /> : <Panes />}
         findings={<Findings />}
         strip={<RangeStrip />}
       />

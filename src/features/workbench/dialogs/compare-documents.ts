@@ -1,4 +1,4 @@
-import type { PresetDocument, Process, Trait, TraitEntry } from '@/engine/schema/preset';
+import type { PresetDocument, Trait, TraitEntry } from '@/engine/schema/preset';
 import { showNumber } from '@/lib/parse-number';
 
 export const DIFFERENCE_SECTIONS = [
@@ -132,13 +132,26 @@ function showIntermediates(document: PresetDocument): Shown {
   );
 }
 
-function showProcess(process: Process): Shown {
-  const name = process.name || process.id;
-  return {
-    [`${name}, rate`]: process.rate,
-    [`${name}, effects`]: process.effects.map((one) => `${one.class} by ${one.amount}`).join(', '),
-    [`${name}, may be negative`]: text(process.signed),
-  };
+/** Rows of all processes; two of one name are told apart by their ids. */
+function showProcesses(document: PresetDocument): Shown {
+  const names = document.processes.map((one) => one.name || one.id);
+  const rows = document.processes.map((process, at) => {
+    const own = names[at] ?? process.id;
+    const name = names.filter((one) => one === own).length > 1 ? `${own} (${process.id})` : own;
+    return {
+      [`${name}, rate`]: process.rate,
+      [`${name}, effects`]: process.effects.map((one) => `${one.class} by ${one.amount}`).join(', '),
+      [`${name}, kind`]: process.kind,
+      [`${name}, may be negative`]: text(process.signed),
+    };
+  });
+  const order = document.processes.map((one) => one.id).join(', ');
+  return Object.assign({}, ...rows, { 'Order by id': text(order) });
+}
+
+function showPane(pane: PresetDocument['view']['panes'][number]): string {
+  const axes = pane.axes.map((axis) => `${axis.logarithm ? 'log ' : ''}${axis.quantity} ${axis.of}`.trim());
+  return axes.length === 0 ? pane.view : `${pane.view} (${axes.join(' × ')})`;
 }
 
 function showOther(document: PresetDocument): Shown {
@@ -154,8 +167,8 @@ function showOther(document: PresetDocument): Shown {
         .map((one) => `${one.parameter} from ${showNumber(one.from)} to ${showNumber(one.to)}`)
         .join(', '),
     ),
-    'Known facts': text(document.knownFacts.length),
-    Views: text(document.view.panes.map((one) => one.view).join(', ')),
+    'Known facts': text(document.knownFacts.map((fact) => JSON.stringify(fact)).join('; ')),
+    Views: text(document.view.panes.map(showPane).join(', ')),
     'Pooled twin shown': text(document.view.showTwin),
   };
 }
@@ -163,15 +176,13 @@ function showOther(document: PresetDocument): Shown {
 /** What differs between two documents, field by field; whole things that were added have nothing before. */
 export function compareDocuments(a: PresetDocument, b: PresetDocument): readonly Difference[] {
   const traits = (document: PresetDocument): Shown => Object.assign({}, ...document.traits.map(showTrait));
-  const processes = (document: PresetDocument): Shown =>
-    Object.assign({}, ...document.processes.map(showProcess));
   return [
     ...differ('Model', showModel(a), showModel(b)),
     ...differ('Populations', showPopulations(a), showPopulations(b)),
     ...differ('Traits', traits(a), traits(b)),
     ...differ('Parameters', showParameters(a), showParameters(b)),
     ...differ('Intermediate formulas', showIntermediates(a), showIntermediates(b)),
-    ...differ('Processes', processes(a), processes(b)),
+    ...differ('Processes', showProcesses(a), showProcesses(b)),
     ...differ('Other', showOther(a), showOther(b)),
   ];
 }

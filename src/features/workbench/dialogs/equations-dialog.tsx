@@ -33,7 +33,7 @@ export function EquationsDialog() {
     }
     const made = documentFromEquations({ equations: lines, parameters, sign, title });
     if (!made.ok) return setProblem(`Line ${made.line + 1}: ${made.message}`);
-    edit('typing equations', () => made.document);
+    edit('Type equations', () => made.document);
     set({ dialog: null, notice: 'The equations are on the bench. Undo brings back the model before.' });
   };
 

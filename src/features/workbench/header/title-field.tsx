@@ -20,6 +20,7 @@ export function TitleField({ readOnly }: { readonly readOnly: boolean }) {
         <input
           aria-label="Title of the preset"
           value={title}
+          size={1}
           maxLength={160}
           placeholder="Untitled"
           autoComplete="off"

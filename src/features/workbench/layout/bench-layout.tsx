@@ -83,16 +83,10 @@ export function BenchLayout({ header, banner, rail, panes, findings, strip }: Be
       )}
       <div className={joinClasses('flex min-h-0 flex-1', phone && 'flex-col')}>
         {railDocked ? (
-          <>
-            <aside
-              aria-label="Model"
-              className="min-h-0 shrink-0 overflow-y-auto bg-panel"
-              style={{ width: railWidth }}
-            >
-              {rail}
-            </aside>
+          <aside aria-label="Model" className="flex min-h-0 shrink-0 bg-panel" style={{ width: railWidth }}>
+            <div className="min-w-0 flex-1 overflow-y-auto">{rail}</div>
             <RailEdge width={railWidth} onChange={setRailWidth} />
-          </>
+          </aside>
         ) : null}
         <main
           id="panes"

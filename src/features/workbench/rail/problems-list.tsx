@@ -9,6 +9,7 @@ import { jumpToField, pathKey } from './rail-state';
 /** What stands in the way of the model, at the top of the rail; choosing one goes to its field. */
 export function ProblemsList() {
   const report = useWorkbench((state) => state.report);
+  const hasShown = useWorkbench((state) => state.shownReport !== null);
   const problems = (report?.diagnostics ?? []).filter((one) => one.severity !== 'note');
   const errors = problems.filter((one) => one.severity === 'error').length;
   if (!report || problems.length === 0) return null;
@@ -16,7 +17,7 @@ export function ProblemsList() {
     <section aria-label="Problems" className="border-b border-hairline bg-raised px-4 py-3">
       <p role="status" className="text-sm font-semibold text-caution">
         {errors > 0 ? plural(errors, 'problem') : plural(problems.length, 'remark')}
-        {!report.valid ? (
+        {!report.valid && hasShown ? (
           <span className="font-normal text-muted">. The plots show the last valid model.</span>
         ) : null}
       </p>

@@ -21,7 +21,7 @@ export function RailSection({ name, title, aside, actions, children }: RailSecti
   return (
     <section aria-labelledby={`${id}-title`} className="border-b border-hairline px-4 py-3 last:border-b-0">
       <div className="flex min-h-8 items-center gap-2">
-        <h2 id={`${id}-title`} className="min-w-0 flex-1 text-lg">
+        <h2 id={`${id}-title`} className="shrink-0 text-lg">
           <button
             type="button"
             aria-expanded={open}
@@ -37,7 +37,7 @@ export function RailSection({ name, title, aside, actions, children }: RailSecti
             {title}
           </button>
         </h2>
-        {aside ? <span className="text-sm text-muted">{aside}</span> : null}
+        <span className="min-w-0 flex-1 truncate text-right text-sm text-muted">{aside}</span>
         {open ? actions : null}
       </div>
       <div id={id} hidden={!open} className="pt-2">

@@ -29,11 +29,14 @@ export function ParameterRow({ index, onSlide }: ParameterRowProps) {
   const set = (value: number, merge?: string) =>
     edit(`Change ${parameter.symbol}`, (document) => setParameterValue(document, index, value), merge);
   return (
-    <div className="py-0.5">
+    <div className="py-0.5 font-text text-[15px]">
       <div className="grid grid-cols-[minmax(0,1fr)_minmax(4rem,5.5rem)_4.75rem_1.5rem] items-center gap-x-2">
-        <span className="truncate text-sm" title={parameter.meaning || `${name}, ${parameter.symbol}`}>
-          {name === parameter.symbol ? null : <>{name} </>}
-          <span className="figures text-muted italic">{parameter.symbol}</span>
+        <span
+          className="flex min-w-0 gap-1 text-sm"
+          title={parameter.meaning || `${name}, ${parameter.symbol}`}
+        >
+          {name === parameter.symbol ? null : <span className="truncate">{name}</span>}
+          <span className="figures shrink-0 text-muted italic">{parameter.symbol}</span>
         </span>
         <Slider
           label={`${name}, slider`}

@@ -16,7 +16,7 @@ export function PopulationSection() {
     <RailSection
       name="populations"
       title="Populations"
-      aside={densityUnit ? `start values in ${densityUnit}` : 'start values'}
+      aside={densityUnit ? `start values, ${densityUnit}` : 'start values'}
       actions={
         <Button
           look="quiet"

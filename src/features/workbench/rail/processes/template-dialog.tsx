@@ -85,7 +85,7 @@ export function TemplateDialog({ name, earlier, onClose }: TemplateDialogProps) 
               <FieldMessage key={one.message}>{one.message}</FieldMessage>
             ))}
         </div>
-        <div className="grid content-between gap-4">
+        <div className="grid gap-4 self-start md:sticky md:top-0">
           <TemplatePreview outcome={outcome} />
           <div className="flex justify-end gap-2">
             {earlier ? (

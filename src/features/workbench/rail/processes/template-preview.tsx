@@ -1,6 +1,11 @@
+import { lazy, Suspense } from 'react';
+
 import type { TemplateOutcome } from '@/engine/schema/templates';
 
 import { useWorkbench } from '../../state/store';
+
+/** Typesetting needs the parser, which nothing else on the first page does. */
+const TypesetChange = lazy(() => import('./typeset-change'));
 
 /** What a template would write: formulas, effects, and what it adds to the table and the parameters. */
 export function TemplatePreview({ outcome }: { readonly outcome: TemplateOutcome }) {
@@ -31,6 +36,9 @@ export function TemplatePreview({ outcome }: { readonly outcome: TemplateOutcome
       className="grid gap-3 rounded-lg border border-hairline bg-panel p-3 text-sm"
     >
       <h3 className="text-base">What will be written</h3>
+      <Suspense fallback={null}>
+        <TypesetChange processes={written} formulas={formulas} />
+      </Suspense>
       <ul className="grid max-h-[45vh] gap-2 overflow-y-auto">
         {formulas.map((one) => (
           <li key={one.symbol}>
