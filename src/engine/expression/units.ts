@@ -163,7 +163,8 @@ class UnitReader {
   /** A power that follows: `^-2`, `^(1/2)`; after a word also plain digits as in m2 or week-1. */
   private power(afterWord = false): number {
     const word = this.words[this.next];
-    if (word === undefined) return 1;
+    // A bare ^ is left standing, so that the text is refused.
+    if (word === undefined || word === '^') return 1;
     const written = word.startsWith('^');
     if (!written && !(afterWord && /^[-+]?\d+$/.test(word))) return 1;
     this.next += 1;

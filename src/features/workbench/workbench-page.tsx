@@ -13,7 +13,8 @@ import { fetchShared } from './dialogs/api/fetch-shared';
 import { originOf } from './dialogs/origin-of';
 import { draftKey } from './drafts/draft-key';
 import { DraftOffer } from './drafts/draft-offer';
-import { forgetDraft, readDraft, sameDocument } from './drafts/draft-storage';
+import { forgetDraft, readDraft } from './drafts/draft-storage';
+import { sameDocument } from './state/same-document';
 import { createWorkbenchStore, WorkbenchContext, type Origin } from './state/store';
 import { Workbench } from './workbench';
 

@@ -7,6 +7,7 @@ import { COMMANDS } from '@/features/workbench/commands/index';
 import { matchesShortcut } from '@/features/workbench/commands/shortcut';
 import { useShortcuts } from '@/features/workbench/commands/use-shortcuts';
 import { saveVersion } from '@/features/workbench/commands/save-version';
+import { isDirty } from '@/features/workbench/dialogs/saving-rules';
 import { useBenchUi } from '@/features/workbench/layout/bench-ui';
 import { TraitSection } from '@/features/workbench/rail/traits/trait-section';
 import { readSweep, writeSweep } from '@/features/workbench/layout/use-view-in-url';
@@ -76,6 +77,17 @@ describe('commands', () => {
       dialog: null,
       notice: 'Nothing has changed since it was saved.',
     });
+  });
+
+  it('count an edit and its reverse as nothing to save', async () => {
+    const { store } = renderOnBench(null, twoSexes(), preset(['view', 'save']));
+    const spread = (value: number) =>
+      store.getState().edit('Turn the spread', (document) => ({ ...document, spread: value }));
+    spread(0.5);
+    expect(isDirty(store.getState())).toBe(true);
+    spread(1);
+    expect(store.getState().document).not.toBe(store.getState().saved);
+    expect(isDirty(store.getState())).toBe(false);
   });
 
   it('open the save dialog only for those who may save', () => {

@@ -1,3 +1,6 @@
+import type { PresetDocument } from '@/engine/schema/preset';
+
+import { sameDocument } from '../state/same-document';
 import type { WorkbenchState } from '../state/store';
 
 /** Why the document cannot be saved as a version now; null where it can. */
@@ -15,7 +18,7 @@ export function refuseSave(
     return origin.starter
       ? 'Starter presets stay as they are; save a copy of your own.'
       : 'You may look at this preset but not save it; save a copy of your own.';
-  return state.document === state.saved ? 'Nothing has changed since it was saved.' : null;
+  return isDirty(state) ? null : 'Nothing has changed since it was saved.';
 }
 
 /** Why there is nothing to share yet; null where there is. */
@@ -27,6 +30,18 @@ export function refuseShare(state: Pick<WorkbenchState, 'origin'>): string | nul
   return may ? null : 'Only those who may share this preset can make links to it.';
 }
 
+/** Answer for the pair asked about last: many views ask about the same one. */
+let last: {
+  readonly document: PresetDocument;
+  readonly saved: PresetDocument;
+  readonly dirty: boolean;
+} | null = null;
+
+/** Whether the document holds anything that is not saved; an edit and its reverse leave nothing. */
 export function isDirty(state: Pick<WorkbenchState, 'document' | 'saved'>): boolean {
-  return state.document !== state.saved;
+  const { document, saved } = state;
+  if (document === saved) return false;
+  if (!last || last.document !== document || last.saved !== saved)
+    last = { document, saved, dirty: !sameDocument(document, saved) };
+  return last.dirty;
 }

@@ -43,8 +43,3 @@ export function readDraft(key: string): Draft | null {
     return null;
   }
 }
-
-/** Whether two documents hold the same, whatever objects they are made of. */
-export function sameDocument(a: PresetDocument, b: PresetDocument): boolean {
-  return a === b || JSON.stringify(a) === JSON.stringify(b);
-}

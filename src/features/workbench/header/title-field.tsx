@@ -14,7 +14,10 @@ export function TitleField({ readOnly }: { readonly readOnly: boolean }) {
     <>
       <h1 className="sr-only">{title}</h1>
       <span className="relative inline-grid max-w-full min-w-0 items-center font-semibold">
-        <span aria-hidden className="invisible col-start-1 row-start-1 truncate px-1.5 whitespace-pre">
+        <span
+          aria-hidden
+          className="invisible col-start-1 row-start-1 truncate border border-transparent pr-3 pl-1.5 whitespace-pre"
+        >
           {title || 'Untitled'}
         </span>
         <input
