@@ -47,7 +47,10 @@ module.exports = {
       '^src/(components|lib|graphics|presets|contract)/',
       '^src/engine/(schema|expression)/',
     ]),
-    only('account', '^src/features/account/', ['^src/(components|lib|contract)/']),
+    only('account', '^src/features/account/', [
+      '^src/(components|lib|contract)/',
+      '^src/engine/schema/zod\\.ts$',
+    ]),
     only('lab', '^src/features/lab/', ['^src/(components|lib|contract)/']),
     only('graphics', '^src/graphics/', [
       '^src/lib/',

@@ -7,14 +7,12 @@ import { QueryClientProvider } from '@tanstack/react-query';
 import { StrictMode } from 'react';
 import { createRoot } from 'react-dom/client';
 import { RouterProvider } from 'react-router-dom';
-import { z } from 'zod';
 
 import { createQueryClient } from '@/lib/query-client';
 import { startTheme } from '@/lib/theme';
 
 import { createRouter } from './router';
 
-z.config({ jitless: true });
 startTheme();
 
 const root = document.getElementById('root');

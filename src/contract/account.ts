@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import { z } from '../engine/schema/zod';
 
 import { ROLES } from './rights';
 

@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import { z } from '../engine/schema/zod';
 
 /** Every refusal has this body. `fields` maps a body path (`document.title`) to a sentence. */
 export const errorBodySchema = z.object({

@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import { z } from '../engine/schema/zod';
 
 import { LIMITS } from '../engine/schema/limits';
 import { presetSchema } from '../engine/schema/preset';

@@ -1,9 +1,7 @@
-import { z } from 'zod';
+import { z } from './zod';
 
 import { LIMITS } from './limits';
 import { isSymbol } from './symbols';
-
-z.config({ jitless: true });
 
 /**
  * The preset document: a structured population model as data (`*.moiety.json`).

@@ -1,9 +1,7 @@
-import { z } from 'zod';
+import { z } from './zod';
 
 import { LIMITS } from './limits';
 import { presetSchema } from './preset';
-
-z.config({ jitless: true });
 
 /**
  * A study: a model and the tasks to run on it, as one JSON document. Exported by the workbench, run by batch.

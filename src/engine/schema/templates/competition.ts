@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import { z } from '../zod';
 
 import { upperFirst } from '../document-symbols';
 import type { Template } from './contract';

@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import { z } from '../zod';
 
 import type { Population } from '../preset';
 import { upperFirst } from '../document-symbols';

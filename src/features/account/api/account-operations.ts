@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import { z } from '@/engine/schema/zod';
 
 import { demoAccountsSchema, mailListSchema, mailSchema, sessionListSchema } from '@/contract/account';
 import { api } from '@/lib/api-client';
