@@ -38,8 +38,9 @@ export class Bench {
 
   async chooseSwept(search: string): Promise<void> {
     await this.strip.getByRole('button', { name: /Choose a parameter/ }).click();
-    await this.page.getByRole('combobox').last().fill(search);
-    await this.page.getByRole('option').first().click();
+    const chooser = this.page.getByRole('dialog');
+    await chooser.getByRole('combobox').fill(search);
+    await chooser.getByRole('option').first().click();
   }
 
   async sweep(from: string, to: string): Promise<void> {

@@ -48,12 +48,14 @@ test('signing up, confirming by mail, and a forgotten password', async ({ page }
   await page.getByRole('button', { name: 'Account of Ines Carr' }).click();
   await page.getByRole('menuitem', { name: 'Sign out' }).click();
   await page.getByRole('link', { name: 'Forgotten password' }).click();
+  await expect(page.getByRole('heading', { name: 'Forgotten password' })).toBeVisible();
   await page.getByLabel('E-mail').fill('ines@example.org');
   await page.getByRole('button', { name: 'Send the link' }).click();
   await page.getByRole('link', { name: 'Open the mail of the demo' }).click();
   await page.getByRole('link', { name: /reset\?token/ }).click();
   await page.getByRole('textbox', { name: 'New password' }).fill('heath and heather');
   await page.getByRole('button', { name: 'Change the password' }).click();
+  await expect(page.getByRole('heading', { name: 'Sign in' })).toBeVisible();
   await page.getByLabel('E-mail').fill('ines@example.org');
   await page.getByLabel('Password').fill('heath and heather');
   await page.getByRole('button', { name: 'Sign in', exact: true }).click();
