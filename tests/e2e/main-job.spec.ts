@@ -36,10 +36,12 @@ test('a researcher defines, explores, sweeps, keeps and shares a split populatio
   await bench.setNumber('Mortality of female ladybirds', '0,06');
   await expect(page.getByRole('textbox', { name: 'Mortality of female ladybirds' })).toHaveValue('0.06');
   await expect(page.getByRole('region', { name: 'Equations' }).locator('.katex').first()).toBeVisible();
-  await expect(bench.findings.getByRole('heading', { name: /^Coexistence/ })).toBeVisible();
+  await expect(bench.findings.getByRole('heading', { name: /^Coexistence/ })).toHaveCount(1, {
+    timeout: 30_000,
+  });
 
   await bench.chooseSwept('Carrying capacity');
-  await bench.sweep('0.2', '12');
+  await bench.sweep('0.2', '30');
   const points = bench.findings.getByRole('region', { name: /Special points/ });
   await expect(points.getByRole('row', { name: /Hopf/ })).toBeVisible({ timeout: 60_000 });
   await expect(points.getByRole('row', { name: /transcritical/ })).toBeVisible();
@@ -49,7 +51,7 @@ test('a researcher defines, explores, sweeps, keeps and shares a split populatio
 
   const capacity = page.getByRole('textbox', { name: 'Carrying capacity of aphids, value' });
   const before = await capacity.inputValue();
-  await points.getByRole('row', { name: /Hopf/ }).getByRole('button').first().click();
+  await points.locator('button:enabled', { hasText: 'Hopf' }).first().click();
   await expect(capacity).not.toHaveValue(before);
 
   await page.getByRole('button', { name: 'Save version' }).click();
