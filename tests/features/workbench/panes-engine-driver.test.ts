@@ -59,7 +59,7 @@ describe('the engine driver', () => {
   it('follows moved numbers without compiling, one request at a time, the newest last', async () => {
     const { client, models, explored, mostAtOnce } = watched();
     const store = bench(client);
-    await vi.waitFor(() => expect(store.getState().result).not.toBeNull(), 10_000);
+    await vi.waitFor(() => expect(store.getState().result?.equilibria ?? null).not.toBeNull(), 10_000);
     const compiled = models.length;
     for (let k = 1; k <= 30; k++) {
       store.getState().edit('Move K', (document) => withParameterValue(document, 'K', 3 + k / 100), 'K');
@@ -76,7 +76,7 @@ describe('the engine driver', () => {
 
   it('keeps the last valid model on show while a formula is wrong', async () => {
     const store = bench(watched().client);
-    await vi.waitFor(() => expect(store.getState().result).not.toBeNull(), 10_000);
+    await vi.waitFor(() => expect(store.getState().result?.equilibria ?? null).not.toBeNull(), 10_000);
     const before = store.getState();
     before.edit('Type a formula', (document) => ({
       ...document,

@@ -152,8 +152,10 @@ export class EngineDriver {
 
   private async explore(): Promise<void> {
     const { document, planeRequest } = this.store.getState();
-    const request = this.request();
-    this.asked = { document, plane: planeRequest };
+    // The first picture does not wait for the search: trajectories at once, equilibria with the next look.
+    const first = this.store.getState().result === null && this.mode === 'search';
+    const request = first ? { ...this.request(), equilibria: 'none' as const } : this.request();
+    this.asked = first ? null : { document, plane: planeRequest };
     performance.mark('moiety:explore-asked');
     const answer = await this.engine.explore(request);
     if (this.stopped) return;
