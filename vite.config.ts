@@ -21,6 +21,7 @@ export default defineConfig(({ isSsrBuild }) => ({
         test: {
           name: 'engine',
           environment: 'node',
+          setupFiles: ['tests/support/property-seed.ts'],
           include: ['tests/{engine,problems,presets,batch,workers}/**/*.test.ts'],
           testTimeout: 30_000,
         },

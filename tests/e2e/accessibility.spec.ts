@@ -43,11 +43,23 @@ for (const colorScheme of ['light', 'dark'] as const) {
     test('the workbench in each arrangement', async ({ page }) => {
       await signInAs(page, 'Rui Maddock');
       await openStarter(page, 'saturating-two-sex-predator');
+      await expect(page.getByRole('region', { name: /Special points/ })).toBeVisible({ timeout: 30_000 });
       for (const arrangement of ['Explore', 'Sweep', 'Model']) {
         await page.getByRole('tab', { name: arrangement, exact: true }).click();
         await page.waitForTimeout(800);
         expect(await seriousFindings(page), arrangement).toEqual([]);
       }
+      for (const name of ['Export', 'Save a copy']) {
+        await page.getByRole('button', { name, exact: true }).click();
+        await expect(page.getByRole('dialog')).toBeVisible();
+        expect(await seriousFindings(page), name).toEqual([]);
+        await page.keyboard.press('Escape');
+      }
+      await page.getByRole('button', { name: 'Add process' }).first().click();
+      await page.getByRole('menuitem', { name: 'Predation' }).click();
+      await expect(page.getByRole('dialog')).toBeVisible();
+      expect(await seriousFindings(page), 'template').toEqual([]);
+      await page.keyboard.press('Escape');
       await page.keyboard.press('Control+k');
       await expect(page.getByRole('dialog')).toBeVisible();
       expect(await seriousFindings(page), 'palette').toEqual([]);

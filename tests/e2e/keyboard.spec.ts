@@ -77,3 +77,63 @@ test('typing a model, sweeping it, going to a special point and saving, by keybo
   await page.keyboard.press('Enter');
   await expect(page.getByText(/version 1 · saved/)).toBeVisible();
 });
+
+test('defining a split population from nothing, by keyboard', async ({ page }) => {
+  test.setTimeout(150_000);
+  await page.goto('/sign-in');
+  await expect(page.getByRole('button', { name: /Rui Maddock/ })).toBeVisible();
+  await tabTo(page, /Rui Maddock/);
+  await page.keyboard.press('Enter');
+  await expect(page.getByRole('heading', { name: 'Desk of Rui Maddock' })).toBeVisible();
+  await tabTo(page, /^New preset$/);
+  await page.keyboard.press('Enter');
+  await expect(page.getByRole('heading', { name: 'Begin a model' })).toBeVisible();
+
+  for (const name of ['Mites', 'Thrips']) {
+    await tabTo(page, /Name of the population/);
+    await page.keyboard.type(name);
+    await page.keyboard.press('Enter');
+  }
+  await tabTo(page, /Population to split/);
+  await page.keyboard.press('ArrowDown');
+  await tabTo(page, /Names of its classes/);
+  await page.keyboard.type('males, females');
+  await page.keyboard.press('Enter');
+  await expect(page.getByRole('textbox', { name: 'Name of class T1' })).toHaveValue('males');
+
+  await tabTo(page, /^Logistic growth$/);
+  await page.keyboard.press('Enter');
+  await expect(page.getByRole('dialog', { name: 'Logistic growth' })).toBeVisible();
+  await tabTo(page, /^Add$/);
+  await page.keyboard.press('Enter');
+  for (const [template, population] of [
+    ['Predation', null],
+    ['Deaths', 'Thrips'],
+  ] as const) {
+    await tabTo(page, /^Add process|^Process$/);
+    await page.keyboard.press('Enter');
+    await expect(page.getByRole('menu')).toBeVisible();
+    await page.keyboard.type(template);
+    await page.keyboard.press('Enter');
+    await expect(page.getByRole('dialog', { name: template })).toBeVisible();
+    if (population) {
+      await tabTo(page, /^Population/);
+      await page.keyboard.type(population);
+    }
+    await tabTo(page, /^Add$/);
+    await page.keyboard.press('Enter');
+    await expect(page.getByRole('dialog')).toBeHidden();
+  }
+  await tabTo(page, /Mortality of male thrips/);
+  await page.keyboard.press('Control+a');
+  await page.keyboard.type('0.8');
+  await page.keyboard.press('Enter');
+  await expect(
+    page
+      .getByRole('complementary', { name: 'Findings' })
+      .getByText(/The split/)
+      .first(),
+  ).toBeVisible({
+    timeout: 30_000,
+  });
+});

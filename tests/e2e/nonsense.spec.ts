@@ -15,6 +15,9 @@ test('a formula that cannot be read is marked, and the last valid model stays', 
   await expect(problems).toContainText(/yy/);
   await expect(page.getByText(/Did you mean/).first()).toBeVisible();
   await expect(bench.findings.getByRole('heading', { name: /^Coexistence/ })).toBeVisible();
+  await rate.fill('a*(x*y');
+  await rate.press('Enter');
+  await expect(problems).toContainText(/parenthes/);
   await rate.fill('2x');
   await rate.press('Enter');
   await expect(problems).toContainText(/2\*x/);
@@ -47,6 +50,15 @@ test('shares that do not sum to one are marked', async ({ page }) => {
   await share.fill('0.8');
   await share.press('Enter');
   await expect(page.getByRole('region', { name: 'Problems' })).toContainText(/sum to 1/);
+  await expect(
+    page
+      .getByRole('complementary', { name: 'Findings' })
+      .getByText(/^Coexistence/)
+      .first(),
+  ).toBeVisible();
+  await page.getByRole('button', { name: /^Undo/ }).click();
+  await expect(share).toHaveValue('0.5');
+  await expect(page.getByRole('region', { name: 'Problems' })).toBeHidden();
 });
 
 test('a draft outlives the tab and is offered again', async ({ page, context }) => {
@@ -92,4 +104,7 @@ test('of two people who save over each other the second is told and keeps both',
   await dialog.getByRole('button', { name: /copy/i }).click();
   await expect(page.getByText(/version 1 · saved/)).toBeVisible();
   await expect(page.getByRole('textbox', { name: 'growth, value' })).toHaveValue('0.8');
+  await other.reload();
+  await expect(other.getByText(/version 2/)).toBeVisible();
+  await expect(other.getByRole('textbox', { name: 'growth, value' })).toHaveValue('0.7');
 });

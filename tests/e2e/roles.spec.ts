@@ -22,6 +22,28 @@ test('a student opens a lab preset, keeps a copy, and cannot save over it', asyn
   await expect(page.getByRole('button', { name: 'Save version' })).toBeVisible();
 });
 
+test('a collaborator sees a lab preset, and saves only copies', async ({ page }) => {
+  await signInAs(page, 'Colm Lichfield');
+  await page.goto('/presets?kind=lab');
+  await page.getByRole('link', { name: /Jumping spiders.*lab copy/ }).click();
+  await expect(page.getByRole('button', { name: 'Save a copy' })).toBeVisible();
+  await expect(page.getByRole('button', { name: 'Save version' })).toHaveCount(0);
+  await expect(page.getByRole('button', { name: 'Share', exact: true })).toBeDisabled();
+});
+
+test('sessions are listed and the others ended', async ({ page, browser }) => {
+  await signInAs(page, 'Colm Lichfield');
+  const other = await (await browser.newContext()).newPage();
+  await signInAs(other, 'Colm Lichfield');
+  await page.goto('/account');
+  const sessions = page.getByRole('region', { name: 'Sessions' });
+  await expect(sessions.getByText('this one')).toHaveCount(1);
+  await sessions.getByRole('button', { name: 'End all others' }).click();
+  await expect(sessions.getByRole('listitem')).toHaveCount(1);
+  await other.goto('/presets');
+  await expect(other.getByRole('heading', { name: 'Sign in' })).toBeVisible();
+});
+
 test('a visitor is asked to sign in and comes back to the page asked for', async ({ page }) => {
   await page.goto('/presets?kind=starter');
   await expect(page.getByRole('heading', { name: 'Sign in' })).toBeVisible();

@@ -96,7 +96,8 @@ describe('against the derivatives of the graph', () => {
           Float64Array,
           Float64Array,
         ];
-        const state = Float64Array.from(u);
+        // Not a hair from a corner such as sqrt(x^2): there derivatives are differences of huge numbers.
+        const state = Float64Array.from(u, (value) => (Math.abs(value) < 1e-6 ? 0 : value));
         program.prepare(Float64Array.from(p));
         taylor.prepare(Float64Array.from(p));
         program.evaluate(0, t, state, expected);
