@@ -21,6 +21,15 @@ async function tabTo(page: Page, name: RegExp): Promise<void> {
   throw new Error(`Tab never reached ${name}`);
 }
 
+/** Moves down an open menu to an entry. */
+async function arrowTo(page: Page, name: string): Promise<void> {
+  for (let k = 0; k < 30; k += 1) {
+    await page.keyboard.press('ArrowDown');
+    if ((await page.evaluate(() => document.activeElement?.textContent ?? '')).startsWith(name)) return;
+  }
+  throw new Error(`The menu has no ${name}`);
+}
+
 async function command(page: Page, words: string): Promise<void> {
   await page.keyboard.press('Control+k');
   await expect(page.getByRole('dialog')).toBeVisible();
@@ -113,7 +122,7 @@ test('defining a split population from nothing, by keyboard', async ({ page }) =
     await tabTo(page, /^Add process|^Process$/);
     await page.keyboard.press('Enter');
     await expect(page.getByRole('menu')).toBeVisible();
-    await page.keyboard.type(template);
+    await arrowTo(page, template);
     await page.keyboard.press('Enter');
     await expect(page.getByRole('dialog', { name: template })).toBeVisible();
     if (population) {

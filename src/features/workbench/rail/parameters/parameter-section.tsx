@@ -52,7 +52,14 @@ export function ParameterSection() {
         </p>
       ) : (
         <Fallback>
-          <Suspense fallback={<PlainParameters />}>
+          <Suspense
+            fallback={
+              // Rows that are about to be replaced must not take a keystroke.
+              <fieldset disabled>
+                <PlainParameters />
+              </fieldset>
+            }
+          >
             <LevaParameters />
           </Suspense>
         </Fallback>
