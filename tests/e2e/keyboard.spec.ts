@@ -25,6 +25,8 @@ async function tabTo(page: Page, name: RegExp): Promise<void> {
 async function arrowTo(page: Page, name: string): Promise<void> {
   for (let k = 0; k < 30; k += 1) {
     await page.keyboard.press('ArrowDown');
+    // The menu moves its focus in a task of its own.
+    await page.waitForTimeout(60);
     if ((await page.evaluate(() => document.activeElement?.textContent ?? '')).startsWith(name)) return;
   }
   throw new Error(`The menu has no ${name}`);
