@@ -1,6 +1,7 @@
 import { longRunExtremes } from '../integrators/long-run';
 import type { CompiledSystem } from '../system/contract';
 import type { Band, Branch, SpecialPoint } from './contract';
+import { growsBesidesPair } from './special-points';
 
 export const BAND_DEFAULTS = {
   /** Values of the parameter along the band. */
@@ -106,4 +107,33 @@ export function* integrateBand(
     yield (k + 1) / count;
   }
   return { parameters: Float64Array.from(stretch.parameters), lowest, highest, quantities, settled };
+}
+
+/**
+ * Bands past the Hopf points at which nothing else grows: where another direction repels as well, the
+ * long run near the equilibrium is not the cycle's. Each is added to `bands` when it is done. A generator
+ * that yields the share done.
+ */
+export function* integrateBands(
+  system: CompiledSystem,
+  p: Float64Array,
+  parameterIndex: number,
+  points: readonly SpecialPoint[],
+  branches: readonly Branch[],
+  bands: Band[],
+): Generator<number, void> {
+  const hopfs = points.filter(
+    ({ feasible, hopf, eigenvalues }) => feasible && hopf && !growsBesidesPair(eigenvalues, hopf.omega),
+  );
+  for (const [k, hopf] of hopfs.entries()) {
+    const stretch = repellingStretch(branches[hopf.branch], hopf);
+    if (stretch === null) continue;
+    const run = integrateBand(system, p, parameterIndex, stretch);
+    let step = run.next();
+    while (!step.done) {
+      yield (k + step.value) / hopfs.length;
+      step = run.next();
+    }
+    bands.push(step.value);
+  }
 }

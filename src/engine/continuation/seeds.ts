@@ -7,8 +7,9 @@ import { NOT_DIFFERENTIABLE, NOT_ISOLATED } from './sweep-message';
 export const SEED_DEFAULTS = {
   /** Values along the range at which equilibria are sought, so that separate branches are found too. */
   searches: 4,
-  /** Newton runs of each such search. */
+  /** Newton runs of a search, and of a quick one, which is enough where known branches go on. */
   startsPerSearch: 400,
+  startsPerQuickSearch: 100,
 } as const;
 
 /** An equilibrium to follow a branch from. */
@@ -17,44 +18,54 @@ export interface Seed {
   readonly parameter: number;
 }
 
-export interface Seeds {
-  readonly found: readonly Seed[];
-  /** Sentences on states that cannot be followed. */
-  readonly notes: readonly string[];
+/** Where equilibria are sought. */
+export interface SeedValues {
+  /** The current value, or an end of the range where that lies outside. */
+  readonly first: number;
+  /** The ends of the range; together with the first they tell how large the states become. */
+  readonly ends: readonly number[];
+  readonly between: readonly number[];
 }
 
-/** Equilibria at values along the range, both ends and the current value among them. Yields the share done. */
-export function* findSeeds(
-  system: CompiledSystem,
-  p: Float64Array,
-  options: SweepOptions,
-): Generator<number, Seeds> {
-  const values = seedValues(p[options.parameterIndex], options);
-  const found: Seed[] = [];
-  const notes = new Set<string>();
-  for (const [k, value] of values.entries()) {
-    const parameters = Float64Array.from(p);
+export function seedValues(current: number, { from, to }: SweepOptions): SeedValues {
+  const last = SEED_DEFAULTS.searches - 1;
+  const between = Array.from({ length: last - 1 }, (_, k) => from + ((to - from) * (k + 1)) / last);
+  const inside = current > Math.min(from, to) && current < Math.max(from, to);
+  return inside ? { first: current, ends: [from, to], between } : { first: from, ends: [to], between };
+}
+
+/** Searches for equilibria at one value after another; what is found serves as starts of the next. */
+export class SeedSearch {
+  readonly found: Seed[] = [];
+  /** Sentences on states that cannot be followed. */
+  readonly notes = new Set<string>();
+
+  constructor(
+    private readonly system: CompiledSystem,
+    private readonly p: Float64Array,
+    private readonly options: SweepOptions,
+  ) {}
+
+  /** Equilibria at one value of the parameter. A generator that yields between slices of the search. */
+  *at(value: number, extent: 'full' | 'quick'): Generator<void, readonly Seed[]> {
+    const { options, system } = this;
+    const parameters = Float64Array.from(this.p);
     parameters[options.parameterIndex] = value;
     const search = findEquilibria(system, parameters, {
-      starts: [...options.starts, ...found.map((one) => one.state)],
-      maximumStarts: SEED_DEFAULTS.startsPerSearch,
+      starts: [...options.starts, ...this.found.map((one) => one.state)],
+      maximumStarts: extent === 'full' ? SEED_DEFAULTS.startsPerSearch : SEED_DEFAULTS.startsPerQuickSearch,
       ...(options.box ? { box: options.box } : {}),
     });
     let step = search.next();
     while (!step.done) {
-      yield k / values.length;
+      yield;
       step = search.next();
     }
-    takeOver(step.value, value, found, notes);
+    const seeds: Seed[] = [];
+    takeOver(step.value, value, seeds, this.notes);
+    this.found.push(...seeds);
+    return seeds;
   }
-  return { found, notes: [...notes] };
-}
-
-function seedValues(current: number, { from, to }: SweepOptions): number[] {
-  const last = SEED_DEFAULTS.searches - 1;
-  const values = Array.from({ length: SEED_DEFAULTS.searches }, (_, k) => from + ((to - from) * k) / last);
-  const inside = current > Math.min(from, to) && current < Math.max(from, to);
-  return inside ? [current, ...values] : values;
 }
 
 function takeOver(result: EquilibriaResult, parameter: number, found: Seed[], notes: Set<string>): void {

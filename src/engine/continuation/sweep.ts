@@ -1,10 +1,9 @@
 import type { CompiledSystem } from '../system/contract';
-import { integrateBand, repellingStretch } from './bands';
+import { integrateBands } from './bands';
 import { BranchSet } from './branch-set';
 import type { Band, Progress, SweepResult } from './contract';
 import { STEP_DEFAULTS } from './pseudo-arclength';
-import { findSeeds, scaleOfStates, type Seed } from './seeds';
-import { growsBesidesPair } from './special-points';
+import { scaleOfStates, SeedSearch, seedValues, type Seed, type SeedValues } from './seeds';
 import { SpecialPointList } from './special-point-list';
 import {
   NEEDS_PERIOD_MAP,
@@ -31,14 +30,19 @@ export const SWEEP_DEFAULTS = {
 /** Share of the range that a line of states at one value may differ by rounding. */
 const UPRIGHT_WIDTH = 1e-9;
 
-/** Shares of the progress at which the stages end. */
-const STAGES = { seeds: 0.3, branches: 0.7 } as const;
+/** Share of the progress at which equilibria are sought no more. */
+const SOUGHT = 0.7;
+const SEEKING = 'looking for equilibria along the range';
+const FOLLOWING = 'following branches';
+const INTEGRATING = 'following the long run past Hopf points';
 
 /**
- * Sweeps one parameter: every equilibrium found along the range is followed in both directions by
- * pseudo-arclength continuation, special points are located on the way and other branches entered there,
- * then long-run bands are integrated past Hopf points. A generator whose progress holds the result so far;
- * leaving it early loses nothing that was found. Trouble is a value: every branch says why it ends.
+ * Sweeps one parameter: every equilibrium found is followed in both directions by pseudo-arclength
+ * continuation, special points are located on the way and other branches entered there, then long-run
+ * bands are integrated past Hopf points. Equilibria are sought at the current value first and followed at
+ * once, so that there is soon something to see, and then elsewhere along the range. A generator whose
+ * progress holds the result so far; leaving it early loses nothing that was found. Trouble is a value:
+ * every branch says why it ends.
  *
  * @param p all parameters, in the order of `system.parameterKeys`; not written to
  */
@@ -53,8 +57,8 @@ export function* sweep(
     return run.result('failed', NO_SUCH_PARAMETER);
   if (!Number.isFinite(options.from) || !Number.isFinite(options.to) || options.from === options.to)
     return run.result('failed', NO_RANGE);
-  yield* run.seed();
-  yield* run.followAll();
+  yield* run.followCurrent();
+  yield* run.followElsewhere();
   if (options.bands !== false) yield* run.integrateBands();
   return run.result('complete', run.summary());
 }
@@ -65,10 +69,15 @@ class SweepRun {
   private points: SpecialPointList;
   private readonly queue: Entry[] = [];
   private readonly bands: Band[] = [];
+  private readonly seeds: SeedSearch;
+  private readonly values: SeedValues;
+  private readonly atEnds: (readonly Seed[])[] = [];
   private readonly notes = new Set<string>();
   private readonly began: number;
   private count = 0;
   private budgetSpent = false;
+  private fraction = 0;
+  private searches = 0;
 
   constructor(
     private readonly system: CompiledSystem,
@@ -76,67 +85,41 @@ class SweepRun {
     private readonly options: SweepOptions,
   ) {
     this.began = options.clock?.() ?? 0;
+    this.seeds = new SeedSearch(system, p, options);
+    this.values = seedValues(p[options.parameterIndex], options);
     this.scope = this.scopeFor([]);
     this.set = new BranchSet(this.scope);
     this.points = new SpecialPointList(this.scope);
   }
 
-  /** Finds equilibria along the range; they set the scales of the states. */
-  *seed(): Generator<Progress<SweepResult>, void> {
-    const search = findSeeds(this.system, this.p, this.options);
-    let step = search.next();
-    while (!step.done) {
-      yield this.progress(STAGES.seeds * step.value, 'looking for equilibria along the range');
-      step = search.next();
-    }
-    const { found, notes } = step.value;
-    notes.forEach((note) => this.notes.add(note));
-    this.scope = this.scopeFor(found.map((one) => one.state));
+  /** The branches through the current equilibria. The ends are looked at before, for the scales of the states. */
+  *followCurrent(): Generator<Progress<SweepResult>, void> {
+    const current = yield* this.seek(this.values.first, 'full');
+    for (const end of this.values.ends) this.atEnds.push(yield* this.seek(end, 'quick'));
+    this.scope = this.scopeFor(this.seeds.found.map((one) => one.state));
     this.set = new BranchSet(this.scope);
     this.points = new SpecialPointList(this.scope);
-    for (const one of found) this.enqueue(one);
+    yield* this.follow(current);
   }
 
-  *followAll(): Generator<Progress<SweepResult>, void> {
-    for (let entry = this.queue.shift(); entry !== undefined; entry = this.queue.shift()) {
-      if (this.isKnown(entry)) continue;
-      if (
-        this.set.branches.length >= SWEEP_DEFAULTS.branchBudget ||
-        this.count >= SWEEP_DEFAULTS.pointBudget
-      ) {
-        this.budgetSpent = true;
-        return;
-      }
-      yield* this.followOne(entry);
-    }
+  /** Branches that do not reach the current value; where a quick search finds one, a full one looks for more. */
+  *followElsewhere(): Generator<Progress<SweepResult>, void> {
+    const { between, ends } = this.values;
+    for (const [k, end] of ends.entries())
+      if (yield* this.follow(this.atEnds[k])) yield* this.follow(yield* this.seek(end, 'full'));
+    for (const value of between)
+      if (yield* this.follow(yield* this.seek(value, 'quick')))
+        yield* this.follow(yield* this.seek(value, 'full'));
   }
 
   *integrateBands(): Generator<Progress<SweepResult>, void> {
-    // Where another direction repels as well, the long run near the equilibrium is not the cycle's.
-    const hopfs = this.points
-      .list()
-      .filter(
-        ({ feasible, hopf, eigenvalues }) => feasible && hopf && !growsBesidesPair(eigenvalues, hopf.omega),
-      );
-    for (const [k, hopf] of hopfs.entries()) {
-      const stretch = repellingStretch(this.set.branches[hopf.branch], hopf);
-      if (stretch === null) continue;
-      const run = integrateBand(this.system, this.p, this.options.parameterIndex, stretch);
-      let step = run.next();
-      while (!step.done) {
-        const share = (k + step.value) / hopfs.length;
-        yield this.progress(
-          STAGES.branches + (1 - STAGES.branches) * share,
-          'following the long run past Hopf points',
-        );
-        step = run.next();
-      }
-      this.bands.push(step.value);
-    }
+    const { system, p, options, set, points, bands } = this;
+    const run = integrateBands(system, p, options.parameterIndex, points.list(), set.branches, bands);
+    for (const share of run) yield this.progress(SOUGHT + (1 - SOUGHT) * share, INTEGRATING);
   }
 
   summary(): string {
-    return summarise(this.set.branches, this.count, this.budgetSpent, [...this.notes]);
+    return summarise(this.set.branches, this.count, this.budgetSpent, [...this.seeds.notes, ...this.notes]);
   }
 
   result(status: SweepResult['status'], message: string): SweepResult {
@@ -163,6 +146,42 @@ class SweepRun {
     return new SweepScope(system, this.p, options.parameterIndex, options, scale, label);
   }
 
+  private *seek(value: number, extent: 'full' | 'quick'): Generator<Progress<SweepResult>, readonly Seed[]> {
+    if (this.budgetSpent) return [];
+    const search = this.seeds.at(value, extent);
+    for (;;) {
+      const step = search.next();
+      if (step.done) {
+        this.searches += 1;
+        return step.value;
+      }
+      yield this.progress(this.shareSought(), SEEKING);
+    }
+  }
+
+  /** Follows what is not known yet from these equilibria on; says whether anything was. */
+  private *follow(seeds: readonly Seed[]): Generator<Progress<SweepResult>, boolean> {
+    const before = this.set.branches.length;
+    for (const one of seeds) this.enqueue(one);
+    yield this.progress(this.shareSought(), FOLLOWING);
+    for (let entry = this.queue.shift(); entry !== undefined; entry = this.queue.shift()) {
+      if (this.isKnown(entry)) continue;
+      this.budgetSpent =
+        this.set.branches.length >= SWEEP_DEFAULTS.branchBudget || this.count >= SWEEP_DEFAULTS.pointBudget;
+      if (this.budgetSpent) break;
+      yield* this.followOne(entry);
+    }
+    // What was followed is seen before anything else is sought.
+    yield this.progress(this.shareSought(), SEEKING);
+    return this.set.branches.length > before;
+  }
+
+  /** Full searches are not foreseen: their share is that of the quick ones still to come. */
+  private shareSought(): number {
+    const { between, ends } = this.values;
+    return (SOUGHT * this.searches) / Math.max(this.searches + 1, 1 + ends.length + between.length);
+  }
+
   private enqueue({ state, parameter }: Seed): void {
     const active = this.scope.activeOf(state);
     const exact = state.map((value, i) => (active.includes(i) ? value : 0));
@@ -186,10 +205,9 @@ class SweepRun {
       largestStep: this.options.largestStep ?? SWEEP_DEFAULTS.largestStep,
       pointBudget: SWEEP_DEFAULTS.pointBudget - this.count,
     });
-    const share = 1 - 1 / (1 + this.set.branches.length);
     let step = follow.next();
     while (!step.done) {
-      yield this.progress(STAGES.seeds + (STAGES.branches - STAGES.seeds) * share, 'following branches');
+      yield this.progress(this.shareSought(), FOLLOWING);
       step = follow.next();
     }
     const found = step.value;
@@ -217,6 +235,7 @@ class SweepRun {
   }
 
   private progress(fraction: number, stage: string): Progress<SweepResult> {
-    return { fraction, stage, partial: this.result('cancelled', STOPPED) };
+    this.fraction = Math.max(this.fraction, fraction);
+    return { fraction: this.fraction, stage, partial: this.result('cancelled', STOPPED) };
   }
 }
