@@ -61,8 +61,10 @@ export interface CycleBranch {
   /** 1 attracts, 0 repels, 2 undecided at this accuracy, at each point. */
   readonly attracts: Uint8Array;
   readonly feasible: Uint8Array;
-  /** orbits[(k*(S+1) + s)*n + i]: S+1 equally spaced times over one period, last = first. */
+  /** The cycles themselves: orbits[(k*S + s)*n + i] at the phase orbitPhases[k*S + s] in [0, 1], last = first. */
   readonly orbits: Float64Array;
+  readonly orbitPhases: Float64Array;
+  /** S, samples of each cycle, dense where it turns. */
   readonly orbitSamples: number;
   readonly startEnd: { readonly reason: CycleBranchEnd; readonly message: string };
   readonly endEnd: { readonly reason: CycleBranchEnd; readonly message: string };

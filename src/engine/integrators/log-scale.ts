@@ -65,6 +65,7 @@ export function logScaleSystem(inner: CompiledSystem, start: Float64Array): LogS
       inner.parameterDerivative(t, u, k, out);
       for (let i = 0; i < n; i += 1) if (logarithmic[i]) out[i] /= u[i];
     },
+    forcingPeriod: () => inner.forcingPeriod(),
     directional() {
       throw new Error('Normal forms are taken of the system itself, never of its logarithms.');
     },

@@ -11,6 +11,7 @@ import {
   type TaylorProgram,
 } from '../expression/index';
 import type { CompiledSystem, StatePopulation } from './contract';
+import { commonPeriod, forcingFrequencies } from './forcing-period';
 
 /**
  * What a system is compiled from. State i is `graph.state(i)`, parameter k is `graph.parameter(k)`,
@@ -65,6 +66,7 @@ class System implements CompiledSystem {
   private readonly followers: { prepare(p: Float64Array): void }[] = [];
   private taylor: TaylorProgram | null = null;
   private readonly p: Float64Array;
+  private frequencies: (() => number | null) | null = null;
 
   constructor(
     private readonly spec: SystemSpec,
@@ -114,6 +116,29 @@ class System implements CompiledSystem {
 
   directional(t: number, u: Float64Array, v: Float64Array, out: Float64Array): void {
     this.alongStates().evaluate(t, u, v, out);
+  }
+
+  forcingPeriod(): number | null {
+    if (this.autonomous) return null;
+    this.frequencies ??= this.compileFrequencies();
+    return this.frequencies();
+  }
+
+  private compileFrequencies(): () => number | null {
+    const { graph, equations } = this.spec;
+    const rates = forcingFrequencies(graph, equations);
+    if (rates === null || graph.full) {
+      graph.forgiveOverflow();
+      return () => null;
+    }
+    const program = this.compile([rates]);
+    this.follow(program);
+    const out = new Float64Array(rates.length);
+    const state = new Float64Array(this.dimension);
+    return () => {
+      program.evaluate(0, 0, state, out);
+      return commonPeriod(out);
+    };
   }
 
   private compile(groups: readonly (readonly NodeId[])[]): Program {

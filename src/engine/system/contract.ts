@@ -35,6 +35,11 @@ export interface CompiledSystem {
    * out[(k-1)*n + i] = d^k/ds^k f_i(t, u + s v) at s = 0, for k = 1, 2, 3. Length 3n.
    */
   directional(t: number, u: Float64Array, v: Float64Array, out: Float64Array): void;
+  /**
+   * Period of the explicit time at the parameters set, in time units: the least common one of all sines and
+   * cosines of time. Null for a model without explicit time, and where time enters in another way.
+   */
+  forcingPeriod(): number | null;
 }
 
 export interface StatePopulation {
