@@ -1,3 +1,4 @@
+import { checkTask } from '@/engine/analyses/check-task';
 import { findEquilibriaPair } from '@/engine/explore/equilibria-pair';
 import { judgeModel, pairEquilibria } from '@/engine/explore/judge';
 import { answersUnderOtherMeans } from '@/engine/explore/other-means';
@@ -10,7 +11,6 @@ import { compileModel, type CompiledModel } from '@/engine/system/compile-model'
 import { CAUTION } from '@/engine/system/contract';
 import { specialPointShifts } from '@/engine/verdict/special-point-shifts';
 
-import { checkTask } from './check-task';
 import { equilibriaJson, shiftJson, sweepJson, trajectoryJson, type Json } from './result-json';
 import { readStudy } from './read-study';
 

@@ -1,5 +1,8 @@
 import { proxy } from 'comlink';
 
+import type { AnalysisResultOf } from '../engine/analyses/contract';
+import type { Progress } from '../engine/continuation/contract';
+import type { AnalysisTask } from '../engine/schema/analysis-tasks';
 import { EngineWorkerHost, type WorkerLike } from './engine-worker-host';
 import { NewestWins } from './newest-wins';
 import type { EngineClient, ExploreRequest, ExploreResult } from './protocol';
@@ -39,6 +42,16 @@ export function createEngineClient(createWorker: () => WorkerLike = createEngine
     findEquilibria: (job, values, onProgress) =>
       jobs.call((api) => api.findEquilibria(job, values, proxy(onProgress))),
     sweep: (job, request, onProgress) => jobs.call((api) => api.sweep(job, request, proxy(onProgress))),
+    analyse<Task extends AnalysisTask>(
+      job: number,
+      task: Task,
+      onProgress: (progress: Progress<AnalysisResultOf<Task>>) => void,
+    ) {
+      // Across the port the types lose which result belongs to which task; here it is said again.
+      type Answer = AnalysisResultOf<Task>;
+      const tell = proxy((progress: Progress) => onProgress(progress as Progress<Answer>));
+      return jobs.call((api) => api.analyse(job, task, tell) as Promise<Answer>);
+    },
     secondOpinion: (request) => jobs.call((api) => api.secondOpinion(request)),
     cancel(job) {
       jobs.call((api) => api.cancel(job)).catch(() => undefined);

@@ -1,3 +1,6 @@
+import { checkTask } from '../engine/analyses/check-task';
+import type { AnalysisResultOf } from '../engine/analyses/contract';
+import { runAnalysis } from '../engine/analyses/run-analysis';
 import type { Progress } from '../engine/continuation/contract';
 import type {
   EquilibriaPair,
@@ -12,6 +15,7 @@ import { findEquilibriaPair } from '../engine/explore/equilibria-pair';
 import { exploreInSlices } from '../engine/explore/explore';
 import { sweepSplitAndTwin } from '../engine/explore/split-sweep';
 import { secondOpinion } from '../engine/explore/trajectories';
+import type { AnalysisTask } from '../engine/schema/analysis-tasks';
 import type { PresetDocument } from '../engine/schema/preset';
 import { compileModel, type CompiledModel } from '../engine/system/compile-model';
 import type { ModelReport } from '../engine/system/contract';
@@ -75,6 +79,21 @@ export class EngineSession implements EngineApi {
   ): Promise<SplitSweepResult> {
     const model = this.modelOfOwn();
     const run = sweepSplitAndTwin(model, request, {
+      isCancelled: () => this.cancelled.has(job),
+      clock: () => performance.now(),
+    });
+    return this.runJob(job, run, onProgress);
+  }
+
+  async analyse<Task extends AnalysisTask>(
+    job: number,
+    task: Task,
+    onProgress: (progress: Progress<AnalysisResultOf<Task>>) => void,
+  ): Promise<AnalysisResultOf<Task>> {
+    const model = this.modelOfOwn();
+    const problems = checkTask(model, task);
+    if (problems.length > 0) throw new Error(problems.join('\n'));
+    const run = runAnalysis(model, task, {
       isCancelled: () => this.cancelled.has(job),
       clock: () => performance.now(),
     });

@@ -20,6 +20,7 @@ const api: EngineApi = {
   findEquilibria: async (job, values, onProgress) =>
     handOver(await session.findEquilibria(job, values, onProgress)),
   sweep: async (job, request, onProgress) => handOver(await session.sweep(job, request, onProgress)),
+  analyse: async (job, task, onProgress) => handOver(await session.analyse(job, task, onProgress)),
   secondOpinion: (request) => handOver(session.secondOpinion(request)),
   cancel: (job) => session.cancel(job),
 };

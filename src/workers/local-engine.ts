@@ -32,6 +32,10 @@ export function createLocalEngine(): EngineClient {
       open();
       return jobs.sweep(job, request, onProgress);
     },
+    async analyse(job, task, onProgress) {
+      open();
+      return jobs.analyse(job, task, onProgress);
+    },
     async secondOpinion(request) {
       open();
       return jobs.secondOpinion(request);

@@ -1,4 +1,5 @@
 /** What the page asks of an engine worker and what comes back. Types only. */
+import type { AnalysisResultOf } from '../engine/analyses/contract';
 import type { Progress } from '../engine/continuation/contract';
 import type {
   EquilibriaPair,
@@ -9,6 +10,7 @@ import type {
   SplitSweepResult,
   SweepRequest,
 } from '../engine/explore/contract';
+import type { AnalysisTask } from '../engine/schema/analysis-tasks';
 import type { PresetDocument } from '../engine/schema/preset';
 import type { ModelReport } from '../engine/system/contract';
 
@@ -41,6 +43,12 @@ export interface EngineApi {
     request: SweepRequest,
     onProgress: (progress: Progress<SplitSweepResult>) => void,
   ): Promise<SplitSweepResult>;
+  /** Cycles, boundaries, maps and the rest: one call, its result typed by the task. Refused where a name is unknown. */
+  analyse<Task extends AnalysisTask>(
+    job: number,
+    task: Task,
+    onProgress: (progress: Progress<AnalysisResultOf<Task>>) => void,
+  ): Promise<AnalysisResultOf<Task>>;
   secondOpinion(request: ExploreRequest): SecondOpinion;
   cancel(job: number): void;
 }
@@ -60,6 +68,12 @@ export interface EngineClient {
     request: SweepRequest,
     onProgress: (progress: Progress<SplitSweepResult>) => void,
   ): Promise<SplitSweepResult>;
+  /** Cycles, boundaries, maps and the rest: one call, its result typed by the task. Refused where a name is unknown. */
+  analyse<Task extends AnalysisTask>(
+    job: number,
+    task: Task,
+    onProgress: (progress: Progress<AnalysisResultOf<Task>>) => void,
+  ): Promise<AnalysisResultOf<Task>>;
   secondOpinion(request: ExploreRequest): Promise<SecondOpinion>;
   cancel(job: number): void;
   /** Ends the workers; later calls are rejected. */

@@ -39,7 +39,7 @@ describe('refusals name the place', () => {
     [
       'a sweep of nothing',
       { preset: logistic, tasks: [{ task: 'sweep', parameter: 'q', from: 0, to: 1 }] },
-      /cannot be swept/,
+      /"q" is no parameter/,
     ],
     [
       'a sweep without length',

@@ -43,3 +43,10 @@ export interface AnalysisResults {
 }
 
 export type AnalysisResultOf<Task extends AnalysisTask> = AnalysisResults[Task['task']];
+
+export interface AnalysisOptions {
+  /** Asked between slices; true ends the run with what was found. */
+  readonly isCancelled?: () => boolean;
+  /** Milliseconds; the engine has no clock of its own. */
+  readonly clock?: () => number;
+}

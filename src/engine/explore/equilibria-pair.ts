@@ -102,15 +102,20 @@ function describeTwin(model: CompiledModel, p: Float64Array): DescriptionOptions
   };
 }
 
-export function splitBox(model: CompiledModel): NonNullable<SearchOptions['box']> {
-  return model.system.stateSymbols.map(
-    (symbol) => model.document.box.find((one) => one.class === symbol) ?? null,
-  );
+/** Sides of a box by class, which take the place of the document's. */
+export type BoxSides = Readonly<Record<string, readonly [number, number]>>;
+
+export function splitBox(model: CompiledModel, sides: BoxSides = {}): NonNullable<SearchOptions['box']> {
+  return model.system.stateSymbols.map((symbol) => {
+    if (!Object.hasOwn(sides, symbol)) return model.document.box.find((one) => one.class === symbol) ?? null;
+    const [from, to] = sides[symbol];
+    return { from, to };
+  });
 }
 
 /** A total's box is the sum of those of its classes, where all of them have one. */
-export function twinBox(model: CompiledModel): NonNullable<SearchOptions['box']> {
-  const boxes = splitBox(model);
+export function twinBox(model: CompiledModel, sides: BoxSides = {}): NonNullable<SearchOptions['box']> {
+  const boxes = splitBox(model, sides);
   return model.twin.states.map((states) => {
     let from = 0;
     let to = 0;

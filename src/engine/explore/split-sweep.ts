@@ -1,12 +1,12 @@
 import type { Progress, SweepResult } from '../continuation/contract';
-import { sweep, type SweepOptions } from '../continuation/sweep';
+import { sweep } from '../continuation/sweep';
 import type { CompiledModel } from '../system/compile-model';
-import type { CompiledSystem } from '../system/contract';
 import type { EquilibriaPair, SplitSweepResult, SweepRequest } from './contract';
 import { findEquilibriaPair, splitBox, twinBox } from './equilibria-pair';
 import { judgeModel, pairEquilibria } from './judge';
 import { answersUnderOtherMeans, type OtherMean } from './other-means';
 import { startsOf } from './trajectories';
+import { untilCancelled } from './until-cancelled';
 
 export interface SplitSweepOptions {
   /** Asked between slices; true ends the sweep with what was found. */
@@ -16,8 +16,6 @@ export interface SplitSweepOptions {
   /** Milliseconds; the engine has no clock of its own. */
   readonly clock?: () => number;
 }
-
-const CANCELLED = 'Cancelled; what was found until then stays.';
 
 /**
  * Sweeps one parameter of a model and then of its pooled twin, and judges both. A generator whose
@@ -54,22 +52,19 @@ export function* sweepSplitAndTwin(
     twin,
     verdict: judgeModel(model, p, found, pairs, { parameter: request.parameter, split, twin }, others),
   });
-  const split = yield* sweepOne(
-    model.system,
-    p,
-    { ...shared, starts: [starts], box: splitBox(model) },
-    options,
+  // The swept value is written to the parameters, so each sweep has its own.
+  const split = yield* untilCancelled(
+    sweep(model.system, p.slice(), { ...shared, starts: [starts], box: splitBox(model) }),
+    { from: 0, share },
     (partial) => combine(partial, null),
-    [0, share],
+    options.isCancelled,
   );
   if (!twinSystem || split.status === 'cancelled') return combine(split, null);
-  const twin = yield* sweepOne(
-    twinSystem,
-    p,
-    { ...shared, starts: [model.toTwinStarts(starts)], box: twinBox(model) },
-    options,
+  const twin = yield* untilCancelled(
+    sweep(twinSystem, p.slice(), { ...shared, starts: [model.toTwinStarts(starts)], box: twinBox(model) }),
+    { from: share, share },
     (partial) => combine(split, partial),
-    [share, share],
+    options.isCancelled,
   );
   if (twin.status === 'cancelled') return combine(split, twin);
   return combine(split, twin, yield* underOtherMeans(model, request));
@@ -100,30 +95,6 @@ function* pairAtPresent(
     const next = search.next();
     if (next.done) return next.value;
     yield { fraction: 0, stage: next.value.stage, partial: null };
-  }
-}
-
-function* sweepOne(
-  system: CompiledSystem,
-  p: Float64Array,
-  sweepOptions: SweepOptions,
-  options: SplitSweepOptions,
-  combine: (partial: SweepResult) => SplitSweepResult,
-  [from, share]: readonly [number, number],
-): Generator<Progress<SplitSweepResult>, SweepResult> {
-  // The swept value is written to the parameters, so each sweep has its own.
-  const run = sweep(system, Float64Array.from(p), sweepOptions);
-  let found: SweepResult | null = null;
-  for (;;) {
-    const next = run.next();
-    if (next.done) return next.value;
-    const { fraction, stage, partial } = next.value;
-    found = partial ?? found;
-    if (found && options.isCancelled?.()) {
-      run.return(found);
-      return { ...found, status: 'cancelled', message: CANCELLED };
-    }
-    yield { fraction: from + share * fraction, stage, partial: partial && combine(partial) };
   }
 }
 
