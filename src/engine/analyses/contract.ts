@@ -1,7 +1,7 @@
 /** What each task of the complete engine answers, split beside pooled. */
 import type { BoundariesResult } from '../boundaries/contract';
 import type { CyclesResult } from '../cycles/contract';
-import type { SplitSweepResult } from '../explore/contract';
+import type { EquilibriaPair, SplitSweepResult } from '../explore/contract';
 import type { ExtremesResult, LyapunovResult, SectionResult } from '../lyapunov/contract';
 import type { MapResult } from '../maps/contract';
 import type { AnalysisTask } from '../schema/analysis-tasks';
@@ -26,6 +26,8 @@ export interface PictureRow {
 export interface PictureResult {
   readonly status: 'complete' | 'cancelled' | 'failed';
   readonly message: string;
+  /** Every equilibrium at the task's own numbers. */
+  readonly equilibria: EquilibriaPair;
   readonly sweep: SplitSweepResult;
   readonly cycles: SplitAnd<CyclesResult>;
   readonly summary: readonly PictureRow[];

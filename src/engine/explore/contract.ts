@@ -22,6 +22,9 @@ export interface ExploreRequest {
   readonly plane: PlaneRequest | null;
 }
 
+/** Sides of a box by class, which take the place of the document's. */
+export type BoxSides = Readonly<Record<string, readonly [number, number]>>;
+
 /** Equilibria of the split model and of its twin; the twin's null where there is none. */
 export interface EquilibriaPair {
   readonly split: EquilibriaResult;
@@ -51,6 +54,7 @@ export interface SweepRequest {
   readonly to: number;
   readonly starts: readonly number[];
   readonly withTwin: boolean;
+  readonly box?: BoxSides;
 }
 
 export interface SplitSweepResult {

@@ -6,16 +6,17 @@ import { trackEquilibria } from '../equilibria/track';
 import { SPREAD_KEY } from '../schema/symbols';
 import type { CompiledModel } from '../system/compile-model';
 import { constantsOfMotionAt } from '../system/constants-of-motion';
-import type { EquilibriaPair, ParameterValues } from './contract';
+import type { BoxSides, EquilibriaPair, ParameterValues } from './contract';
 
 export interface PairSearchOptions {
   /** States of the split model to start from as well; their totals serve the twin. */
   readonly starts?: readonly Float64Array[];
+  readonly box?: BoxSides;
   readonly isCancelled?: () => boolean;
 }
 
 /**
- * All equilibria of a model and of its pooled twin, in the document's box. A generator: partial
+ * All equilibria of a model and of its pooled twin, in the document's box or the one given. A generator: partial
  * results are those of the split model until the twin's turn.
  */
 export function* findEquilibriaPair(
@@ -32,7 +33,7 @@ export function* findEquilibriaPair(
     findEquilibria(system, p, {
       ...base,
       ...describeSplit(model, p),
-      box: splitBox(model),
+      box: splitBox(model, options.box),
       starts,
     }),
     (found) => ({ split: found, twin: null }),
@@ -44,7 +45,7 @@ export function* findEquilibriaPair(
     findEquilibria(twin.system, p, {
       ...base,
       ...describeTwin(model, p),
-      box: twinBox(model),
+      box: twinBox(model, options.box),
       starts: starts.map((one) => model.toTwinStarts(one)),
     }),
     (found) => ({ split, twin: found }),
@@ -101,9 +102,6 @@ function describeTwin(model: CompiledModel, p: Float64Array): DescriptionOptions
     compositionModes: model.twin.report.kind === 'unlumped',
   };
 }
-
-/** Sides of a box by class, which take the place of the document's. */
-export type BoxSides = Readonly<Record<string, readonly [number, number]>>;
 
 export function splitBox(model: CompiledModel, sides: BoxSides = {}): NonNullable<SearchOptions['box']> {
   return model.system.stateSymbols.map((symbol) => {

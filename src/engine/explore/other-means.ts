@@ -1,7 +1,7 @@
 import type { PresetDocument, Trait } from '../schema/preset';
 import { compileModel, type CompiledModel } from '../system/compile-model';
 import type { VerdictAnswer } from '../verdict/contract';
-import type { ParameterValues } from './contract';
+import type { BoxSides, ParameterValues } from './contract';
 import { findEquilibriaPair } from './equilibria-pair';
 import { judgeModel, pairEquilibria } from './judge';
 
@@ -22,6 +22,7 @@ const MEANS: readonly Trait['mean'][] = ['arithmetic', 'geometric', 'harmonic'];
 export function* answersUnderOtherMeans(
   model: CompiledModel,
   values: ParameterValues,
+  box: BoxSides = {},
 ): Generator<unknown, readonly OtherMean[]> {
   const { document, twin } = model;
   if (twin.system === null) return [];
@@ -36,7 +37,7 @@ export function* answersUnderOtherMeans(
       continue;
     const compiled = compileModel(withMean(document, changed, mean));
     if (!compiled.ok) continue;
-    const found = yield* findEquilibriaPair(compiled.model, values);
+    const found = yield* findEquilibriaPair(compiled.model, values, { box });
     const p = compiled.model.valuesToParameters(values);
     const pairs = pairEquilibria(compiled.model, p, found);
     answers.push({

@@ -13,6 +13,8 @@ export interface SplitSweepOptions {
   readonly isCancelled?: () => boolean;
   /** Long-run bands past Hopf points; true unless told. */
   readonly bands?: boolean;
+  /** Equilibria at the request's own numbers, where they are known; else they are sought first. */
+  readonly equilibria?: EquilibriaPair;
   /** Milliseconds; the engine has no clock of its own. */
   readonly clock?: () => number;
 }
@@ -41,7 +43,7 @@ export function* sweepSplitAndTwin(
   };
   // The verdict rests on the equilibria at the present numbers as well. They are paired before the sweeps
   // begin, since pairing moves the parameters of the split system.
-  const found = yield* pairAtPresent(model, request, options);
+  const found = options.equilibria ?? (yield* pairAtPresent(model, request, options));
   const pairs = pairEquilibria(model, p, found);
   const combine = (
     split: SweepResult,
@@ -54,14 +56,18 @@ export function* sweepSplitAndTwin(
   });
   // The swept value is written to the parameters, so each sweep has its own.
   const split = yield* untilCancelled(
-    sweep(model.system, p.slice(), { ...shared, starts: [starts], box: splitBox(model) }),
+    sweep(model.system, p.slice(), { ...shared, starts: [starts], box: splitBox(model, request.box) }),
     { from: 0, share },
     (partial) => combine(partial, null),
     options.isCancelled,
   );
   if (!twinSystem || split.status === 'cancelled') return combine(split, null);
   const twin = yield* untilCancelled(
-    sweep(twinSystem, p.slice(), { ...shared, starts: [model.toTwinStarts(starts)], box: twinBox(model) }),
+    sweep(twinSystem, p.slice(), {
+      ...shared,
+      starts: [model.toTwinStarts(starts)],
+      box: twinBox(model, request.box),
+    }),
     { from: share, share },
     (partial) => combine(split, partial),
     options.isCancelled,
@@ -74,7 +80,7 @@ function* underOtherMeans(
   model: CompiledModel,
   request: SweepRequest,
 ): Generator<Progress<SplitSweepResult>, readonly OtherMean[]> {
-  const work = answersUnderOtherMeans(model, request.values);
+  const work = answersUnderOtherMeans(model, request.values, request.box);
   for (;;) {
     const next = work.next();
     if (next.done) return next.value;
@@ -89,6 +95,7 @@ function* pairAtPresent(
 ): Generator<Progress<SplitSweepResult>, EquilibriaPair> {
   const search = findEquilibriaPair(model, request.values, {
     starts: [startsOf(model, request)],
+    ...(request.box ? { box: request.box } : {}),
     ...(isCancelled ? { isCancelled } : {}),
   });
   for (;;) {

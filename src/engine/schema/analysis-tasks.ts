@@ -44,6 +44,8 @@ export const cyclesTaskSchema = z.strictObject({
   forcingPeriods: z.int().min(1).max(24).default(1),
   /** Whether every cycle of every branch is printed, or special points and ends alone. */
   branches: z.boolean().default(true),
+  /** Whether the cycles themselves are printed too, sample by sample. */
+  orbits: z.boolean().default(false),
 });
 
 export const BOUNDARY_KINDS = ['fold', 'Hopf', 'transcritical', 'pitchfork'] as const;
