@@ -3,7 +3,7 @@ import { createBasis, type CollocationBasis } from './collocation-basis';
 import type { CycleSystem } from './cycle-system';
 import { floquetMultipliers, withDivergence, type FloquetMultipliers } from './floquet';
 import { adaptMesh } from './mesh';
-import { intervalsOf, onMesh, type Orbit } from './orbit';
+import { intervalsOf, onMesh, OrbitReader, type Orbit } from './orbit';
 
 export const CYCLE_NEWTON_DEFAULTS = {
   iterations: 9,
@@ -35,6 +35,7 @@ export interface CyclePoint {
 /** Corrector, tangents and multipliers of cycles on meshes of one size. */
 export class CycleCurve {
   readonly basis: CollocationBasis;
+  readonly reader: OrbitReader;
   private readonly collocation: Collocation;
   private readonly step: Direction;
   private readonly flow: Float64Array;
@@ -45,6 +46,7 @@ export class CycleCurve {
     readonly m: number,
   ) {
     this.basis = createBasis(m);
+    this.reader = new OrbitReader(m, cycles.n);
     this.collocation = new Collocation(cycles, this.basis, N);
     this.step = this.collocation.newDirection();
     this.flow = new Float64Array(N * cycles.n);
@@ -102,12 +104,11 @@ export class CycleCurve {
     return null;
   }
 
-  /** The same cycle on a mesh that suits it. */
+  /** The same cycle on a mesh of this curve's size that suits it; the point may come from another size. */
   adapt(point: CyclePoint): CyclePoint | null {
     const { orbit, tangent } = point;
     const { n } = this.cycles;
     const mesh = adaptMesh(this.basis, n, orbit, this.N);
-    if (mesh === orbit.mesh) return point;
     const moved: Orbit = { ...orbit, mesh, values: onMesh(this.basis, n, orbit.mesh, orbit.values, mesh) };
     const along: Direction = {
       ...tangent,

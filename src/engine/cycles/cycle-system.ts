@@ -62,6 +62,13 @@ export class CycleSystem {
     this.system.setParameters(this.parameters);
   }
 
+  /** All parameters with the swept one at a value; a copy. */
+  parametersAt(value: number): Float64Array {
+    const p = Float64Array.from(this.parameters);
+    p[this.parameterIndex] = value;
+    return p;
+  }
+
   /** Period of one cycle of a forced model at the parameter set; NaN where the forcing has none. */
   forcedPeriod(): number {
     return this.forcingPeriods * (this.system.forcingPeriod() ?? NaN);

@@ -1,5 +1,5 @@
 import type { CollocationBasis } from './collocation-basis';
-import { onMesh, type Orbit } from './orbit';
+import { onMesh, uniformMesh, type Orbit } from './orbit';
 
 /** Share of the density that is spread evenly, so that no interval grows without bound. */
 const EVEN_SHARE = 0.1;
@@ -42,7 +42,7 @@ export function adaptMesh(basis: CollocationBasis, n: number, orbit: Orbit, inte
     density[k] = ((jump[k] + jump[k + 1]) / 2) ** (1 / (m + 1));
     total += density[k] * (mesh[k + 1] - mesh[k]);
   }
-  if (!(total > 0) || !Number.isFinite(total)) return mesh;
+  if (!(total > 0) || !Number.isFinite(total)) return intervals === N ? mesh : uniformMesh(intervals);
   for (let k = 0; k < N; k += 1) density[k] += EVEN_SHARE * total;
   return spreadEvenly(mesh, density, total * (1 + EVEN_SHARE), intervals);
 }
