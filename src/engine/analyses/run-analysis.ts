@@ -2,6 +2,8 @@ import type { Progress } from '../continuation/contract';
 import type { AnalysisName, AnalysisTask } from '../schema/analysis-tasks';
 import type { CompiledModel } from '../system/compile-model';
 import type { AnalysisOptions, AnalysisResultOf } from './contract';
+import { runCycles } from './cycles';
+import { runPicture } from './picture';
 
 type RunTask<Task extends AnalysisTask> = (
   model: CompiledModel,
@@ -14,7 +16,10 @@ type Runs = {
 };
 
 /** What each task is carried out by. */
-const RUNS: Partial<Runs> = {};
+const RUNS: Partial<Runs> = {
+  cycles: runCycles,
+  picture: runPicture,
+};
 
 /**
  * Runs a task on a model: one generator for whichever it is, its result typed by the task. Names in the task

@@ -5,6 +5,7 @@ import type { EquilibriaPair, SplitSweepResult, SweepRequest } from './contract'
 import { findEquilibriaPair, splitBox, twinBox } from './equilibria-pair';
 import { judgeModel, pairEquilibria } from './judge';
 import { answersUnderOtherMeans, type OtherMean } from './other-means';
+import { sweptRange } from './swept-range';
 import { startsOf } from './trajectories';
 import { untilCancelled } from './until-cancelled';
 
@@ -34,10 +35,7 @@ export function* sweepSplitAndTwin(
   const twinSystem = request.withTwin ? model.twin.system : null;
   const share = twinSystem ? 0.5 : 1;
   const shared = {
-    parameterIndex: model.parameterIndex(request.parameter),
-    from: request.from,
-    to: request.to,
-    parameterLabel: labelOf(model, request.parameter),
+    ...sweptRange(model, request),
     ...(options.clock ? { clock: options.clock } : {}),
     ...(options.bands === undefined ? {} : { bands: options.bands }),
   };
@@ -103,8 +101,4 @@ function* pairAtPresent(
     if (next.done) return next.value;
     yield { fraction: 0, stage: next.value.stage, partial: null };
   }
-}
-
-function labelOf(model: CompiledModel, key: string): string {
-  return model.report.parameters.find((one) => one.key === key)?.label ?? key;
 }

@@ -1,5 +1,6 @@
 import { z } from './zod';
 
+import { commonTask, cyclesTaskSchema, pictureTaskSchema } from './analysis-tasks';
 import { LIMITS } from './limits';
 import { presetSchema } from './preset';
 
@@ -20,15 +21,6 @@ export const equationsSchema = z.strictObject({
   sign: z.enum(['nonnegative', 'any']).optional(),
 });
 
-const common = {
-  /** Names the task in the result. */
-  id: z.string().max(64).optional(),
-  /** Values that replace the document's own, by key: a parameter, a trait value, `spread` or `dial:<trait>`. */
-  parameters: values.optional(),
-  /** Whether to answer for the pooled twin too; where there is none, it is left out. */
-  twin: z.boolean().default(true),
-};
-
 export const METHOD_NAMES = [
   'automatic',
   'dormand-prince-54',
@@ -39,7 +31,7 @@ export const METHOD_NAMES = [
 
 export const trajectoryTaskSchema = z.strictObject({
   task: z.literal('trajectory'),
-  ...common,
+  ...commonTask,
   /** Start values by class; a class left out starts as the document says. */
   starts: values.optional(),
   /** Times to report, monotone from the start time; else `samples` times up to `horizon`. */
@@ -54,7 +46,7 @@ export const trajectoryTaskSchema = z.strictObject({
 
 export const equilibriaTaskSchema = z.strictObject({
   task: z.literal('equilibria'),
-  ...common,
+  ...commonTask,
   /** States to start the search from besides its own, by class; they also set the size of a guessed box. */
   starts: values.optional(),
   /** Box to search, by class; else the document's. */
@@ -63,7 +55,7 @@ export const equilibriaTaskSchema = z.strictObject({
 
 export const sweepTaskSchema = z.strictObject({
   task: z.literal('sweep'),
-  ...common,
+  ...commonTask,
   parameter: z.string().min(1).max(80),
   from: finite,
   to: finite,
@@ -79,7 +71,15 @@ export const sweepTaskSchema = z.strictObject({
 export const studySchema = z.strictObject({
   preset: z.union([presetSchema, equationsSchema]),
   tasks: z
-    .array(z.discriminatedUnion('task', [trajectoryTaskSchema, equilibriaTaskSchema, sweepTaskSchema]))
+    .array(
+      z.discriminatedUnion('task', [
+        trajectoryTaskSchema,
+        equilibriaTaskSchema,
+        sweepTaskSchema,
+        cyclesTaskSchema,
+        pictureTaskSchema,
+      ]),
+    )
     .min(1, 'A study needs at least one task.')
     .max(200),
 });
