@@ -18,6 +18,9 @@ export const CYCLE_NEWTON_DEFAULTS = {
 /** Multipliers within this of the unit circle are not decided. */
 const UNDECIDED = 1e-6;
 
+/** ln of a contraction that collocation at Gauss points still hands on in full. */
+const MOST_CONTRACTION = 20;
+
 /** One accepted cycle of a branch. */
 export interface CyclePoint {
   readonly orbit: Orbit;
@@ -30,6 +33,8 @@ export interface CyclePoint {
   readonly below: number;
   readonly attracts: 0 | 1 | 2;
   readonly iterations: number;
+  /** How far the discretisation is from what must hold exactly: see `resolutionError`. */
+  readonly resolution: number;
 }
 
 /** Corrector, tangents and multipliers of cycles on meshes of one size. */
@@ -161,10 +166,8 @@ export class CycleCurve {
     const { n } = cycles;
     const stride = n + collocation.extras + 1;
     const flow = cycles.forced ? null : this.flowAt(orbit);
-    const floquet = withDivergence(
-      floquetMultipliers(collocation.transfer, stride, this.N, n, flow),
-      collocation.divergence,
-    );
+    const found = floquetMultipliers(collocation.transfer, stride, this.N, n, flow);
+    const floquet = withDivergence(found, collocation.divergence);
     const outside = floquet.logModuli.filter((log) => log > 0).length;
     const decided = floquet.logModuli.every((log) => Math.abs(log) > UNDECIDED);
     const clearly = floquet.logModuli.some((log) => log > UNDECIDED);
@@ -178,6 +181,7 @@ export class CycleCurve {
       below: floquet.nontrivial.filter(({ re, im }) => im === 0 && re < -1).length,
       attracts: clearly ? 0 : decided ? 1 : 2,
       iterations,
+      resolution: resolutionError(found, collocation.divergence),
     };
   }
 
@@ -188,6 +192,16 @@ export class CycleCurve {
       cycles.rhs(0, orbit.values.subarray(k * m * n, (k * m + 1) * n), flow.subarray(k * n, (k + 1) * n));
     return flow;
   }
+}
+
+/**
+ * |trivial multiplier - 1| of a cycle. A forced model has none: there the product of the multipliers is held
+ * against exp of the integrated divergence, unless so much contraction is beyond what collocation hands on.
+ */
+function resolutionError({ trivial, logModuli }: FloquetMultipliers, divergence: number): number {
+  if (trivial !== null) return Math.abs(trivial - 1);
+  if (!(Math.abs(divergence) < MOST_CONTRACTION)) return 0;
+  return Math.abs(logModuli.reduce((sum, log) => sum + log, 0) - divergence);
 }
 
 function largestEntry(step: Direction): number {

@@ -11,6 +11,8 @@ export interface CyclesOptions {
   readonly box?: readonly ({ readonly from: number; readonly to: number } | null)[];
   readonly intervals?: number;
   readonly collocationPoints?: number;
+  /** Whether meshes are refined where the discretisation asks for it; true unless told. */
+  readonly refine?: boolean;
   /** Cycles along one branch. */
   readonly maximumPoints?: number;
   readonly doublings?: number;

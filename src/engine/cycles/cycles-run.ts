@@ -216,6 +216,7 @@ export class CyclesRun {
       lower: Math.min(from, to),
       upper: Math.max(from, to),
       pointBudget: this.options.maximumPoints ?? CYCLES_DEFAULTS.maximumPoints,
+      refine: this.options.refine ?? true,
       isBack,
     };
     const forth = yield* this.drive(followCycles(curve, start, settings), how.fraction);

@@ -19,8 +19,8 @@ export const CYCLE_STEP_DEFAULTS = {
   bend: 0.93,
   /** Cycles between two adaptations of the mesh. */
   adaptEvery: 4,
-  /** Error of the trivial multiplier that asks for a finer mesh, how much finer, and how fine at most. */
-  trivialError: 1e-7,
+  /** Error of the discretisation that asks for a finer mesh, how much finer, and how fine at most. */
+  resolution: 1e-7,
   refine: 1.5,
   mostIntervals: 240,
   /** Cycles in a row at one value of the parameter after which the branch is a family. */
@@ -38,6 +38,7 @@ export interface CycleFollowSettings {
   readonly lower: number;
   readonly upper: number;
   readonly pointBudget: number;
+  readonly refine: boolean;
   /** Size of the cycle (or of its difference from the cycle it doubled from) at which the branch is back. */
   readonly isBack: (
     curve: CycleCurve,
@@ -58,15 +59,20 @@ export interface CyclesFollowed {
 
 /**
  * Follows a branch of cycles from one in the direction of its tangent by pseudo-arclength continuation, with
- * mesh adaptation, refinement where the trivial multiplier asks for it, and location of special points. A
+ * mesh adaptation, refinement where the discretisation asks for it, and location of special points. A
  * generator that yields the number of cycles so far; it never ends without a reason.
  */
 export function* followCycles(
   first: CycleCurve,
-  start: CyclePoint,
+  begin: CyclePoint,
   settings: CycleFollowSettings,
 ): Generator<number, CyclesFollowed> {
   let curve = first;
+  let start = begin;
+  for (let finer = refined(curve, start, settings); finer; finer = refined(curve, start, settings)) {
+    ({ curve, point: start } = finer);
+    yield 0;
+  }
   const accept = (point: CyclePoint): AcceptedCycle => ({
     point,
     extremes: cycleExtremes(curve.cycles, curve.basis, point.orbit, point.period),
@@ -122,7 +128,7 @@ export function* followCycles(
     let settled: CyclePoint | null = next;
     if (followed.cycles.length % CYCLE_STEP_DEFAULTS.adaptEvery === 0) {
       settled = curve.adapt(next) ?? next;
-      const finer = refined(curve, settled);
+      const finer = refined(curve, settled, settings);
       if (finer) ({ curve, point: settled } = finer);
     }
     followed.cycles.push(accept(settled));
@@ -158,12 +164,15 @@ export function* followCycles(
 const isLong = (point: CyclePoint, start: CyclePoint): boolean =>
   point.period > CYCLE_STEP_DEFAULTS.longPeriod * start.period;
 
-/** The same cycle on a finer mesh, where its trivial multiplier asks for one. */
-function refined(curve: CycleCurve, point: CyclePoint): { curve: CycleCurve; point: CyclePoint } | null {
-  const { trivial } = point.floquet;
+/** The same cycle on a finer mesh, where its resolution asks for one. */
+function refined(
+  curve: CycleCurve,
+  point: CyclePoint,
+  { refine }: CycleFollowSettings,
+): { curve: CycleCurve; point: CyclePoint } | null {
   const N = Math.round(curve.N * CYCLE_STEP_DEFAULTS.refine);
-  if (trivial === null || N > CYCLE_STEP_DEFAULTS.mostIntervals) return null;
-  if (!(Math.abs(trivial - 1) > CYCLE_STEP_DEFAULTS.trivialError)) return null;
+  if (!refine || N > CYCLE_STEP_DEFAULTS.mostIntervals) return null;
+  if (!(point.resolution > CYCLE_STEP_DEFAULTS.resolution)) return null;
   return onFinerMesh(curve, point, N);
 }
 

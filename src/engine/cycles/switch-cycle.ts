@@ -7,6 +7,9 @@ import type { Orbit } from './orbit';
 /** First steps onto the other branch that are tried, in scaled coordinates. */
 const FIRST_STEPS = [0.01, 0.03, 0.003, 0.1] as const;
 
+/** The other branch may leave at a sharp angle to the direction, but not farther than this many first steps. */
+const FARTHEST = 30;
+
 /**
  * First cycle of twice the period at a period doubling: the cycle run through twice, plus a small multiple of
  * (v, -v) with v carried by the linearised flow from the eigenvector of the multiplier -1. Null where no size
@@ -93,29 +96,21 @@ export function switchAtBranchPoint(
     for (const size of FIRST_STEPS) {
       const near = curve.correct(at.orbit, along, sign * size);
       const far = near && curve.correct(at.orbit, along, 2 * sign * size);
-      if (near === null || far === null || !isNew(curve, at, along, near, size)) continue;
+      if (near === null || far === null || !isNear(curve, at, near, size)) continue;
       found.push(inFittingCoordinates(curve, near, far));
       break;
     }
   return found;
 }
 
-/** Whether the corrector stayed on the other branch: its step must lie along the direction. */
-function isNew(
-  curve: CycleCurve,
-  at: CyclePoint,
-  along: Direction,
-  found: CyclePoint,
-  size: number,
-): boolean {
+/** Whether the corrector found a cycle near by; its distance along the direction is given by the constraint. */
+function isNear(curve: CycleCurve, at: CyclePoint, found: CyclePoint, size: number): boolean {
   const moved: Direction = {
     values: found.orbit.values.map((value, k) => value - at.orbit.values[k]),
     logPeriod: found.orbit.logPeriod - at.orbit.logPeriod,
     parameter: (found.orbit.parameter - at.orbit.parameter) / curve.cycles.parameterScale,
   };
-  const { mesh } = at.orbit;
-  const length = Math.sqrt(curve.inner(mesh, moved, moved));
-  return length > 0 && Math.abs(curve.inner(mesh, moved, along)) > 0.7 * length && length < 3 * size;
+  return Math.sqrt(curve.inner(at.orbit.mesh, moved, moved)) < FARTHEST * size;
 }
 
 function inFittingCoordinates(

@@ -72,7 +72,7 @@ export function* detectPeriod(
       range.every((width, i) => {
         const a = run.states[(last - back) * n + i];
         const b = run.states[(last - back - lag) * n + i];
-        return Math.abs(a - b) <= tolerance * width + Number.EPSILON * 100 * Math.abs(a);
+        return Math.abs(a - b) <= tolerance * width + noise + Number.EPSILON * 100 * Math.abs(a);
       });
     if (same(0) && same(lag)) {
       const message = lag === 1 ? 'A cycle.' : `A cycle that closes after ${lag} turns.`;
