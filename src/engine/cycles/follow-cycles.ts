@@ -1,7 +1,7 @@
 import type { CycleBranchEnd } from './contract';
 import { CycleCurve, type CyclePoint } from './cycle-curve';
 import { cycleExtremes, type CycleExtremes } from './cycle-extremes';
-import { crossingKinds, locateCycle, type CycleCrossing } from './locate-cycle';
+import { crossingKinds, isUpright, locateCycle, type CycleCrossing } from './locate-cycle';
 import { REST_DEFAULTS, restOnCycle } from './rest-on-cycle';
 
 /** Steps are in scaled arclength; see `Collocation.inner2`. */
@@ -140,7 +140,7 @@ export function* followCycles(
     }
     const back = settings.isBack(curve, settled);
     if (back) return finish(back.reason, back.message);
-    upright = Math.abs(settled.tangent.parameter) < 1e-9 && !isLong(settled, start) ? upright + 1 : 0;
+    upright = isUpright(settled) && !isLong(settled, start) ? upright + 1 : 0;
     if (upright >= CYCLE_STEP_DEFAULTS.upright)
       return finish(
         'could not be resolved further',

@@ -20,6 +20,8 @@ export interface CycleCrossing {
  * what is left of the change outside the unit circle are complex pairs.
  */
 export function crossingKinds(a: CyclePoint, b: CyclePoint): readonly CycleSpecialKind[] {
+  // A family of cycles at one value of the parameter: multipliers touch 1 all along, and mean nothing.
+  if (isUpright(a) && isUpright(b)) return [];
   const turns = a.tangent.parameter * b.tangent.parameter < 0;
   const above = b.above - a.above;
   const below = b.below - a.below;
@@ -34,6 +36,11 @@ export function crossingKinds(a: CyclePoint, b: CyclePoint): readonly CycleSpeci
   if (pairs > 0 && (Math.abs(above) > 1 || Math.abs(below) > 1)) kinds.push('torus');
   return kinds;
 }
+
+const UPRIGHT = 1e-8;
+
+/** Whether the branch stands upright there: another cycle at the same value of the parameter lies beside. */
+export const isUpright = ({ tangent }: CyclePoint): boolean => Math.abs(tangent.parameter) < UPRIGHT;
 
 const isOdd = (value: number): boolean => value % 2 !== 0;
 
