@@ -53,15 +53,15 @@ export interface TaskResult {
 }
 
 /** Results of a study as another program reads them, after a round trip through JSON text. */
-export function studyResults(study: unknown): readonly TaskResult[] {
+export function studyResults<Result = TaskResult>(study: unknown): readonly Result[] {
   const outcome = runStudy(JSON.parse(JSON.stringify(study)));
   if (!outcome.ok) throw new Error(outcome.problems.join('; '));
-  return (JSON.parse(JSON.stringify(outcome.results)) as { tasks: TaskResult[] }).tasks;
+  return (JSON.parse(JSON.stringify(outcome.results)) as { tasks: Result[] }).tasks;
 }
 
 /** What the only task of a study found. */
-export function onlyResult(study: unknown): TaskResult {
-  const [first] = studyResults(study);
+export function onlyResult<Result = TaskResult>(study: unknown): Result {
+  const [first] = studyResults<Result>(study);
   if (first === undefined) throw new Error('the study has no task');
   return first;
 }

@@ -1,6 +1,7 @@
 import { expose } from 'comlink';
 import { describe, expect, it, vi } from 'vitest';
 
+import { cyclesTaskSchema, type AnalysisTask } from '../../src/engine/schema/analysis-tasks';
 import { createEmptyPreset } from '../../src/engine/schema/create';
 import { createEngineClient, EngineStopped } from '../../src/workers/client';
 import type { EngineApi, ExploreRequest } from '../../src/workers/protocol';
@@ -88,6 +89,27 @@ describe('engine client', () => {
     expect(stages).toEqual(['half way']);
     client.cancel(7);
     await vi.waitFor(() => expect(cancel).toHaveBeenCalledWith(7));
+    client.dispose();
+  });
+
+  it('hands a task and its partial results across, and its result back', async () => {
+    const { client } = makeClient({
+      analyse: async (
+        _job: number,
+        task: AnalysisTask,
+        onProgress: (progress: unknown) => Promise<void>,
+      ): Promise<unknown> => {
+        await onProgress({ fraction: 0.5, stage: task.task, partial: { split: { points: 3 }, twin: null } });
+        return { split: { points: 7, periods: Float64Array.of(1, 2) }, twin: null };
+      },
+    });
+    const task = cyclesTaskSchema.parse({ task: 'cycles', parameter: 'r', from: 0, to: 1 });
+    const heard: unknown[] = [];
+    const { split } = await client.analyse(1, task, ({ stage, partial }) =>
+      heard.push([stage, partial?.split.points]),
+    );
+    expect(heard).toEqual([['cycles', 3]]);
+    expect(split).toEqual({ points: 7, periods: Float64Array.of(1, 2) });
     client.dispose();
   });
 

@@ -1,6 +1,8 @@
 import { describe, expect, it } from 'vitest';
 
 import type { Progress } from '../../src/engine/continuation/contract';
+import type { PictureResult } from '../../src/engine/analyses/contract';
+import { pictureTaskSchema } from '../../src/engine/schema/analysis-tasks';
 import { createEmptyPreset } from '../../src/engine/schema/create';
 import { createLocalEngine } from '../../src/workers/local-engine';
 import type { ExploreRequest } from '../../src/workers/protocol';
@@ -122,6 +124,35 @@ describe('the engine behind the face of the workers', () => {
     expect(result.split.status).toBe('cancelled');
     expect(result.twin).toBeNull();
     expect(result.split.message).toMatch(/Cancelled/);
+    engine.dispose();
+  });
+
+  it('runs a task of the complete engine as a job, with partial results, and refuses unknown names', async () => {
+    const { engine } = await makeEngine();
+    const task = pictureTaskSchema.parse({ task: 'picture', parameter: 'spread', from: 0.1, to: 2 });
+    const progress: Progress<PictureResult>[] = [];
+    const picture = await engine.analyse(3, task, (one) => progress.push(one));
+    expect(picture.status).toBe('complete');
+    // Case B1 at spread 1, eps = 0.3.
+    const [coexistence] = picture.equilibria.split.equilibria.filter((one) => one.absent.length === 0);
+    expect(coexistence.state[0]).toBeCloseTo(0.91, 9);
+    expect(picture.summary.some((row) => row.of === 'twin')).toBe(true);
+    expect(picture.sweep.split.milliseconds).toBeGreaterThan(0);
+    expect(progress.some((one) => one.partial?.sweep.split.branches.length)).toBe(true);
+    await expect(engine.analyse(4, { ...task, parameter: 'spred' }, () => undefined)).rejects.toThrow(
+      /"spred" is no parameter of this model/,
+    );
+    engine.dispose();
+  });
+
+  it('cancels a task and keeps what was found', async () => {
+    const { engine } = await makeEngine();
+    const task = pictureTaskSchema.parse({ task: 'picture', parameter: 'spread', from: -3, to: 3 });
+    const running = engine.analyse(6, task, () => undefined);
+    engine.cancel(6);
+    const picture = await running;
+    expect(picture.status).toBe('cancelled');
+    expect(picture.cycles.split.message).toMatch(/not looked for/);
     engine.dispose();
   });
 
