@@ -61,8 +61,19 @@ function runTask(model: CompiledModel, task: StudyTask): Json {
     task: task.task,
     id: task.id ?? null,
     parameters: byName(model.system.parameterKeys, p),
-    ...answer(model, task),
+    ...answerOrReason(model, task),
   };
+}
+
+/** A mistake of the engine's own in one task must not cost the results of the others. */
+function answerOrReason(model: CompiledModel, task: StudyTask): JsonRecord {
+  try {
+    return answer(model, task);
+  } catch (error) {
+    const reason = error instanceof Error ? error.message : String(error);
+    const message = `The engine stopped unexpectedly in this task: ${reason}`;
+    return { status: 'failed', message, split: null, twin: null };
+  }
 }
 
 function answer(model: CompiledModel, task: StudyTask): JsonRecord {

@@ -3,6 +3,7 @@ import type { AnalysisName, AnalysisTask } from '../schema/analysis-tasks';
 import type { CompiledModel } from '../system/compile-model';
 import type { AnalysisOptions, AnalysisResultOf } from './contract';
 import { runCycles } from './cycles';
+import { runLyapunov } from './lyapunov';
 import { runPicture } from './picture';
 
 type RunTask<Task extends AnalysisTask> = (
@@ -18,6 +19,7 @@ type Runs = {
 /** What each task is carried out by. */
 const RUNS: Partial<Runs> = {
   cycles: runCycles,
+  lyapunov: runLyapunov,
   picture: runPicture,
 };
 

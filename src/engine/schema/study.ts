@@ -1,6 +1,6 @@
 import { z } from './zod';
 
-import { commonTask, cyclesTaskSchema, pictureTaskSchema } from './analysis-tasks';
+import { commonTask, cyclesTaskSchema, lyapunovTaskSchema, pictureTaskSchema } from './analysis-tasks';
 import { LIMITS } from './limits';
 import { presetSchema } from './preset';
 
@@ -77,6 +77,7 @@ export const studySchema = z.strictObject({
         equilibriaTaskSchema,
         sweepTaskSchema,
         cyclesTaskSchema,
+        lyapunovTaskSchema,
         pictureTaskSchema,
       ]),
     )
