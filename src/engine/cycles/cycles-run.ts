@@ -187,7 +187,9 @@ export class CyclesRun {
         entered.point.orbit,
         entered.point.period,
       );
-      if (!isFeasible(entered.curve.cycles, lowest) || this.isKnown(entered.curve, entered.point)) continue;
+      if (!isFeasible(entered.curve.cycles, lowest)) continue;
+      // Close to the branch point the cycle is hardly told from the one it leaves.
+      if (this.isKnown(entered.curve, entered.point, special.branch)) continue;
       const { parameter, id } = special;
       yield* this.follow(entered.curve, entered.point, () => null, {
         origin: { kind: 'branch point of cycles', parameter, specialPoint: id },
@@ -316,14 +318,15 @@ export class CyclesRun {
     );
     return new CycleCurve(
       cycles,
-      options.intervals ?? CYCLES_DEFAULTS.intervals,
+      (options.intervals ?? CYCLES_DEFAULTS.intervals) * Math.max(1, forcingPeriods),
       options.collocationPoints ?? CYCLES_DEFAULTS.collocationPoints,
     );
   }
 
-  private isKnown(curve: CycleCurve, point: CyclePoint): boolean {
+  private isKnown(curve: CycleCurve, point: CyclePoint, besides = -1): boolean {
     const { lowest, highest } = cycleExtremes(curve.cycles, curve.basis, point.orbit, point.period);
-    return isKnownCycle(this.branches, {
+    const others = this.branches.filter((_, k) => k !== besides);
+    return isKnownCycle(others, {
       parameter: point.orbit.parameter,
       period: point.period,
       lowest,

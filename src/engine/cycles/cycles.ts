@@ -13,6 +13,9 @@ const NO_RANGE = 'The range needs two different finite ends.';
 const NO_HOPF = 'No Hopf point was found along the range, so no cycle begins there.';
 const NO_PERIOD =
   'Explicit time enters this model in a way that has no period (other than through sines and cosines of time), so it has no period map.';
+const NOT_SETTLED = 'The run from the start values could not be followed.';
+/** A population below this share of the start values has died out. */
+const VANISHED = 1e-15;
 /** Share of the progress before any branch is followed. */
 const STARTED = 0.2;
 
@@ -111,11 +114,26 @@ function* beginUnderForcing(
     return;
   }
   const period = forcing * (options.forcingPeriods ?? CYCLES_DEFAULTS.forcingPeriods);
-  for (const start of forcedStarts(system, options)) {
+  for (const [k, start] of forcedStarts(system, options).entries()) {
     const found = yield* wait(run, settleUnderForcing(system, start, period), system, parameters);
-    if (!found.ok) run.note(found.message);
-    else yield* run.fromState(found.state, period, parameters[options.parameterIndex], 'period map');
+    if (found.ok) {
+      const state = withoutVanished(system, found.state, options.starts[0]);
+      yield* run.fromState(state, period, parameters[options.parameterIndex], 'period map');
+    } else if (k < options.starts.length) run.note(`${NOT_SETTLED} ${found.message}`);
   }
+}
+
+/** Populations that died out on the way are absent, where their absence lasts. */
+function withoutVanished(system: CompiledSystem, state: Float64Array, start: Float64Array): Float64Array {
+  const size = start.reduce((most, value) => Math.max(most, Math.abs(value)), 0);
+  const gone = system.populations.filter(({ states }) =>
+    states.every((i) => system.nonnegative[i] && Math.abs(state[i]) < VANISHED * size),
+  );
+  const out = state.slice();
+  for (const { states } of gone) for (const i of states) out[i] = 0;
+  const f = new Float64Array(system.dimension);
+  system.rhs(0, out, f);
+  return gone.some(({ states }) => states.some((i) => f[i] !== 0)) ? state : out;
 }
 
 /** The starts, and the first of them without each population in turn: what others can invade. */

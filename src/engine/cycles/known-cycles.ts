@@ -2,6 +2,8 @@ import type { CycleBranch } from './contract';
 
 /** Agreement of a cycle with a branch interpolated at its parameter. */
 const SAME = 2e-3;
+/** Share of a step by which a cycle may lie outside it, by rounding. */
+const SLACK = 1e-6;
 
 export interface CycleLike {
   readonly parameter: number;
@@ -16,8 +18,10 @@ export function isKnownCycle(branches: readonly CycleBranch[], cycle: CycleLike)
     const { parameters } = branch;
     for (let k = 0; k + 1 < parameters.length; k += 1) {
       const [a, b] = [parameters[k], parameters[k + 1]];
-      if ((cycle.parameter - a) * (cycle.parameter - b) > 0 || a === b) continue;
-      if (agreesBetween(branch, k, (cycle.parameter - a) / (b - a), cycle)) return true;
+      if (a === b) continue;
+      const share = (cycle.parameter - a) / (b - a);
+      if (share < -SLACK || share > 1 + SLACK) continue;
+      if (agreesBetween(branch, k, share, cycle)) return true;
     }
     return false;
   });

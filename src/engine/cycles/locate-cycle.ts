@@ -3,6 +3,11 @@ import type { CycleSpecialKind } from './contract';
 
 export const LOCATE_CYCLE_DEFAULTS = { iterations: 30, tolerance: 1e-10 } as const;
 
+/** Share of the step at which the neighbours of a singular point lie. */
+const BESIDE = 1e-3;
+/** Size of the test from which on the best point will do where no better one can be corrected. */
+const CLOSE = 1e-5;
+
 export interface CycleCrossing {
   readonly kind: CycleSpecialKind;
   readonly point: CyclePoint;
@@ -104,9 +109,9 @@ export function locateCycle(
     // Every third trial halves the bracket, so that a flat test cannot stall it.
     const secant = (low * fHigh - high * fLow) / (fHigh - fLow);
     const s = k % 3 === 2 || !(secant > low && secant < high) ? (low + high) / 2 : secant;
-    const point = curve.correct(a.orbit, a.tangent, s);
-    if (point === null) return null;
-    const f = test(point);
+    const trial = trialAt(curve, a, s, BESIDE * h, test);
+    if (trial === null) return least < CLOSE ? { point: best, bracket: high - low } : null;
+    const { point, f } = trial;
     if (Math.abs(f) < least) [least, best] = [Math.abs(f), point];
     if (least < tolerance) break;
     if (f * fLow > 0) {
@@ -120,4 +125,29 @@ export function locateCycle(
     }
   }
   return { point: best, bracket: least < tolerance ? tolerance : high - low };
+}
+
+/**
+ * The cycle at distance s with its test value. The corrector's matrix is singular at a branch point itself:
+ * there the mean of the neighbours at s - d and s + d stands in, with an error of the order of d^2.
+ */
+function trialAt(
+  curve: CycleCurve,
+  a: CyclePoint,
+  s: number,
+  d: number,
+  test: (point: CyclePoint) => number,
+): { readonly point: CyclePoint; readonly f: number } | null {
+  const point = curve.correct(a.orbit, a.tangent, s);
+  if (point) return { point, f: test(point) };
+  const before = curve.correct(a.orbit, a.tangent, s - d);
+  const after = curve.correct(a.orbit, a.tangent, s + d);
+  if (before === null || after === null) return null;
+  const orbit = {
+    ...before.orbit,
+    values: before.orbit.values.map((value, k) => (value + after.orbit.values[k]) / 2),
+    logPeriod: (before.orbit.logPeriod + after.orbit.logPeriod) / 2,
+    parameter: (before.orbit.parameter + after.orbit.parameter) / 2,
+  };
+  return { point: { ...before, orbit }, f: (test(before) + test(after)) / 2 };
 }
