@@ -9,14 +9,20 @@ trap 'rm -rf "$results"' EXIT
 if [ ! -f node_modules/.package-lock.json ] || [ package-lock.json -nt node_modules/.package-lock.json ]; then
   CFLAGS=-O1 CXXFLAGS=-O1 npm ci || exit 1
 fi
-if ! command -v chromium >/dev/null; then
-  if ! command -v apt-get >/dev/null; then
+wanted=''
+command -v chromium >/dev/null || wanted='chromium'
+python3 -c 'import scipy' 2>/dev/null || wanted="$wanted python3-scipy"
+if [ -n "$wanted" ]; then
+  as_root=''
+  [ "$(id -u)" -eq 0 ] || as_root='sudo'
+  if command -v apt-get >/dev/null; then
+    $as_root apt-get update && $as_root apt-get install -y --no-install-recommends $wanted
+  fi
+  if ! command -v chromium >/dev/null; then
     echo 'The browser tests need chromium on the path. Install it and run this again.' >&2
     exit 1
   fi
-  as_root=''
-  [ "$(id -u)" -eq 0 ] || as_root='sudo'
-  $as_root apt-get update && $as_root apt-get install -y --no-install-recommends chromium || exit 1
+  python3 -c 'import scipy' 2>/dev/null || echo 'SciPy is not here: the comparison with it is left out.' >&2
 fi
 
 run() { # name, command...: one static check, recorded as one test
