@@ -7,6 +7,7 @@ import { pictureTaskSchema } from '@/engine/schema/analysis-tasks';
 import { documentFromEquations } from '@/engine/schema/equations';
 import type { PresetDocument } from '@/engine/schema/preset';
 import { compileModel } from '@/engine/system/compile-model';
+import { STARTER_PRESETS } from '@/presets';
 import { saturatingTwoSexPredator } from '@/presets/saturating-two-sex-predator';
 
 /**
@@ -113,6 +114,24 @@ describe('the full picture', () => {
     expect(late.cycles.split.status).toBe('cancelled');
     expect(row(late.summary, 'Hopf')).toHaveLength(1);
   });
+
+  it.each(STARTER_PRESETS.map((one) => [one.id, one.document] as const))(
+    'of the starter preset %s is complete, and every row says something',
+    (_id, document) => {
+      const [{ parameter, from, to }] = [
+        ...document.sweeps,
+        { parameter: document.parameters[0]?.symbol ?? 'spread', from: 0.1, to: 1 },
+      ];
+      const { result } = picture(document, { parameter, from, to });
+      expect(result.status).toBe('complete');
+      expect(result.summary.length).toBeGreaterThan(0);
+      for (const { note, parameter: at, extent } of result.summary) {
+        expect(note).toMatch(/\.$/);
+        expect(note).not.toMatch(/NaN|undefined|Infinity/);
+        expect(at !== null || extent !== null).toBe(true);
+      }
+    },
+  );
 
   it('leaves the twin out where it is not asked for', () => {
     const { result } = picture(saturatingTwoSexPredator, { twin: false, from: 0.2, to: 1 });
