@@ -1,23 +1,9 @@
 import type { CollocationBasis } from './collocation-basis';
+import { CollocationBorders, valueAtGauss, type Constraint, type Direction } from './collocation-borders';
 import { CondensedChain } from './condensed-chain';
 import type { CycleSystem } from './cycle-system';
 import { solveAugmented } from './interval-elimination';
 import { intervalsOf, type Orbit } from './orbit';
-
-/** A direction in the space of orbits: nodes, swept parameter in units of its scale, logarithm of the period. */
-export interface Direction {
-  readonly values: Float64Array;
-  parameter: number;
-  logPeriod: number;
-}
-
-/** Row that closes the system besides the phase: inner product with a direction. */
-export interface Constraint {
-  readonly along: Direction;
-  readonly target: number;
-  /** The orbit that distances are taken from. */
-  readonly from: Orbit;
-}
 
 /**
  * Orthogonal collocation at Gauss points for dw/dtau = T g(T tau, w, lambda), w(0) = w(1), on a fixed mesh:
@@ -35,6 +21,7 @@ export class Collocation {
   /** [G_k | H_k | rho_k] of each interval: what the last linearisation says of the flow across it. */
   readonly transfer: Float64Array;
   private readonly chain: CondensedChain;
+  private readonly borders: CollocationBorders;
   /** x_k1 .. x_km as affine functions of x_k0 and the extras: n*m rows of n + E + 1, for each interval. */
   private readonly inner: Float64Array;
   private readonly augmented: Float64Array;
@@ -42,10 +29,6 @@ export class Collocation {
   private readonly g: Float64Array;
   private readonly gp: Float64Array;
   private readonly J: Float64Array;
-  private readonly nodeRows: Float64Array;
-  private readonly meshRows: Float64Array;
-  private readonly corner: Float64Array;
-  private readonly right: Float64Array;
   private readonly X: Float64Array;
   private readonly d: Float64Array;
   private residual = 0;
@@ -61,6 +44,7 @@ export class Collocation {
     const m = (this.m = basis.m);
     const E = (this.extras = cycles.forced ? 1 : 2);
     this.chain = new CondensedChain(N, n, E);
+    this.borders = new CollocationBorders(basis, N, n, E, cycles.parameterScale);
     this.transfer = new Float64Array(N * n * (n + E + 1));
     this.inner = new Float64Array(N * n * m * (n + E + 1));
     this.augmented = new Float64Array(n * m * (n * m + n + E + 1));
@@ -68,10 +52,6 @@ export class Collocation {
     this.g = new Float64Array(n);
     this.gp = new Float64Array(n);
     this.J = new Float64Array(n * n);
-    this.nodeRows = new Float64Array(E * (N * m + 1) * n);
-    this.meshRows = new Float64Array(E * (N + 1) * n);
-    this.corner = new Float64Array(E * E);
-    this.right = new Float64Array(E);
     this.X = new Float64Array((N + 1) * n);
     this.d = new Float64Array(E);
   }
@@ -95,9 +75,10 @@ export class Collocation {
   linearise(orbit: Orbit, reference: Orbit, constraint: Constraint): number {
     if (intervalsOf(orbit) !== this.N) throw new Error('The orbit has another number of intervals.');
     if (!this.condenseIntervals(orbit)) return NaN;
-    this.setBorders(orbit, reference, constraint);
-    this.condenseBorders();
-    if (!this.chain.factor(this.transfer, this.meshRows, this.corner, this.right)) return NaN;
+    const { borders } = this;
+    borders.set(orbit, reference, constraint);
+    borders.condense(this.inner);
+    if (!this.chain.factor(this.transfer, borders.meshRows, borders.corner, borders.right)) return NaN;
     return this.residual;
   }
 
@@ -149,18 +130,11 @@ export class Collocation {
       for (let g = 0; g < m; g += 1) {
         let dot = 0;
         for (let i = 0; i < n; i += 1)
-          dot += this.valueAt(a.values, k, g, i) * this.valueAt(b.values, k, g, i);
+          dot += valueAtGauss(basis, n, a.values, k, g, i) * valueAtGauss(basis, n, b.values, k, g, i);
         sum += h * basis.weights[g] * dot;
       }
     }
     return sum + a.parameter * b.parameter + a.logPeriod * b.logPeriod;
-  }
-
-  private valueAt(values: Float64Array, k: number, g: number, i: number): number {
-    const { n, m, basis } = this;
-    let sum = 0;
-    for (let j = 0; j <= m; j += 1) sum += basis.values[g * (m + 1) + j] * values[(k * m + j) * n + i];
-    return sum;
   }
 
   private condenseIntervals(orbit: Orbit): boolean {
@@ -191,7 +165,7 @@ export class Collocation {
     const scale = cycles.parameterScale;
     for (let q = 0; q < m; q += 1) {
       const tau = mesh[k] + h * basis.points[q];
-      for (let i = 0; i < n; i += 1) w[i] = this.valueAt(values, k, q, i);
+      for (let i = 0; i < n; i += 1) w[i] = valueAtGauss(basis, n, values, k, q, i);
       const t = cycles.forced ? T * tau : 0;
       cycles.rhs(t, w, g);
       cycles.jacobian(t, w, J);
@@ -223,66 +197,6 @@ export class Collocation {
       }
     }
     return true;
-  }
-
-  /** Rows of the borders over all nodes: the constraint first, then the phase. */
-  private setBorders(orbit: Orbit, reference: Orbit, { along, target, from }: Constraint): void {
-    const { N, n, m, extras: E, basis, nodeRows, corner, right, cycles } = this;
-    const length = (N * m + 1) * n;
-    nodeRows.fill(0);
-    corner.fill(0);
-    let phase = 0;
-    let distance = 0;
-    for (let k = 0; k < N; k += 1) {
-      const h = orbit.mesh[k + 1] - orbit.mesh[k];
-      for (let q = 0; q < m; q += 1)
-        for (let i = 0; i < n; i += 1) {
-          const direction = h * basis.weights[q] * this.valueAt(along.values, k, q, i);
-          let slope = 0;
-          if (E === 2)
-            for (let j = 0; j <= m; j += 1)
-              slope += basis.slopes[q * (m + 1) + j] * reference.values[(k * m + j) * n + i];
-          slope *= basis.weights[q];
-          for (let j = 0; j <= m; j += 1) {
-            const at = (k * m + j) * n + i;
-            const value = basis.values[q * (m + 1) + j];
-            nodeRows[at] += direction * value;
-            distance += direction * value * (orbit.values[at] - from.values[at]);
-            if (E === 2) {
-              nodeRows[length + at] += slope * value;
-              phase += slope * value * (orbit.values[at] - reference.values[at]);
-            }
-          }
-        }
-    }
-    corner[0] = along.parameter;
-    distance += (along.parameter * (orbit.parameter - from.parameter)) / cycles.parameterScale;
-    if (E === 2) {
-      corner[1] = along.logPeriod;
-      distance += along.logPeriod * (orbit.logPeriod - from.logPeriod);
-      right[1] = -phase;
-    }
-    right[0] = target - distance;
-  }
-
-  /** Rows over all nodes become rows over mesh points. */
-  private condenseBorders(): void {
-    const { N, n, m, extras: E, inner, nodeRows, meshRows, corner, right } = this;
-    const length = (N * m + 1) * n;
-    const width = n + E + 1;
-    for (let e = 0; e < E; e += 1) {
-      for (let k = 0; k <= N; k += 1)
-        for (let i = 0; i < n; i += 1)
-          meshRows[(e * (N + 1) + k) * n + i] = nodeRows[e * length + k * m * n + i];
-      for (let k = 0; k < N; k += 1)
-        for (let r = 0; r < n * (m - 1); r += 1) {
-          const coefficient = nodeRows[e * length + (k * m + 1) * n + r];
-          const row = (k * n * m + r) * width;
-          for (let i = 0; i < n; i += 1) meshRows[(e * (N + 1) + k) * n + i] += coefficient * inner[row + i];
-          for (let f = 0; f < E; f += 1) corner[e * E + f] += coefficient * inner[row + n + f];
-          right[e] -= coefficient * inner[row + n + E];
-        }
-    }
   }
 
   /** From mesh points to all nodes. `particular`: 1 with the residuals of the intervals, 0 without. */

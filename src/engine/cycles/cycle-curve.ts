@@ -1,4 +1,5 @@
-import { Collocation, type Direction } from './collocation';
+import { Collocation } from './collocation';
+import type { Direction } from './collocation-borders';
 import { createBasis, type CollocationBasis } from './collocation-basis';
 import type { CycleSystem } from './cycle-system';
 import { floquetMultipliers, withDivergence, type FloquetMultipliers } from './floquet';

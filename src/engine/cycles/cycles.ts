@@ -35,13 +35,14 @@ export function* cycles(
   const run = new CyclesRun(system, p, options);
   const { parameterIndex, from, to } = options;
   if (!(parameterIndex >= 0 && parameterIndex < system.parameterKeys.length))
-    return run.result('failed', NO_PARAMETER);
-  if (!Number.isFinite(from) || !Number.isFinite(to) || from === to) return run.result('failed', NO_RANGE);
+    return run.record.result('failed', NO_PARAMETER);
+  if (!Number.isFinite(from) || !Number.isFinite(to) || from === to)
+    return run.record.result('failed', NO_RANGE);
   if (!system.autonomous) yield* beginUnderForcing(run, system, p, options);
   else if (options.beginFrom === 'trajectory') yield* beginOnTrajectory(run, system, p, options);
   else yield* beginAtHopfPoints(run, system, p, options);
   yield* run.followSwitches();
-  return run.result('complete', run.summary());
+  return run.record.result('complete', run.record.summary());
 }
 
 function* beginAtHopfPoints(
@@ -52,7 +53,7 @@ function* beginAtHopfPoints(
 ): Generator<Progress<CyclesResult>, void> {
   const points = options.hopfPoints ?? (yield* sweepForHopf(run, system, p, options));
   const hopfs = points.filter((one) => one.kind === 'Hopf' && one.hopf !== null && one.feasible);
-  if (hopfs.length === 0) run.note(NO_HOPF);
+  if (hopfs.length === 0) run.record.note(NO_HOPF);
   for (const [k, hopf] of hopfs.entries())
     yield* run.fromHopf(hopf, STARTED + ((1 - STARTED) * k) / hopfs.length);
 }
@@ -75,7 +76,7 @@ function* sweepForHopf(
   for (;;) {
     const step = search.next();
     if (step.done) return step.value.specialPoints;
-    yield run.progress(STARTED * step.value.fraction, 'looking for Hopf points');
+    yield run.record.progress(STARTED * step.value.fraction, 'looking for Hopf points');
   }
 }
 
@@ -95,7 +96,7 @@ function* beginOnTrajectory(
   system.setParameters(parameters);
   const settle = settleOnCycle(system, options.starts[0], options.horizon ?? CYCLES_DEFAULTS.horizon);
   const found = yield* wait(run, settle, system, parameters);
-  if (!found.ok) run.note(found.message);
+  if (!found.ok) run.record.note(found.message);
   else yield* run.fromState(found.state, found.period, parameters[options.parameterIndex], 'trajectory');
 }
 
@@ -110,7 +111,7 @@ function* beginUnderForcing(
   system.setParameters(parameters);
   const forcing = system.forcingPeriod();
   if (forcing === null) {
-    run.note(NO_PERIOD);
+    run.record.note(NO_PERIOD);
     return;
   }
   const period = forcing * (options.forcingPeriods ?? CYCLES_DEFAULTS.forcingPeriods);
@@ -119,7 +120,7 @@ function* beginUnderForcing(
     if (found.ok) {
       const state = withoutVanished(system, found.state, options.starts[0]);
       yield* run.fromState(state, period, parameters[options.parameterIndex], 'period map');
-    } else if (k < options.starts.length) run.note(`${NOT_SETTLED} ${found.message}`);
+    } else if (k < options.starts.length) run.record.note(`${NOT_SETTLED} ${found.message}`);
   }
 }
 
@@ -153,7 +154,7 @@ function* wait(
   for (;;) {
     const step = work.next();
     if (step.done) return step.value;
-    yield run.progress(STARTED * step.value.fraction, 'letting a trajectory settle');
+    yield run.record.progress(STARTED * step.value.fraction, 'letting a trajectory settle');
     // Another computation may have used the system in between.
     system.setParameters(parameters);
   }

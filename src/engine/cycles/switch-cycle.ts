@@ -1,5 +1,5 @@
 import { nullVector } from '../linalg/null-vector';
-import type { Direction } from './collocation';
+import type { Direction } from './collocation-borders';
 import { CycleCurve, type CyclePoint } from './cycle-curve';
 import { CycleSystem } from './cycle-system';
 import type { Orbit } from './orbit';
