@@ -52,16 +52,24 @@ export function axisTicks(axis: AxisSpec, count: number): readonly Tick[] {
   return values.map((value) => ({ value, label: formatShort(value, 6) }));
 }
 
+/** Decades that a logarithmic axis reaches down from its highest value, unless told. */
+const DECADES = 14;
+
 /** Widens an empty or degenerate extent, and leaves room at its ends. */
 export function paddedDomain(
   low: number,
   high: number,
-  options: { readonly logarithm: boolean; readonly fromZero?: boolean; readonly pad?: number },
+  options: {
+    readonly logarithm: boolean;
+    readonly fromZero?: boolean;
+    readonly pad?: number;
+    readonly decades?: number;
+  },
 ): [number, number] {
   const pad = options.pad ?? 0.05;
   if (!Number.isFinite(low) || !Number.isFinite(high)) return options.logarithm ? [0.1, 10] : [0, 1];
   if (options.logarithm) {
-    const floor = Math.max(low, high * 1e-12, Number.MIN_VALUE * 1e16);
+    const floor = Math.max(low, high * 10 ** -(options.decades ?? DECADES), Number.MIN_VALUE * 1e16);
     if (!(high > 0)) return [0.1, 10];
     const room = high / floor > 1.0001 ? (high / floor) ** pad : 2;
     return [floor / room, high * room];

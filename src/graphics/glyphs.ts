@@ -1,5 +1,6 @@
 /** Small signs drawn in a box from −1 to 1: special points, equilibria and the markers of classes. */
 import type { SpecialPointKind } from '@/engine/continuation/contract';
+import type { CycleSpecialKind } from '@/engine/cycles/contract';
 
 /** `ground` is filled with the ground's colour before the stroke, `ink` with the sign's own. */
 export interface GlyphPart {
@@ -23,6 +24,10 @@ export const GLYPHS = {
   transcritical: [part('M-0.75,-0.75L0.75,0.75M-0.75,0.75L0.75,-0.75')],
   pitchfork: [part('M-0.95,0H0.9M-0.15,0C0.1,-0.75,0.4,-0.8,0.9,-0.8M-0.15,0C0.1,0.75,0.4,0.8,0.9,0.8')],
   'branch point': [part('M0,0V-0.9M0,0L-0.8,0.5M0,0L0.8,0.5')],
+  'fold of cycles': [part('M-0.45,-0.9L0.65,0L-0.45,0.9')],
+  'period doubling': [part(circle(0.4, 0, -0.52), 'ink', false), part(circle(0.4, 0, 0.52), 'ink', false)],
+  torus: [part(circle(0.62, -0.32)), part(circle(0.62, 0.32))],
+  'branch point of cycles': [part('M0,0V-0.9M0,0L-0.8,0.5M0,0L0.8,0.5'), part(circle(0.3), 'ground')],
   'neutral saddle': [part('M0,-0.85L0.85,0L0,0.85L-0.85,0Z', 'ground'), part('M-0.3,0H0.3')],
   circle: [part(circle(0.7), 'ink')],
   square: [part('M-0.65,-0.65H0.65V0.65H-0.65Z', 'ink')],
@@ -55,7 +60,7 @@ export function twinMarker(index: number): GlyphName {
   return TWIN_MARKERS[index % TWIN_MARKERS.length] ?? 'hollow circle';
 }
 
-export function specialPointGlyph(kind: SpecialPointKind): GlyphName {
+export function specialPointGlyph(kind: SpecialPointKind | CycleSpecialKind): GlyphName {
   return kind;
 }
 

@@ -69,9 +69,15 @@ function bandMarks(band: PlotBand, layout: PlotLayout): Mark[] {
   outline.set(high, 0);
   for (let k = 0; k < count; k++) {
     outline[2 * (count + k)] = low[2 * (count - 1 - k)] ?? NaN;
-    outline[2 * (count + k) + 1] = low[2 * (count - 1 - k) + 1] ?? NaN;
+    const y = low[2 * (count - 1 - k) + 1] ?? NaN;
+    // Zero has no logarithm: the ground of the band is then the ground of the plot.
+    outline[2 * (count + k) + 1] = Number.isFinite(y) ? y : layout.top + layout.innerHeight;
   }
-  const style = { stroke: band.colour, width: 1, opacity: 0.8, ...(band.dash ? { dash: band.dash } : {}) };
+  const style = {
+    stroke: band.colour,
+    ...(band.edge ?? { width: 1, opacity: 0.8 }),
+    ...(band.dash ? { dash: band.dash } : {}),
+  };
   return [
     {
       kind: 'path',

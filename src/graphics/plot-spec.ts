@@ -28,6 +28,8 @@ export interface PlotBand {
   readonly high: Float64Array;
   readonly opacity: number;
   readonly dash?: readonly number[];
+  /** Edges of a continued cycle are as wide as branches; else they are thin. */
+  readonly edge?: { readonly width: number; readonly opacity: number };
   readonly twin: boolean;
 }
 

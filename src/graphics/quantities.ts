@@ -72,6 +72,8 @@ export function readQuantity(
 ): QuantityReader | null {
   if (quantity.quantity === 'time') return (_states, _offset, time) => time;
   if (quantity.quantity === 'parameter') return (_states, _offset, _time, parameter) => parameter;
+  // A state has no period; a cycle has.
+  if (quantity.quantity === 'period') return null;
   const kind = quantity.quantity === 'total' ? 'total' : 'class';
   const above = terms(context, kind, quantity.of, symbols);
   if (!above) return null;
@@ -92,6 +94,7 @@ export function readQuantity(
 function nameOf(context: QuantityContext, quantity: Quantity): { name: string; unit: string } {
   const density = context.densityUnit;
   if (quantity.quantity === 'time') return { name: 'time', unit: context.timeUnit };
+  if (quantity.quantity === 'period') return { name: 'period of the cycle', unit: context.timeUnit };
   if (quantity.quantity === 'parameter') return parameterName(context, quantity.of);
   if (quantity.quantity === 'total') {
     const population = context.populations.find((one) => one.symbol === quantity.of);

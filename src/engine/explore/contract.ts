@@ -55,6 +55,8 @@ export interface SweepRequest {
   readonly starts: readonly number[];
   readonly withTwin: boolean;
   readonly box?: BoxSides;
+  /** Long-run bands past Hopf points; true unless told. */
+  readonly bands?: boolean;
 }
 
 export interface SplitSweepResult {

@@ -12,7 +12,7 @@ import { untilCancelled } from './until-cancelled';
 export interface SplitSweepOptions {
   /** Asked between slices; true ends the sweep with what was found. */
   readonly isCancelled?: () => boolean;
-  /** Long-run bands past Hopf points; true unless told. */
+  /** Long-run bands past Hopf points, whatever the request says. */
   readonly bands?: boolean;
   /** Equilibria at the request's own numbers, where they are known; else they are sought first. */
   readonly equilibria?: EquilibriaPair;
@@ -34,10 +34,11 @@ export function* sweepSplitAndTwin(
   const starts = startsOf(model, request);
   const twinSystem = request.withTwin ? model.twin.system : null;
   const share = twinSystem ? 0.5 : 1;
+  const bands = options.bands ?? request.bands;
   const shared = {
     ...sweptRange(model, request),
     ...(options.clock ? { clock: options.clock } : {}),
-    ...(options.bands === undefined ? {} : { bands: options.bands }),
+    ...(bands === undefined ? {} : { bands }),
   };
   // The verdict rests on the equilibria at the present numbers as well. They are paired before the sweeps
   // begin, since pairing moves the parameters of the split system.

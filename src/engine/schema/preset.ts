@@ -164,8 +164,8 @@ export const processSchema = z.object({
 });
 
 export const quantitySchema = z.object({
-  quantity: z.enum(['class', 'total', 'proportion', 'time', 'parameter']),
-  /** Class symbol for class and proportion (of its population), population symbol for total, key for parameter. */
+  quantity: z.enum(['class', 'total', 'proportion', 'time', 'parameter', 'period']),
+  /** Class symbol for class and proportion (of its population), population symbol for total, key for parameter; none for time and period. */
   of: z.string().max(80).default(''),
   logarithm: z.boolean().default(false),
 });

@@ -132,7 +132,7 @@ describe('the diagram of a sweep', () => {
 
   it('pairs points with those of the twin and gives the shift', () => {
     if (!state.sweep) throw new Error('There is a sweep.');
-    const rows = specialPointRows(state.sweep);
+    const rows = specialPointRows(state.sweep, null);
     for (const row of rows)
       if (row.split && row.twin) expect(row.shift).toBe(row.split.parameter - row.twin.parameter);
     expect(rows.filter((row) => row.twin)).toHaveLength(state.sweep.twin?.specialPoints.length ?? 0);

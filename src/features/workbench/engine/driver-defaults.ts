@@ -7,8 +7,8 @@ export const DRIVER_DEFAULTS = {
   idleMilliseconds: 150,
   /** Waiting that is worth showing. */
   staleMilliseconds: 200,
-  /** A sweep as quick as this is run again by itself when the numbers have come to rest. */
-  quickSweepMilliseconds: 600,
+  /** A sweep that is as quick as this with its cycles is run again by itself when the numbers rest. */
+  quickMilliseconds: 2_500,
 } as const;
 
 export function explain(error: unknown): string {

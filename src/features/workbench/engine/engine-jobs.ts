@@ -1,4 +1,5 @@
-import type { Progress } from '@/engine/continuation/contract';
+import type { PictureResult } from '@/engine/analyses/contract';
+import type { Progress, SweepResult } from '@/engine/continuation/contract';
 import type {
   EngineClient,
   ExploreRequest,
@@ -7,16 +8,16 @@ import type {
   SweepRequest,
 } from '@/workers/protocol';
 
-import type { EngineActions, WorkbenchStore } from '../state/store';
-
+import type { EngineActions, WorkbenchData, WorkbenchStore } from '../state/store';
 import { DRIVER_DEFAULTS, explain, sameValues } from './driver-defaults';
-
 import { readParameterValues, readStarts } from './parameter-values';
+import { hasUnfollowedCycles, pictureTask } from './picture-task';
 
 /** Long runs: one at a time, with progress, cancel, and partial results that stay. */
 export class EngineJobs {
   readonly actions: EngineActions = {
-    sweep: () => void this.sweep(),
+    sweep: () => void this.follow('Sweep'),
+    picture: () => void this.picture(),
     findEquilibria: () => void this.findEquilibria(),
     secondOpinion: () => void this.secondOpinion(),
     cancel: () => this.cancel(),
@@ -47,9 +48,25 @@ export class EngineJobs {
       sweepOutdated: outdated,
       verdict: sweep && current && !outdated ? sweep.verdict : (result?.verdict ?? null),
     });
-    if (!atRest || job || !sweepSelection) return;
-    const quick = !sweep || sweep.split.milliseconds < DRIVER_DEFAULTS.quickSweepMilliseconds;
-    if (quick && (!current || outdated)) void this.sweep();
+    if (!atRest || job || !sweepSelection || !this.isQuick() || (current && !outdated)) return;
+    void (aside && !outdated && this.keepsCycles() ? this.judgeAgain() : this.follow('Sweep'));
+  }
+
+  private isQuick(): boolean {
+    const { sweep, cycles } = this.store.getState();
+    const parts = [sweep?.split, sweep?.twin, cycles?.split, cycles?.twin];
+    return parts.reduce((sum, one) => sum + (one?.milliseconds ?? 0), 0) < DRIVER_DEFAULTS.quickMilliseconds;
+  }
+
+  /** Branches of cycles stay as they are along the strip; fixed points of a period map are wanted at its value. */
+  private keepsCycles(): boolean {
+    const { cycles, sweep, sweepSelection } = this.store.getState();
+    const same = (one: SweepRequest | null) =>
+      one !== null &&
+      one.parameter === sweepSelection?.parameter &&
+      one.from === sweepSelection.from &&
+      one.to === sweepSelection.to;
+    return cycles?.split.status === 'complete' && sweep?.split.status === 'complete' && same(this.sweptAt);
   }
 
   private begin(name: string): number {
@@ -71,27 +88,96 @@ export class EngineJobs {
     if (job?.id === id) set({ job: null });
   }
 
-  private async sweep(): Promise<void> {
+  private request(): SweepRequest | null {
     const { document, sweepSelection, shownReport } = this.store.getState();
-    if (!sweepSelection || !shownReport) return;
-    const request: SweepRequest = {
+    if (!sweepSelection || !shownReport) return null;
+    return {
       ...sweepSelection,
       values: readParameterValues(document),
       starts: readStarts(document),
       withTwin: true,
     };
-    const id = this.begin(`Sweep over ${sweepSelection.parameter}`);
-    const show = (sweep: SplitSweepResult, done: boolean) => {
-      if (this.store.getState().job?.id !== id) return;
-      this.sweptAt = request;
-      this.store.getState().set({ sweep, sweepOutdated: false, ...(done ? { verdict: sweep.verdict } : {}) });
+  }
+
+  /** The sweep alone, for what it says of the present value: cycles stay. */
+  private async judgeAgain(): Promise<void> {
+    const request = this.request();
+    if (!request) return;
+    await this.run(`Sweep over ${request.parameter}`, async (id) => {
+      const sweep = await this.engine.sweep(id, { ...request, bands: false }, (progress) =>
+        this.progress(id, progress),
+      );
+      this.show(id, request, { sweep: this.withBands(sweep), verdict: sweep.verdict });
+    });
+  }
+
+  /** Bands that were integrated before stay where no cycle could be continued. */
+  private withBands(sweep: SplitSweepResult): SplitSweepResult {
+    const before = this.store.getState().sweep;
+    const keep = (now: SweepResult, then: SweepResult | null | undefined): SweepResult =>
+      then && then.bands.length > 0 ? { ...now, bands: then.bands } : now;
+    return {
+      ...sweep,
+      split: keep(sweep.split, before?.split),
+      twin: sweep.twin && keep(sweep.twin, before?.twin),
     };
+  }
+
+  /** All branches of equilibria and the cycles from them, streamed as they come. */
+  private async follow(name: string): Promise<PictureResult | null> {
+    const request = this.request();
+    if (!request) return null;
+    let done: PictureResult | null = null;
+    await this.run(`${name} over ${request.parameter}`, async (id) => {
+      const result = await this.engine.analyse(
+        id,
+        pictureTask(request, this.store.getState().document),
+        (progress) => {
+          this.progress(id, progress);
+          if (progress.partial) this.showPicture(id, request, progress.partial, false);
+        },
+      );
+      if (!this.showPicture(id, request, result, true)) return;
+      done = result;
+      if (result.status !== 'complete' || !hasUnfollowedCycles(result)) return;
+      const sweep = await this.engine.sweep(id, request, (progress) => this.progress(id, progress));
+      this.show(id, request, { sweep, verdict: sweep.verdict });
+    });
+    return done;
+  }
+
+  private async picture(): Promise<void> {
+    const found = (await this.follow('Full picture'))?.equilibria;
+    const { result, set } = this.store.getState();
+    if (found && result) set({ result: { ...result, equilibria: found.split, twinEquilibria: found.twin } });
+  }
+
+  /** Cycles of before stay on show until the first new one is there. */
+  private showPicture(id: number, request: SweepRequest, picture: PictureResult, done: boolean): boolean {
+    const { cycles: before } = this.store.getState();
+    const along = before?.split.parameterKey === request.parameter ? before : null;
+    const begun = done || picture.cycles.split.points > 0;
+    return this.show(id, request, {
+      sweep: picture.sweep,
+      cycles: begun ? picture.cycles : along,
+      picture,
+      ...(done ? { verdict: picture.sweep.verdict } : {}),
+    });
+  }
+
+  /** False where a newer run has taken the place of this one. */
+  private show(id: number, request: SweepRequest, patch: Partial<WorkbenchData>): boolean {
+    const { job, set } = this.store.getState();
+    if (job?.id !== id) return false;
+    this.sweptAt = request;
+    set({ ...patch, sweepOutdated: false });
+    return true;
+  }
+
+  private async run(name: string, work: (id: number) => Promise<void>): Promise<void> {
+    const id = this.begin(name);
     try {
-      const result = await this.engine.sweep(id, request, (progress) => {
-        this.progress(id, progress);
-        if (progress.partial) show(progress.partial, false);
-      });
-      show(result, true);
+      await work(id);
     } catch (error) {
       this.store.getState().set({ engineError: explain(error) });
     } finally {
@@ -101,19 +187,14 @@ export class EngineJobs {
 
   private async findEquilibria(): Promise<void> {
     const { document } = this.store.getState();
-    const id = this.begin('Search for equilibria');
-    try {
+    await this.run('Search for equilibria', async (id) => {
       const found = await this.engine.findEquilibria(id, readParameterValues(document), (progress) =>
         this.progress(id, progress),
       );
       const { result, set, job } = this.store.getState();
       if (result && job?.id === id)
         set({ result: { ...result, equilibria: found.split, twinEquilibria: found.twin } });
-    } catch (error) {
-      this.store.getState().set({ engineError: explain(error) });
-    } finally {
-      this.end(id);
-    }
+    });
   }
 
   private async secondOpinion(): Promise<void> {

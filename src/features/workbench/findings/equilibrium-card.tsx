@@ -1,29 +1,11 @@
-import type { Eigenvalue, Equilibrium } from '@/engine/equilibria/contract';
+import type { Equilibrium } from '@/engine/equilibria/contract';
 import type { PresetDocument } from '@/engine/schema/preset';
-import { formatComplex, formatNumber } from '@/graphics/numbers';
+import { formatNumber } from '@/graphics/numbers';
 
 import { equilibriumName } from '../panes/equilibrium-words';
 import { listClassNames } from '../panes/views/view-input';
 import { Card, Chip } from './card';
-
-/** Conjugates are written once, as a pair. */
-export function eigenvalueTexts(values: readonly Eigenvalue[]): readonly string[] {
-  const texts: string[] = [];
-  for (let k = 0; k < values.length; k++) {
-    const one = values[k];
-    const next = values[k + 1];
-    if (!one) continue;
-    const scale = Math.hypot(one.re, one.im) || 1;
-    const pair =
-      one.im !== 0 &&
-      next &&
-      Math.abs(next.re - one.re) < 1e-9 * scale &&
-      Math.abs(next.im + one.im) < 1e-9 * scale;
-    texts.push(formatComplex(one.re, one.im, Boolean(pair), 3));
-    if (pair) k++;
-  }
-  return texts;
-}
+import { eigenvalueTexts } from './eigenvalue-texts';
 
 const tone = (attracts: Equilibrium['attracts']) =>
   attracts === 'yes' ? ('good' as const) : attracts === 'no' ? ('bad' as const) : ('plain' as const);

@@ -1,11 +1,15 @@
-import type { SpecialPoint } from '@/engine/continuation/contract';
+import type { SplitAnd } from '@/engine/analyses/contract';
+import type { CyclesResult } from '@/engine/cycles/contract';
 import type { SplitSweepResult } from '@/workers/protocol';
+
+import { markedPoints } from '../cycles/marked-points';
+import type { MarkedPoint } from '../state/store';
 
 export interface SpecialPointRow {
   readonly id: string;
-  readonly kind: SpecialPoint['kind'];
-  readonly split: SpecialPoint | null;
-  readonly twin: SpecialPoint | null;
+  readonly kind: MarkedPoint['kind'];
+  readonly split: MarkedPoint | null;
+  readonly twin: MarkedPoint | null;
   /** Split minus twin, where both are there. */
   readonly shift: number | null;
 }
@@ -14,10 +18,14 @@ export interface SpecialPointRow {
  * Pairs the points of the split model with those of its twin: of one kind and feasibility, nearest first,
  * each used once. What has no partner stands alone.
  */
-export function specialPointRows(sweep: SplitSweepResult): readonly SpecialPointRow[] {
-  const twins = [...(sweep.twin?.specialPoints ?? [])];
+export function specialPointRows(
+  sweep: SplitSweepResult,
+  cycles: SplitAnd<CyclesResult> | null,
+): readonly SpecialPointRow[] {
+  const points = markedPoints(sweep.split, cycles?.split);
+  const twins = markedPoints(sweep.twin, cycles?.twin);
   const pairs: { split: number; twin: number; distance: number }[] = [];
-  sweep.split.specialPoints.forEach((point, split) =>
+  points.forEach((point, split) =>
     twins.forEach((other, twin) => {
       if (other.kind === point.kind && other.feasible === point.feasible)
         pairs.push({ split, twin, distance: Math.abs(other.parameter - point.parameter) });
@@ -31,7 +39,7 @@ export function specialPointRows(sweep: SplitSweepResult): readonly SpecialPoint
     partner.set(split, twin);
     taken.add(twin);
   }
-  const own = sweep.split.specialPoints.map((point, k): SpecialPointRow => {
+  const own = points.map((point, k): SpecialPointRow => {
     const twin = twins[partner.get(k) ?? -1] ?? null;
     return {
       id: `own:${point.id}`,

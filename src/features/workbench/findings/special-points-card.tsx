@@ -1,7 +1,7 @@
 import { useMemo, useState } from 'react';
 
 import { specialPointGlyph } from '@/graphics/glyphs';
-import { formatNumber, formatToTolerance } from '@/graphics/numbers';
+import { formatNumber } from '@/graphics/numbers';
 import { parameterName } from '@/graphics/quantities';
 import { joinClasses } from '@/lib/join-classes';
 
@@ -10,6 +10,7 @@ import { GlyphSign } from '../panes/plot/plot-legend';
 import { useShownModel } from '../panes/use-shown-model';
 import { useWorkbench, useWorkbenchStore } from '../state/store';
 import { Card } from './card';
+import { SpecialPointDetails } from './special-point-details';
 import {
   sortRows,
   specialPointRows,
@@ -104,28 +105,7 @@ function Row({
       {selected && row.split ? (
         <tr className="bg-panel">
           <td colSpan={4} className="px-1 pb-2 text-sm text-muted">
-            <p>
-              At{' '}
-              <span className="figures">
-                {formatToTolerance(row.split.parameter, row.split.accuracy * range)}
-              </span>
-              , located to <span className="figures">{formatNumber(row.split.accuracy, 1)}</span> of the
-              range.
-            </p>
-            {row.split.meaning}
-            {row.split.hopf ? (
-              <>
-                {' '}
-                {row.split.hopf.meaning === row.split.meaning ? null : row.split.hopf.meaning}
-                {row.split.hopf.l1 === null ? null : (
-                  <span className="block">
-                    First Lyapunov coefficient{' '}
-                    <span className="figures">{formatNumber(row.split.hopf.l1, 4)}</span>, period{' '}
-                    <span className="figures">{formatNumber((2 * Math.PI) / row.split.hopf.omega, 4)}</span>
-                  </span>
-                )}
-              </>
-            ) : null}
+            <SpecialPointDetails point={row.split} range={range} />
           </td>
         </tr>
       ) : null}
@@ -138,10 +118,14 @@ export function SpecialPointsCard() {
   const store = useWorkbenchStore();
   const model = useShownModel();
   const sweep = useWorkbench((state) => state.sweep);
+  const cycles = useWorkbench((state) => state.cycles);
   const outdated = useWorkbench((state) => state.sweepOutdated);
   const selected = useWorkbench((state) => state.selectedPoint?.id ?? null);
   const [order, setOrder] = useState<SortOrder>({ key: 'split', descending: false });
-  const rows = useMemo(() => (sweep ? sortRows(specialPointRows(sweep), order) : []), [sweep, order]);
+  const rows = useMemo(
+    () => (sweep ? sortRows(specialPointRows(sweep, cycles), order) : []),
+    [sweep, cycles, order],
+  );
   if (!sweep) return null;
   const columns = sweep.twin ? COLUMNS : COLUMNS.slice(0, 2);
   const name = parameterName(model, sweep.split.parameterKey).name;
@@ -152,7 +136,7 @@ export function SpecialPointsCard() {
       ) : null}
       {rows.length === 0 ? (
         <p className="text-muted">
-          {sweep.split.status === 'complete'
+          {sweep.split.status === 'complete' || sweep.split.status === 'needs-period-map'
             ? 'None in this range: no branch changes its stability here.'
             : sweep.split.message}
         </p>

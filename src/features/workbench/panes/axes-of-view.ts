@@ -51,7 +51,11 @@ export function axisOptions(
       {
         label: 'show',
         value: axes[0] ?? totalQuantity(model.populations.at(-1)?.symbol ?? ''),
-        choices: [...totals(model, states), every('class', 'every class')],
+        choices: [
+          ...totals(model, states),
+          every('class', 'every class'),
+          nameQuantity(model, { quantity: 'period', of: '', logarithm: false }),
+        ],
       },
     ];
   if (view === 'space' || view === 'space-diagram') {

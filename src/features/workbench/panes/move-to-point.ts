@@ -1,10 +1,8 @@
-import type { SpecialPoint } from '@/engine/continuation/contract';
-
 import { withParameterValue } from '../engine/parameter-values';
-import type { WorkbenchStore } from '../state/store';
+import type { MarkedPoint, WorkbenchStore } from '../state/store';
 
 /** Moves the model to a special point of the sweep on show, and selects it. */
-export function moveToPoint(store: WorkbenchStore, point: SpecialPoint): void {
+export function moveToPoint(store: WorkbenchStore, point: MarkedPoint): void {
   const { sweep, edit, set } = store.getState();
   if (!sweep) return;
   const key = sweep.split.parameterKey;

@@ -1,6 +1,14 @@
 import type { WorkbenchState, WorkbenchStore } from '../state/store';
 
-const RESULTS = ['result', 'sweep', 'sweepOutdated', 'selectedPoint', 'shownReport', 'report'] as const;
+const RESULTS = [
+  'result',
+  'sweep',
+  'cycles',
+  'sweepOutdated',
+  'selectedPoint',
+  'shownReport',
+  'report',
+] as const;
 
 function differ(state: WorkbenchState, before: WorkbenchState): boolean {
   return RESULTS.some((key) => state[key] !== before[key]);

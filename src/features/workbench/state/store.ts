@@ -1,7 +1,9 @@
 import { createStore, useStore } from 'zustand';
 import { createContext, useContext } from 'react';
 
+import type { PictureResult, SplitAnd } from '@/engine/analyses/contract';
 import type { SpecialPoint } from '@/engine/continuation/contract';
+import type { CyclesResult, CycleSpecialPoint } from '@/engine/cycles/contract';
 import type { PresetDocument } from '@/engine/schema/preset';
 import type { ModelReport } from '@/engine/system/contract';
 import type { Verdict } from '@/engine/verdict/contract';
@@ -42,12 +44,18 @@ export interface SweepSelection {
   readonly to: number;
 }
 
+/** A special point of equilibria or of cycles. */
+export type MarkedPoint = SpecialPoint | CycleSpecialPoint;
+
 /** A named arrangement of panes. */
 export type Arrangement = 'explore' | 'sweep' | 'model';
 
 /** What the page asks of the engine; there while the driver runs. */
 export interface EngineActions {
+  /** Equilibria, branches and the cycles from them, along the range on the strip. */
   sweep(): void;
+  /** The same with nothing taken over from before, and with every equilibrium at the present numbers. */
+  picture(): void;
   findEquilibria(): void;
   /** Integrates the trajectory shown with the other method. */
   secondOpinion(): void;
@@ -74,8 +82,12 @@ export interface WorkbenchState {
   readonly sweep: SplitSweepResult | null;
   /** True when the model changed after the sweep shown was computed. */
   readonly sweepOutdated: boolean;
+  /** Branches of cycles along the same range; they stay while the sweep alone is judged anew. */
+  readonly cycles: SplitAnd<CyclesResult> | null;
+  /** The whole picture that sweep and cycles are part of, as far as it has come. */
+  readonly picture: PictureResult | null;
   readonly job: Job | null;
-  readonly selectedPoint: SpecialPoint | null;
+  readonly selectedPoint: MarkedPoint | null;
   /** Why the engine could not answer last, in words. */
   readonly engineError: string | null;
   readonly engine: EngineActions | null;
@@ -121,6 +133,8 @@ function initialData(document: PresetDocument, origin: Origin): FreshData {
     sweepSelection: first ? { parameter: first.parameter, from: first.from, to: first.to } : null,
     sweep: null,
     sweepOutdated: false,
+    cycles: null,
+    picture: null,
     job: null,
     selectedPoint: null,
     engineError: null,

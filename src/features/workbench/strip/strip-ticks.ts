@@ -1,7 +1,7 @@
-import type { SpecialPoint } from '@/engine/continuation/contract';
+import type { MarkedPoint } from '../state/store';
 
 export interface StripTick {
-  readonly point: SpecialPoint;
+  readonly point: MarkedPoint;
   readonly twin: boolean;
   /** Position along the strip, from 0 to 1. */
   readonly at: number;
@@ -19,7 +19,7 @@ const SAME_PLACE = 1e-4;
 
 /** Places the names of ticks in two rows without overlap; points of the split model come first. */
 export function placeTicks(
-  points: readonly { readonly point: SpecialPoint; readonly twin: boolean }[],
+  points: readonly { readonly point: MarkedPoint; readonly twin: boolean }[],
   from: number,
   to: number,
   width: number,

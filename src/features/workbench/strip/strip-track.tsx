@@ -4,6 +4,7 @@ import { formatShort } from '@/graphics/numbers';
 import { parameterName } from '@/graphics/quantities';
 import { joinClasses } from '@/lib/join-classes';
 
+import { markedPoints } from '../cycles/marked-points';
 import { readParameterValue, withParameterValue } from '../engine/parameter-values';
 import { moveToPoint } from '../panes/move-to-point';
 import { useShownModel } from '../panes/use-shown-model';
@@ -38,11 +39,12 @@ function useWidth() {
 function Ticks({ selection, width }: { readonly selection: SweepSelection; readonly width: number }) {
   const store = useWorkbenchStore();
   const sweep = useWorkbench((state) => state.sweep);
+  const cycles = useWorkbench((state) => state.cycles);
   const withTwin = useWorkbench(showsTwin);
   if (!sweep || sweep.split.parameterKey !== selection.parameter) return null;
   const points = [
-    ...sweep.split.specialPoints.map((point) => ({ point, twin: false })),
-    ...(withTwin ? (sweep.twin?.specialPoints ?? []) : []).map((point) => ({ point, twin: true })),
+    ...markedPoints(sweep.split, cycles?.split).map((point) => ({ point, twin: false })),
+    ...(withTwin ? markedPoints(sweep.twin, cycles?.twin) : []).map((point) => ({ point, twin: true })),
   ];
   return placeTicks(points, selection.from, selection.to, width).map(({ point, twin, at, row, side }) => (
     <span

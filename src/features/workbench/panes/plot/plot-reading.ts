@@ -42,6 +42,18 @@ export function readNearest(spec: PlotSpec, layout: PlotLayout, px: number, py: 
         () => place(spec, line.label, line.x[k] ?? NaN, line.y[k] ?? NaN),
         0,
       );
+  for (const band of spec.bands)
+    for (const [edge, values] of [
+      ['lowest', band.low],
+      ['highest', band.high],
+    ] as const)
+      for (let k = 0; k < band.x.length; k++)
+        consider(
+          band.x[k] ?? NaN,
+          values[k] ?? NaN,
+          () => place(spec, `${band.label}, ${edge}`, band.x[k] ?? NaN, values[k] ?? NaN),
+          0,
+        );
   return best;
 }
 
@@ -59,7 +71,7 @@ interface Track {
   at(step: number): { readonly x: number; readonly y: number; readonly text: string };
 }
 
-/** The marked points are the first track, each line is one more. */
+/** The marked points are the first track, each line and each edge of a band is one more. */
 function tracks(spec: PlotSpec): readonly Track[] {
   const all: Track[] = [];
   if (spec.points.length > 0)
@@ -75,19 +87,24 @@ function tracks(spec: PlotSpec): readonly Track[] {
         };
       },
     });
-  for (const line of spec.lines) {
-    if (line.segments || line.x.length === 0) continue;
-    const length = Math.min(WALK_STEPS, line.x.length);
+  const curve = (label: string, xs: Float64Array, ys: Float64Array): void => {
+    if (xs.length === 0) return;
+    const length = Math.min(WALK_STEPS, xs.length);
     all.push({
-      label: line.label,
+      label,
       length,
       at: (step) => {
-        const k = Math.round((step * (line.x.length - 1)) / Math.max(1, length - 1));
-        const x = line.x[k] ?? NaN;
-        const y = line.y[k] ?? NaN;
-        return { x, y, text: place(spec, line.label, x, y) };
+        const k = Math.round((step * (xs.length - 1)) / Math.max(1, length - 1));
+        const x = xs[k] ?? NaN;
+        const y = ys[k] ?? NaN;
+        return { x, y, text: place(spec, label, x, y) };
       },
     });
+  };
+  for (const line of spec.lines) if (!line.segments) curve(line.label, line.x, line.y);
+  for (const band of spec.bands) {
+    curve(`${band.label}, lowest`, band.x, band.low);
+    curve(`${band.label}, highest`, band.x, band.high);
   }
   return all;
 }
