@@ -78,9 +78,11 @@ export class CycleCurve {
   }
 
   moved(from: Orbit, along: Direction, s: number): Orbit {
+    const values = new Float64Array(from.values.length);
+    for (let k = 0; k < values.length; k += 1) values[k] = from.values[k] + s * along.values[k];
     return {
       mesh: from.mesh,
-      values: from.values.map((value, k) => value + s * along.values[k]),
+      values,
       logPeriod: from.logPeriod + s * along.logPeriod,
       parameter: from.parameter + s * along.parameter * this.cycles.parameterScale,
     };

@@ -1,5 +1,6 @@
 import { createStepper } from '../integrators/choose-method';
 import { ExtremesTracker } from '../integrators/extremes';
+import type { Stepper } from '../integrators/stepper';
 import type { CompiledSystem } from '../system/contract';
 import type { CollocationBasis } from './collocation-basis';
 import type { CycleSystem } from './cycle-system';
@@ -61,11 +62,12 @@ export function cycleExtremes(
     });
   }
   cycles.setParameter(orbit.parameter);
+  const runner = runnerOf(cycles);
   const runs = new Map<number, Range | null>();
   const across = (k: number): Range | null => {
     const known = runs.get(k);
     if (known !== undefined) return known;
-    const found = runAcross(cycles, orbit, m, k, period);
+    const found = runner.across(orbit, m, k, period);
     runs.set(k, found);
     return found;
   };
@@ -99,22 +101,46 @@ function totalsIndex(system: CompiledSystem, group: readonly number[], q: number
   return system.dimension + system.populations.findIndex((one) => one.states === group);
 }
 
-/** Extremes of a run across interval k, or null where it cannot be followed. */
-function runAcross(cycles: CycleSystem, orbit: Orbit, m: number, k: number, period: number): Range | null {
-  const { n, system } = cycles;
-  const u = new Float64Array(n);
-  cycles.toState(orbit.values.subarray(k * m * n, (k * m + 1) * n), u);
-  const stepper = createStepper(system, { ...REFINE, method: 'dormand-prince-853' });
-  const from = period * orbit.mesh[k];
-  const end = period * orbit.mesh[k + 1];
-  stepper.begin(from, u, end - from);
-  const tracker = new ExtremesTracker(system);
-  tracker.reset(stepper);
-  while (stepper.time < end) {
-    if (stepper.steps + stepper.rejected > REFINE.steps || stepper.advance(end) !== 'stepped') return null;
-    tracker.note(stepper);
+/** Follows the solution across one interval from its mesh point; kept for a system, since methods are costly to set up. */
+class IntervalRunner {
+  private readonly stepper: Stepper;
+  private readonly tracker: ExtremesTracker;
+  private readonly u: Float64Array;
+
+  constructor(private readonly cycles: CycleSystem) {
+    this.stepper = createStepper(cycles.system, { ...REFINE, method: 'dormand-prince-853' });
+    this.tracker = new ExtremesTracker(cycles.system);
+    this.u = new Float64Array(cycles.n);
   }
-  return { lowest: tracker.lowest, highest: tracker.highest };
+
+  /** Extremes across interval k, or null where the run cannot be followed. */
+  across(orbit: Orbit, m: number, k: number, period: number): Range | null {
+    const { cycles, stepper, tracker, u } = this;
+    const { n } = cycles;
+    cycles.toState(orbit.values.subarray(k * m * n, (k * m + 1) * n), u);
+    const from = period * orbit.mesh[k];
+    const end = period * orbit.mesh[k + 1];
+    const before = stepper.steps + stepper.rejected;
+    stepper.begin(from, u, end - from);
+    tracker.reset(stepper);
+    while (stepper.time < end) {
+      const spent = stepper.steps + stepper.rejected - before;
+      if (spent > REFINE.steps || stepper.advance(end) !== 'stepped') return null;
+      tracker.note(stepper);
+    }
+    return { lowest: tracker.lowest.slice(), highest: tracker.highest.slice() };
+  }
+}
+
+const runners = new WeakMap<CycleSystem, IntervalRunner>();
+
+function runnerOf(cycles: CycleSystem): IntervalRunner {
+  let runner = runners.get(cycles);
+  if (runner === undefined) {
+    runner = new IntervalRunner(cycles);
+    runners.set(cycles, runner);
+  }
+  return runner;
 }
 
 function meanOf(

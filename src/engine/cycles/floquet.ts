@@ -53,10 +53,12 @@ export function floquetMultipliers(
     const to = reflector(flow, ((k + 1) % N) * n, n, next);
     for (let c = 0; c < n; c += 1) {
       // Column c of the reflection at k, mapped across, reflected at k + 1.
-      for (let i = 0; i < n; i += 1) column[i] = 0;
-      const basis = (j: number): number => (j === c ? 1 : 0) - 2 * here[j] * here[c];
-      for (let r = 0; r < n; r += 1)
-        for (let j = 0; j < n; j += 1) column[r] += maps[(k * n + r) * stride + j] * basis(j);
+      for (let r = 0; r < n; r += 1) {
+        const row = (k * n + r) * stride;
+        let sum = maps[row + c];
+        for (let j = 0; j < n; j += 1) sum -= 2 * here[c] * here[j] * maps[row + j];
+        column[r] = sum;
+      }
       let dot = 0;
       for (let i = 0; i < n; i += 1) dot += next[i] * column[i];
       for (let i = 0; i < n; i += 1) column[i] -= 2 * dot * next[i];
