@@ -42,6 +42,11 @@ export class FadingWatch {
     });
   }
 
+  /** Whether a state rose again after it had been below a density. */
+  cameBackFrom(i: number, density: number): boolean {
+    return this.lows[i].some((low) => low < Math.log(density));
+  }
+
   private fall(i: number, level: number): void {
     if (level < this.extreme[i]) this.extreme[i] = level;
     if (level <= this.extreme[i] + TURN) return;

@@ -131,17 +131,18 @@ function summarise(
   const uncertainty = Float64Array.from(order, (j) =>
     batchHalfWidth(batchMeans(times, record.integrals(j), from, LYAPUNOV_DEFAULTS.batches)),
   );
+  const known = span > 0;
   const all = m === system.dimension;
   const evidence: ExponentEvidence = {
     exponents,
     uncertainty,
     all,
+    meanRate: known ? record.meanDivergence() / system.dimension : 0,
     span,
     forced: !system.autonomous,
     moves: record.moves(),
     fading: record.fading(),
   };
-  const known = span > 0;
   return {
     status,
     message:

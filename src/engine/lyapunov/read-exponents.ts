@@ -6,6 +6,8 @@ export interface ExponentEvidence {
   readonly uncertainty: ArrayLike<number>;
   /** Whether every exponent of the system is there, not the leading ones alone. */
   readonly all: boolean;
+  /** Mean divergence over the number of states: a rate to measure zeros by where only zeros are given. */
+  readonly meanRate: number;
   /** Time over which they were averaged. */
   readonly span: number;
   /** Whether the formulas contain the time; then no exponent stands for the direction of the solution. */
@@ -19,7 +21,7 @@ export interface ExponentEvidence {
 export const READING_DEFAULTS = {
   /** An exponent of which less than so many e-foldings were seen is not told from zero. */
   resolvedFoldings: 6,
-  /** A zero exponent counts as zero only where it is known this well, relative to the largest of all. */
+  /** A zero exponent counts as zero only where it is known this well, relative to the largest rate of all. */
   sharpness: 0.02,
 } as const;
 
@@ -31,7 +33,7 @@ export type Sign = 'positive' | 'zero' | 'negative' | 'open';
  */
 export function signsOf(evidence: ExponentEvidence): Sign[] {
   const { exponents, uncertainty, span } = evidence;
-  let largest = 0;
+  let largest = Math.abs(evidence.meanRate);
   for (let j = 0; j < exponents.length; j += 1) largest = Math.max(largest, Math.abs(exponents[j]));
   return Array.from(exponents, (value, j) => {
     const known = Math.max(uncertainty[j], READING_DEFAULTS.resolvedFoldings / span);

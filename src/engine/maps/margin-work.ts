@@ -65,6 +65,7 @@ export class MarginWork {
     [this.firstStride] = refinementStrides(sheet.nx, sheet.ny);
     this.states = new Float64Array(MARGIN_WORK_DEFAULTS.cellsPerSlice * this.n);
     this.cells = request.cells ?? marginCells(system, p, request.columns);
+    system.setParameters(p);
     this.coexistence = new Coexistence(system, [request.starts], request.box);
     this.seeds = new Seeds(sheet.nx, sheet.ny, this.n);
     this.xs = axisValues(request.x);
