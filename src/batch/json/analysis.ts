@@ -43,7 +43,7 @@ const WRITERS: Writers = {
     ...both(result, (one, of) => sectionJson(symbolsOf(model, of), one)),
   }),
   extremes: (result, task) => ({ ...rangeJson(task), ...both(result, extremesJson) }),
-  picture: (result, task) => ({ ...rangeJson(task), ...pictureJson(result, task.branches) }),
+  picture: (result, task) => ({ ...rangeJson(task), ...pictureJson(result, task) }),
 };
 
 /** The result of a task as JSON: its status, then the answer for the model and for its pooled twin. */

@@ -1,12 +1,13 @@
 import type { PictureResult } from '@/engine/analyses/contract';
+import type { PictureTask } from '@/engine/schema/analysis-tasks';
 
 import { cyclesJson } from './cycles';
 import { equilibriaJson } from './equilibria';
 import type { JsonRecord } from './shared';
 import { shiftsJson, sweepJson } from './sweep';
 
-/** @param everyPoint false leaves out the points of branches, and keeps their ends */
-export function pictureJson(picture: PictureResult, everyPoint: boolean): JsonRecord {
+export function pictureJson(picture: PictureResult, task: PictureTask): JsonRecord {
+  const everyPoint = task.branches;
   const { equilibria, sweep, cycles } = picture;
   const detail = { branches: everyPoint, orbits: false };
   return {
@@ -24,6 +25,6 @@ export function pictureJson(picture: PictureResult, everyPoint: boolean): JsonRe
       cycles: cycles.twin && cyclesJson(cycles.twin, detail),
     },
     shifts: shiftsJson(sweep),
-    verdict: sweep.twin && sweep.verdict,
+    verdict: task.twin ? sweep.verdict : null,
   };
 }
