@@ -77,6 +77,9 @@ export function cycleThrough(
   closeOrbit(values, n);
   const raw = { mesh, values, logPeriod: Math.log(period), parameter };
   const orbit = adaptOrbit(curve.basis, n, raw, N);
-  const point = curve.correct(orbit, curve.parameterDirection(), 0);
+  // In a family of cycles at one value of the parameter the period tells them apart, the parameter does not.
+  const point =
+    curve.correct(orbit, curve.parameterDirection(), 0) ??
+    (cycles.forced ? null : curve.correct(orbit, curve.periodDirection(), 0));
   return point && (curve.adapt(point) ?? point);
 }

@@ -56,6 +56,11 @@ export class Collocation {
     this.d = new Float64Array(E);
   }
 
+  /** Determinant of the last linearisation, as sign and logarithm up to a factor of the mesh. */
+  get determinant(): { readonly sign: number; readonly log: number } {
+    return { sign: this.chain.determinantSign, log: this.chain.determinantLog };
+  }
+
   newDirection(): Direction {
     return { values: new Float64Array((this.N * this.m + 1) * this.n), parameter: 0, logPeriod: 0 };
   }

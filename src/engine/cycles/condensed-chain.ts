@@ -25,6 +25,12 @@ export class CondensedChain {
   private readonly right: Float64Array;
   private readonly column: Float64Array;
   private regular = false;
+  /**
+   * Determinant of the last factorisation up to a positive factor of the mesh, as sign and logarithm: it
+   * changes sign along a branch where another one crosses.
+   */
+  determinantSign = 0;
+  determinantLog = 0;
 
   constructor(
     readonly N: number,
@@ -52,6 +58,8 @@ export class CondensedChain {
    */
   factor(transfer: Float64Array, rows: Float64Array, corner: Float64Array, g: Float64Array): boolean {
     const { N, n, extras: E, width, work, border } = this;
+    this.determinantSign = 1;
+    this.determinantLog = 0;
     this.startChain(transfer);
     border.fill(0);
     for (let e = 0; e < E; e += 1) {
@@ -81,7 +89,10 @@ export class CondensedChain {
       for (let f = 0; f < E; f += 1) this.matrix[(n + e) * size + n + f] = border[row + 3 * n + f];
       this.right[n + e] = border[row + 3 * n + E];
     }
-    this.regular = luFactor(this.matrix, size, this.pivots) !== 0;
+    const sign = luFactor(this.matrix, size, this.pivots);
+    this.determinantSign *= sign;
+    for (let j = 0; j < size; j += 1) this.countPivot(this.matrix[j * size + j]);
+    this.regular = sign !== 0;
     return this.regular;
   }
 
@@ -108,6 +119,11 @@ export class CondensedChain {
     const largest = column.reduce((most, value) => Math.max(most, Math.abs(value)), 0);
     for (let j = 0; j < size; j += 1) column[j] /= largest;
     return this.finish(x, d, 0);
+  }
+
+  private countPivot(pivot: number): void {
+    if (pivot < 0) this.determinantSign = -this.determinantSign;
+    this.determinantLog += Math.log(Math.abs(pivot));
   }
 
   private startChain(transfer: Float64Array): void {
@@ -151,6 +167,7 @@ export class CondensedChain {
           pivotRow = r;
         }
       }
+      if (pivotRow !== c) this.determinantSign = -this.determinantSign;
       if (pivotRow !== c)
         for (let j = c; j < width; j += 1) {
           const value = work[c * width + j];
@@ -158,6 +175,7 @@ export class CondensedChain {
           work[pivotRow * width + j] = value;
         }
       const pivot = largest > SINGULAR ? work[c * width + c] : SINGULAR;
+      this.countPivot(pivot);
       for (let r = c + 1; r < 2 * n; r += 1) subtract(work, r * width, work, c * width, c, width, pivot);
       for (let e = 0; e < E; e += 1) subtract(border, e * width, work, c * width, c, width, pivot);
     }

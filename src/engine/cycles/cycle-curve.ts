@@ -34,6 +34,8 @@ export interface CyclePoint {
   readonly below: number;
   readonly attracts: 0 | 1 | 2;
   readonly iterations: number;
+  /** Determinant of the corrector's matrix: changes sign where another branch crosses. */
+  readonly determinant: { readonly sign: number; readonly log: number };
   /** How far the discretisation is from what must hold exactly: see `resolutionError`. */
   readonly resolution: number;
 }
@@ -66,6 +68,13 @@ export class CycleCurve {
   parameterDirection(): Direction {
     const direction = this.newDirection();
     direction.parameter = 1;
+    return direction;
+  }
+
+  /** The direction of the period alone: a corrector along it holds the period. */
+  periodDirection(): Direction {
+    const direction = this.newDirection();
+    direction.logPeriod = 1;
     return direction;
   }
 
@@ -184,6 +193,7 @@ export class CycleCurve {
       below: floquet.nontrivial.filter(({ re, im }) => im === 0 && re < -1).length,
       attracts: clearly ? 0 : decided ? 1 : 2,
       iterations,
+      determinant: collocation.determinant,
       resolution: resolutionError(found, collocation.divergence),
     };
   }

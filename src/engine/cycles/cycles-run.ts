@@ -11,7 +11,8 @@ import { CycleSystem } from './cycle-system';
 import { CYCLES_DEFAULTS, type CyclesOptions } from './cycles-options';
 import { CyclesRecord, type Switch } from './cycles-record';
 import { followCycles, type CyclesFollowed, type CycleFollowSettings } from './follow-cycles';
-import { halvesDiffer, switchAtBranchPoint, switchToDoubled } from './switch-cycle';
+import { isUpright } from './locate-cycle';
+import { halvesDiffer, switchAtBranchPoint, switchToDoubled, turned } from './switch-cycle';
 
 const FOLLOWING = 'following cycles';
 /** A cycle below this share of its first size is back where it began. */
@@ -71,7 +72,9 @@ export class CyclesRun {
     const curve = this.curveFor(state, parameter, forcings);
     const point = cycleThrough(curve, state, period, parameter);
     if (point === null) {
-      this.record.note(`The run from the start values is not on a cycle of period ${format(period)}.`);
+      this.record.note(
+        `The run from the start values repeats itself after ${format(period)}, but no isolated cycle could be followed from it; a neutral model has cycles of all sizes.`,
+      );
       return;
     }
     if (this.record.isKnown(curve, point)) return;
@@ -171,17 +174,18 @@ export class CyclesRun {
       isBack,
     };
     const forth = yield* this.drive(followCycles(curve, start, settings), how.fraction);
-    const turned: CyclePoint = {
-      ...start,
-      tangent: {
-        values: start.tangent.values.map((value) => -value),
-        parameter: -start.tangent.parameter,
-        logPeriod: -start.tangent.logPeriod,
-      },
-    };
+    const backwards: CyclePoint = { ...start, tangent: turned(start.tangent) };
     const closed = forth.end.reason === 'closed on itself';
     const back =
-      how.bothWays && !closed ? yield* this.drive(followCycles(curve, turned, settings), how.fraction) : null;
+      how.bothWays && !closed
+        ? yield* this.drive(followCycles(curve, backwards, settings), how.fraction)
+        : null;
+    const cyclesFound = [...(back?.cycles ?? []), ...forth.cycles];
+    const crossed = forth.crossings.length > 0 || (back !== null && back.crossings.length > 0);
+    if (how.origin.kind === 'trajectory' && !crossed && cyclesFound.every(({ point }) => isUpright(point))) {
+      this.record.note(forth.end.message);
+      return;
+    }
     this.record.keep(curve, { origin: how.origin, hopf: how.hopf, back, forth }, how.generation);
     yield this.record.progress(this.record.fraction, FOLLOWING);
   }

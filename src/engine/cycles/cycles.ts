@@ -10,7 +10,8 @@ export type { CyclesOptions } from './cycles-options';
 
 const NO_PARAMETER = 'The parameter to follow cycles along is not one of the model.';
 const NO_RANGE = 'The range needs two different finite ends.';
-const NO_HOPF = 'No Hopf point was found along the range, so no cycle begins there.';
+const NO_HOPF =
+  'No Hopf point was found along the range, so the run from the start values was asked for a cycle.';
 const NO_PERIOD =
   'Explicit time enters this model in a way that has no period (other than through sines and cosines of time), so it has no period map.';
 const NOT_SETTLED = 'The run from the start values could not be followed.';
@@ -53,7 +54,10 @@ function* beginAtHopfPoints(
 ): Generator<Progress<CyclesResult>, void> {
   const points = options.hopfPoints ?? (yield* sweepForHopf(run, system, p, options));
   const hopfs = points.filter((one) => one.kind === 'Hopf' && one.hopf !== null && one.feasible);
-  if (hopfs.length === 0) run.record.note(NO_HOPF);
+  if (hopfs.length === 0) {
+    run.record.note(NO_HOPF);
+    yield* beginOnTrajectory(run, system, p, options);
+  }
   for (const [k, hopf] of hopfs.entries())
     yield* run.fromHopf(hopf, STARTED + ((1 - STARTED) * k) / hopfs.length);
 }

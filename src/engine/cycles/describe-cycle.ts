@@ -2,6 +2,7 @@ import type { CycleSpecialKind, CycleSpecialPoint } from './contract';
 import type { CyclePoint } from './cycle-curve';
 import type { CycleExtremes } from './cycle-extremes';
 import type { CycleSystem } from './cycle-system';
+import { isUpright } from './locate-cycle';
 
 /** Modulus beyond which a multiplier besides the crossing one counts as growing. */
 const CLEARLY = 1e-4;
@@ -81,7 +82,9 @@ const MEANING: Readonly<Record<CycleSpecialKind, Meaning>> = {
     }`;
   },
   'branch point of cycles': (point) =>
-    `A multiplier passes 1 where the branch does not turn: another branch of cycles crosses this one at period ${digits(point.period)}.`,
+    isUpright(point)
+      ? `Cycles of all sizes lie at this one value; at period ${digits(point.period)} a branch leaves the family.`
+      : `A multiplier passes 1 where the branch does not turn: another branch of cycles crosses this one at period ${digits(point.period)}.`,
 };
 
 function kinkNote({ system }: CycleSystem): string {

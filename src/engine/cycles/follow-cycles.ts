@@ -23,8 +23,9 @@ export const CYCLE_STEP_DEFAULTS = {
   resolution: 1e-7,
   refine: 1.5,
   mostIntervals: 240,
-  /** Cycles in a row at one value of the parameter after which the branch is a family. */
-  upright: 12,
+  /** Cycles in a row at one value of the parameter after which a family is left; fewer once a branch left it. */
+  upright: 120,
+  uprightBeyond: 12,
   /** Times the first period from which on a homoclinic orbit is looked for. */
   longPeriod: 3,
   /** A population whose highest density is below this share of its scale has reached zero. */
@@ -141,7 +142,9 @@ export function* followCycles(
     const back = settings.isBack(curve, settled);
     if (back) return finish(back.reason, back.message);
     upright = isUpright(settled) && !isLong(settled, start) ? upright + 1 : 0;
-    if (upright >= CYCLE_STEP_DEFAULTS.upright)
+    const shown =
+      followed.crossings.length > 0 ? CYCLE_STEP_DEFAULTS.uprightBeyond : CYCLE_STEP_DEFAULTS.upright;
+    if (upright >= shown)
       return finish(
         'could not be resolved further',
         `At ${format(settled.orbit.parameter)} there is a whole family of cycles; it was not followed further.`,

@@ -25,8 +25,10 @@ export interface CycleCrossing {
  * what is left of the change outside the unit circle are complex pairs.
  */
 export function crossingKinds(a: CyclePoint, b: CyclePoint): readonly CycleSpecialKind[] {
-  // A family of cycles at one value of the parameter: multipliers touch 1 all along, and mean nothing.
-  if (isUpright(a) && isUpright(b)) return [];
+  // A family of cycles at one value of the parameter: multipliers touch 1 all along, and mean nothing, but
+  // the determinant tells where a branch leaves it.
+  if (isUpright(a) && isUpright(b))
+    return a.determinant.sign * b.determinant.sign < 0 ? ['branch point of cycles'] : [];
   const turns = a.tangent.parameter * b.tangent.parameter < 0;
   const above = b.above - a.above;
   const below = b.below - a.below;
@@ -55,6 +57,8 @@ function testOf(kind: CycleSpecialKind, a: CyclePoint): (point: CyclePoint) => n
     case 'fold of cycles':
       return (point) => point.tangent.parameter;
     case 'branch point of cycles':
+      if (isUpright(a))
+        return ({ determinant }) => determinant.sign * Math.exp(determinant.log - a.determinant.log);
       return (point) =>
         signed(
           point.above === a.above,
@@ -139,7 +143,9 @@ function trialAt(
   test: (point: CyclePoint) => number,
 ): { readonly point: CyclePoint; readonly f: number } | null {
   const point = curve.correct(a.orbit, a.tangent, s);
-  if (point) return { point, f: test(point) };
+  // Near the end a trial from a family may land on the branch that leaves it.
+  const strayed = point !== null && isUpright(a) && !isUpright(point);
+  if (point && !strayed) return { point, f: test(point) };
   const before = curve.correct(a.orbit, a.tangent, s - d);
   const after = curve.correct(a.orbit, a.tangent, s + d);
   if (before === null || after === null) return null;
@@ -147,7 +153,8 @@ function trialAt(
     ...before.orbit,
     values: before.orbit.values.map((value, k) => (value + after.orbit.values[k]) / 2),
     logPeriod: (before.orbit.logPeriod + after.orbit.logPeriod) / 2,
-    parameter: (before.orbit.parameter + after.orbit.parameter) / 2,
+    // Near a singular point the parameter of a family is known better from the family.
+    parameter: isUpright(a) ? a.orbit.parameter : (before.orbit.parameter + after.orbit.parameter) / 2,
   };
   return { point: { ...before, orbit }, f: (test(before) + test(after)) / 2 };
 }

@@ -2,6 +2,7 @@ import { nullVector } from '../linalg/null-vector';
 import type { Direction } from './collocation-borders';
 import { CycleCurve, type CyclePoint } from './cycle-curve';
 import { CycleSystem } from './cycle-system';
+import { isUpright } from './locate-cycle';
 import type { Orbit } from './orbit';
 
 /** First steps onto the other branch that are tried, in scaled coordinates. */
@@ -89,18 +90,29 @@ export function switchAtBranchPoint(
   curve: CycleCurve,
   at: CyclePoint,
 ): readonly { curve: CycleCurve; point: CyclePoint }[] {
-  const along = curve.secondDirection(at);
-  if (along === null) return [];
+  const second = curve.secondDirection(at);
+  if (second === null) return [];
   const found: { curve: CycleCurve; point: CyclePoint }[] = [];
-  for (const sign of [1, -1])
+  for (const along of [second, turned(second)])
     for (const size of FIRST_STEPS) {
-      const near = curve.correct(at.orbit, along, sign * size);
-      const far = near && curve.correct(at.orbit, along, 2 * sign * size);
+      const near = curve.correct(at.orbit, along, size);
+      const far = near && curve.correct(at.orbit, along, 2 * size);
       if (near === null || far === null || !isNear(curve, at, near, size)) continue;
+      // From a family at one value of the parameter only what leaves that value is another branch.
+      if (isUpright(at) && isUpright(near)) continue;
       found.push(inFittingCoordinates(curve, near, far));
       break;
     }
   return found;
+}
+
+/** The opposite direction. */
+export function turned(direction: Direction): Direction {
+  return {
+    values: direction.values.map((value) => -value),
+    parameter: -direction.parameter,
+    logPeriod: -direction.logPeriod,
+  };
 }
 
 /** Whether the corrector found a cycle near by; its distance along the direction is given by the constraint. */

@@ -93,6 +93,32 @@ describe('cycles known in closed form', () => {
   });
 });
 
+describe('a family of cycles at one value', () => {
+  // van der Pol at mu = 0 is the harmonic oscillator; the limit cycles leave it at amplitude 2 (averaging, textbook).
+  it('is left where the limit cycles of van der Pol begin, on both sides', () => {
+    const system = textbook(["x' = y", "y' = mu*(1-x^2)*y - x"], { mu: 1 }, false);
+    const result = cyclesOf(system, 'mu', [-1, 2]);
+    const [family, ...others] = result.branches;
+    expect(family?.origin.kind).toBe('Hopf');
+    expect(family?.parameters.every((mu) => Math.abs(mu) < 1e-9)).toBe(true);
+    expect(result.specialPoints).toHaveLength(1);
+    expect(result.specialPoints[0]?.highest[0]).toBeCloseTo(2, 5);
+    expect(result.specialPoints[0]?.meaning).toMatch(/all sizes/);
+    expect(others.map((one) => one.parameters.at(-1)).sort()).toEqual([-1, 2]);
+    for (const branch of others) {
+      const last = branch.parameters.length - 1;
+      expect(branch.attracts[last]).toBe(branch.parameters[last]! > 0 ? 1 : 0);
+    }
+  });
+
+  it('is said of the classic neutral pair, and nothing is drawn', () => {
+    const system = textbook(["x' = x*(1-y)", "y' = m*y*(x-1)"], { m: 1 });
+    const result = cyclesOf(system, 'm', [0.5, 2], { starts: [Float64Array.of(2, 1)] });
+    expect(result.branches).toHaveLength(0);
+    expect(result.message).toMatch(/cycles of all sizes/);
+  });
+});
+
 describe('models with explicit time', () => {
   // x' = -x + sin(w t): x = (sin wt - w cos wt)/(1 + w^2), multiplier exp(-2 pi / w); exact.
   it('follow the period map also where the period of the forcing is swept', () => {
