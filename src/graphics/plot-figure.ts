@@ -2,7 +2,7 @@
 import { axisLabel } from './axis';
 import type { Figure, Mark, TextMark } from './marks';
 import { flowMarks } from './flow-arrows';
-import { nameMarks } from './point-names';
+import { nameMarks, type NameObstacle } from './point-names';
 import type { Palette } from './palette';
 import type { PlotLayout } from './plot-layout';
 import type { PlotBand, PlotLine, PlotPoint, PlotSpec } from './plot-spec';
@@ -112,6 +112,12 @@ function pointMark(point: PlotPoint, layout: PlotLayout, palette: Palette): Mark
   };
 }
 
+/** Lines that names of points keep off; the ground of a band is none. */
+function obstaclesOf(mark: Mark): readonly NameObstacle[] {
+  if (mark.kind === 'path') return mark.stroke ? [{ points: mark.points, step: 2 }] : [];
+  return mark.kind === 'strokes' && (mark.opacity ?? 1) > 0.8 ? [{ points: mark.segments, step: 4 }] : [];
+}
+
 function axesMarks(layout: PlotLayout, palette: Palette): { under: Mark[]; over: Mark[] } {
   const { left, top, innerWidth, innerHeight } = layout;
   const bottom = top + innerHeight;
@@ -177,6 +183,14 @@ export function plotFigure(spec: PlotSpec, layout: PlotLayout, palette: Palette)
     );
   };
   const points = spec.points.filter(within);
+  const drawn = [
+    ...[...spec.bands]
+      .sort((a, b) => Number(b.twin) - Number(a.twin))
+      .flatMap((band) => bandMarks(band, layout)),
+    ...(spec.flow ? flowMarks(spec.flow, layout, palette) : []),
+    ...twinFirst.flatMap((line, index) => lineMarks(line, index, layout, palette)),
+  ];
+  const obstacles = points.some((one) => one.named) ? drawn.flatMap(obstaclesOf) : [];
   return {
     width: layout.width,
     height: layout.height,
@@ -188,17 +202,11 @@ export function plotFigure(spec: PlotSpec, layout: PlotLayout, palette: Palette)
       {
         kind: 'clip',
         ...window,
-        marks: [
-          ...[...spec.bands]
-            .sort((a, b) => Number(b.twin) - Number(a.twin))
-            .flatMap((band) => bandMarks(band, layout)),
-          ...(spec.flow ? flowMarks(spec.flow, layout, palette) : []),
-          ...twinFirst.flatMap((line, index) => lineMarks(line, index, layout, palette)),
-        ],
+        marks: drawn,
       },
       ...axes.over,
       ...points.map((point) => pointMark(point, layout, palette)),
-      ...nameMarks(points, layout, palette),
+      ...nameMarks(points, layout, palette, obstacles),
     ],
   };
 }
