@@ -1,5 +1,5 @@
 import { useQuery } from '@tanstack/react-query';
-import { useMemo, useState } from 'react';
+import { useEffect, useMemo, useState } from 'react';
 import { Link } from 'react-router-dom';
 
 import { ErrorState, LoadingState } from '@/components/states/page-state';
@@ -14,6 +14,7 @@ import { originOf } from './dialogs/origin-of';
 import { draftKey } from './drafts/draft-key';
 import { DraftOffer } from './drafts/draft-offer';
 import { forgetDraft, readDraft } from './drafts/draft-storage';
+import { handedOver, settleHandOver } from './state/hand-over';
 import { sameDocument } from './state/same-document';
 import { createWorkbenchStore, WorkbenchContext, type Origin } from './state/store';
 import { Workbench } from './workbench';
@@ -41,7 +42,12 @@ async function openSource(source: WorkbenchSource, signedIn: boolean, signal: Ab
 /** The bench with what was opened on it; an earlier visit's draft is offered first. */
 function OpenedBench({ opened, userId }: { readonly opened: Opened; readonly userId: string | undefined }) {
   const key = draftKey(opened.origin, userId);
-  const store = useMemo(() => createWorkbenchStore(opened.document, opened.origin), [opened]);
+  const store = useMemo(() => {
+    const { document, origin } = opened;
+    const kept = origin.kind === 'preset' ? handedOver(origin.id) : null;
+    return kept ?? createWorkbenchStore(document, origin);
+  }, [opened]);
+  useEffect(settleHandOver, [store]);
   const [draft, setDraft] = useState(() => {
     const kept = key ? readDraft(key) : null;
     return kept && !sameDocument(kept.document, opened.document) ? kept : null;

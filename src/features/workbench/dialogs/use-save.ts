@@ -10,6 +10,7 @@ import { ApiError } from '@/lib/api-client';
 import { useDraftKey } from '../drafts/draft-key';
 import { forgetDraft } from '../drafts/draft-storage';
 import { useBenchUi } from '../layout/bench-ui';
+import { handOver } from '../state/hand-over';
 import { useWorkbenchStore } from '../state/store';
 import { createPreset } from './api/create-preset';
 import { saveVersion } from './api/save-version';
@@ -74,7 +75,11 @@ export function useSave(onDone: () => void) {
       void attempt(
         document,
         () => createPreset({ document: copy, note, ...placement }),
-        (body) => void navigate(`/presets/${body.preset.id}`),
+        (body) => {
+          // A copy under another title is another document, with a history of its own.
+          if (title === undefined) handOver(body.preset.id, store);
+          void navigate(`/presets/${body.preset.id}`);
+        },
       );
     },
   };
