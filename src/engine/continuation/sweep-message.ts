@@ -1,7 +1,7 @@
 import type { Branch } from './contract';
 
 export const NEEDS_PERIOD_MAP =
-  'The formulas contain the time t, so that nothing rests: a sweep would need the period map, which this version does not compute.';
+  'The formulas contain the time t, so that nothing rests and no equilibrium can be followed; the fixed points of the period map can, as cycles.';
 export const NO_SUCH_PARAMETER = 'The parameter to sweep is not one of this model.';
 export const NO_RANGE = 'The range of a sweep needs two different finite ends.';
 export const STOPPED = 'Stopped before the end; what was found is shown.';

@@ -39,7 +39,7 @@ export const SEARCH_DEFAULTS = {
 } as const;
 
 export const NEEDS_PERIOD_MAP =
-  'The formulas contain the time t, so that no state rests: what repeats from season to season is found by the period map, which this version does not compute. Remove t from the formulas to look for equilibria.';
+  'The formulas contain the time t, so that no state rests. What repeats from season to season are the fixed points of the period map, which are followed as cycles along a parameter.';
 
 /** @param p values of the parameters, in the order of `system.parameterKeys`; set on the system */
 export function* findEquilibria(

@@ -241,6 +241,8 @@ export const presetSchema = z.object({
   densityUnit: z.string().trim().max(LIMITS.unitLength).default(''),
   /** Whole individuals in one unit of density, where known. */
   individualsPerUnit: z.number().positive().nullable().default(null),
+  /** Density below which the workbench warns; where null, that of one individual. */
+  lowDensity: z.number().positive().nullable().default(null),
   populations: z.array(populationSchema).max(LIMITS.populations),
   traits: z.array(traitSchema).max(LIMITS.traits).default([]),
   /** The common spread dial: 0 pooled, 1 as entered. */

@@ -32,7 +32,7 @@ export function checkUse(document: PresetDocument): readonly Diagnostic[] {
   const [first] = timed;
   if (first !== undefined) {
     const message =
-      'This formula contains the time t: trajectories work; equilibria, sweeps and the verdict would need the period map and are not offered.';
+      'This formula contains the time t: nothing rests, so that fixed points of the period map, swept along a parameter, take the place of equilibria, and there is no verdict on them.';
     found.push(remark('note', first, message));
   }
   document.parameters.forEach((parameter, k) => {

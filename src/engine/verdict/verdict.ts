@@ -58,7 +58,7 @@ function refusalOf(input: VerdictInput): Answered | null {
     return {
       answer: 'cannot say',
       sentence:
-        'Cannot say: the formulas contain the time t, so that a verdict needs the period map, which this version does not compute.',
+        'Cannot say: the formulas contain the time t, so that nothing rests and there is no equilibrium to judge. Compare the fixed points of the period map, pooled and split, instead.',
     };
   if (input.spread === 0)
     return {

@@ -6,11 +6,13 @@ import { checkOtherMethod } from './check-other-method';
 import type { Command } from './command';
 import { exportModel } from './export-model';
 import { findEquilibria } from './find-equilibria';
+import { fullPicture } from './full-picture';
 import { importModel } from './import-model';
 import { keepTraits } from './keep-traits';
 import { openPalette } from './open-palette';
 import { poolClasses } from './pool-classes';
 import { redo } from './redo';
+import { pictureTable } from './picture-table';
 import { runSweep } from './run-sweep';
 import { saveCopy } from './save-copy';
 import { saveVersion } from './save-version';
@@ -37,6 +39,8 @@ export const COMMANDS: readonly Command[] = [
   exportModel,
   importModel,
   runSweep,
+  fullPicture,
+  pictureTable,
   findEquilibria,
   checkOtherMethod,
   cancelRun,

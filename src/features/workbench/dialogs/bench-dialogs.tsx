@@ -5,6 +5,7 @@ import { EquationsDialog } from './equations-dialog';
 import { ExportModelDialog } from './export-model-dialog';
 import { HistoryDialog } from './history-dialog';
 import { ImportDialog } from './import-dialog';
+import { PictureDialog } from './picture-dialog';
 import { SaveCopyDialog } from './save-copy-dialog';
 import { SaveDialog } from './save-dialog';
 import { ShareDialog } from './share-dialog';
@@ -24,6 +25,7 @@ export function BenchDialogs({ context }: { readonly context: () => CommandConte
       {dialog === 'export' ? <ExportModelDialog /> : null}
       {dialog === 'import' ? <ImportDialog /> : null}
       {dialog === 'equations' ? <EquationsDialog /> : null}
+      {dialog === 'picture' ? <PictureDialog /> : null}
     </>
   );
 }

@@ -62,6 +62,7 @@ function showModel(document: PresetDocument): Shown {
     'Time unit': document.timeUnit,
     'Density unit': text(document.densityUnit),
     'Individuals per unit of density': text(document.individualsPerUnit),
+    'Density to warn below': text(document.lowDensity),
     'Length of a trajectory': text(document.horizon),
     Spread: text(document.spread),
   };

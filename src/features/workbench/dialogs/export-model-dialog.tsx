@@ -1,24 +1,14 @@
+import { useState } from 'react';
+
 import { Button } from '@/components/ui/button';
 import { Dialog } from '@/components/ui/dialog';
 import type { PresetDocument } from '@/engine/schema/preset';
-import type { StudyInput } from '@/engine/schema/study';
 import { CAUTION } from '@/engine/system/contract';
 
 import { useBenchUi } from '../layout/bench-ui';
-import { useWorkbench, type SweepSelection } from '../state/store';
+import { useWorkbench } from '../state/store';
 import { fileNameOf, saveFile } from './save-file';
-
-/** The model with the three tasks of the bench, ready for batch. */
-export function studyOf(document: PresetDocument, sweep: SweepSelection | null): StudyInput {
-  return {
-    preset: document,
-    tasks: [
-      { task: 'trajectory', id: 'trajectory', horizon: document.horizon },
-      { task: 'equilibria', id: 'equilibria' },
-      ...(sweep ? [{ task: 'sweep' as const, id: 'sweep', ...sweep }] : []),
-    ],
-  };
-}
+import { studyOf, studyTasks } from './study-tasks';
 
 /** The document of a harvested model carries the caution in its notes, so that it travels along. */
 function withCaution(document: PresetDocument, harvested: boolean): PresetDocument {
@@ -32,6 +22,9 @@ export function ExportModelDialog() {
   const document = useWorkbench((state) => state.document);
   const sweep = useWorkbench((state) => state.sweepSelection);
   const harvested = useWorkbench((state) => state.report?.harvested ?? false);
+  const offered = studyTasks(document, sweep);
+  const [left, setLeft] = useState<readonly string[]>([]);
+  const chosen = offered.filter((one) => !left.includes(one.task.task));
   const close = () => set({ dialog: null });
   const keep = (ending: string, content: unknown) => {
     saveFile(`${fileNameOf(document.title)}${ending}`, `${JSON.stringify(content, null, 2)}\n`);
@@ -57,15 +50,46 @@ export function ExportModelDialog() {
             Save document
           </Button>
         </li>
-        <li className="flex items-center justify-between gap-4">
+        <li className="flex items-start justify-between gap-4">
           <span>
             <span className="block font-medium">Study for batch</span>
             <span className="text-sm text-muted">
-              The model with its trajectory, its equilibria{sweep ? ' and the sweep on the strip' : ''}, to be
-              rerun from the command line.
+              The model with what the command line is to compute of it. Numbers and starts are those on the
+              bench.
             </span>
+            <fieldset className="mt-2 grid gap-1">
+              <legend className="sr-only">What to compute</legend>
+              {offered.map(({ label, task }) => (
+                <label key={task.task} className="flex items-baseline gap-2 text-sm">
+                  <input
+                    type="checkbox"
+                    className="accent-(--accent)"
+                    checked={!left.includes(task.task)}
+                    onChange={(event) =>
+                      setLeft(
+                        event.target.checked ? left.filter((one) => one !== task.task) : [...left, task.task],
+                      )
+                    }
+                  />
+                  {label}
+                </label>
+              ))}
+            </fieldset>
           </span>
-          <Button onClick={() => keep('.study.json', studyOf(exported, sweep))}>Save study</Button>
+          <Button
+            disabled={chosen.length === 0}
+            onClick={() =>
+              keep(
+                '.study.json',
+                studyOf(
+                  exported,
+                  chosen.map((one) => one.task),
+                ),
+              )
+            }
+          >
+            Save study
+          </Button>
         </li>
       </ul>
       {harvested ? (

@@ -18,7 +18,8 @@ export function EquilibriaSection() {
   const lumped = useWorkbench((state) => state.shownReport?.twin.kind === 'lumped');
   const engine = useWorkbench((state) => state.engine);
   const [withTwin, setWithTwin] = useState(false);
-  if (!found) return null;
+  // Under forcing the fixed points of the period map stand in another card.
+  if (!found || found.status === 'needs-period-map') return null;
   const feasible = found.equilibria.filter((one) => one.feasible);
   const others = found.equilibria.filter((one) => !one.feasible);
   const twinNames = lumped

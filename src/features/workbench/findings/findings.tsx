@@ -1,7 +1,11 @@
 import { useWorkbench } from '../state/store';
+import { BranchesCard } from './branches-card';
+import { CyclesCard } from './cycles-card';
+import { DensityCard } from './density-card';
 import { EquilibriaSection } from './equilibria-section';
 import { JobCard } from './job-card';
 import { NotesCard } from './notes-card';
+import { PictureCard } from './picture-card';
 import { SecondOpinionCard } from './second-opinion-card';
 import { SpecialPointsCard } from './special-points-card';
 import { VerdictCard } from './verdict-card';
@@ -38,7 +42,11 @@ export function Findings() {
       <JobCard />
       <VerdictCard />
       <SpecialPointsCard />
+      <CyclesCard />
+      <DensityCard />
       <EquilibriaSection />
+      <PictureCard />
+      <BranchesCard />
       <SecondOpinionCard />
       <NotesCard />
     </div>

@@ -9,7 +9,9 @@ export function NotesCard() {
   const remarks: string[] = [];
   if (twin) remarks.push(twin.reason);
   if (report && !report.autonomous)
-    remarks.push('A formula holds the time, so equilibria and sweeps need the period map.');
+    remarks.push(
+      'A formula holds the time, so nothing rests: a sweep follows the fixed points of the period map.',
+    );
   if (report && !report.smooth)
     remarks.push('The model has a kink (min, max, abs or a condition); normal forms are withheld there.');
   if (report?.deterministicOnly) remarks.push('A signed rate makes this model deterministic only.');

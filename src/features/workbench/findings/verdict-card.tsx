@@ -1,9 +1,12 @@
-import { Fragment } from 'react';
+import { Fragment, useMemo } from 'react';
 
 import type { Verdict, VerdictEvidence } from '@/engine/verdict/contract';
 import { formatNumber } from '@/graphics/numbers';
 import { joinClasses } from '@/lib/join-classes';
 
+import { cycleEvidence } from '../cycles/cycle-evidence';
+import { usePresentCycles } from '../cycles/use-present-cycles';
+import { useShownModel } from '../panes/use-shown-model';
 import { useWorkbench } from '../state/store';
 import { Card } from './card';
 
@@ -34,7 +37,7 @@ function EvidenceTable({ evidence }: { readonly evidence: readonly VerdictEviden
             <tr className="border-t align-baseline">
               <th scope="row" className="pt-1 pr-1 text-left font-normal">
                 {one.label}
-                {one.unit ? <span className="text-muted"> ({one.unit})</span> : null}
+                {one.unit ? <span className="whitespace-nowrap text-muted"> ({one.unit})</span> : null}
               </th>
               <td className="figures pt-1 pl-2 text-right whitespace-nowrap">{cell(one.pooled)}</td>
               <td className="figures pt-1 pl-1 text-right font-semibold whitespace-nowrap">
@@ -75,7 +78,14 @@ function Reasons({ title, items }: { readonly title: string; readonly items: rea
 /** Letters beyond which a sentence is set smaller, so that the evidence stays in view. */
 const LONG_SENTENCE = 110;
 
-function VerdictBody({ verdict }: { readonly verdict: Verdict }) {
+function VerdictBody({
+  verdict,
+  cycles,
+}: {
+  readonly verdict: Verdict;
+  readonly cycles: readonly VerdictEvidence[];
+}) {
+  const evidence = [...verdict.evidence, ...cycles];
   return (
     <>
       <p
@@ -86,7 +96,7 @@ function VerdictBody({ verdict }: { readonly verdict: Verdict }) {
       >
         {verdict.sentence}
       </p>
-      {verdict.evidence.length > 0 ? <EvidenceTable evidence={verdict.evidence} /> : null}
+      {evidence.length > 0 ? <EvidenceTable evidence={evidence} /> : null}
       <Reasons title="What it rests on" items={verdict.restsOn} />
       <Reasons title="What it leaves open" items={verdict.leavesOpen} />
       {verdict.cautions.map((caution) => (
@@ -103,11 +113,19 @@ export function VerdictCard() {
   const verdict = useWorkbench((state) => state.verdict);
   const swept = useWorkbench((state) => state.sweep !== null && !state.sweepOutdated);
   const twin = useWorkbench((state) => state.shownReport?.twin ?? null);
+  const model = useShownModel();
+  const comparable = twin?.kind === 'lumped' || twin?.kind === 'unlumped';
+  const split = usePresentCycles('split').cycles;
+  const pooled = usePresentCycles('twin').cycles;
+  const cycles = useMemo(
+    () => (comparable ? cycleEvidence(model, split, pooled) : []),
+    [comparable, model, split, pooled],
+  );
   return (
     <Card title="Does the split stabilise?" accent>
       <div role="status" aria-live="polite" aria-atomic="true">
         {verdict ? (
-          <VerdictBody verdict={verdict} />
+          <VerdictBody verdict={verdict} cycles={cycles} />
         ) : (
           <p className="text-muted">
             {twin ? twin.reason : 'The answer stands here once the model can be computed.'}

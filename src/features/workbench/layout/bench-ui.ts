@@ -10,6 +10,7 @@ export const DIALOGS = [
   'export',
   'import',
   'equations',
+  'picture',
 ] as const;
 export type DialogName = (typeof DIALOGS)[number];
 

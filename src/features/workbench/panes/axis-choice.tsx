@@ -18,7 +18,7 @@ export function AxisChoice({ label, value, choices, onChange, allowLogarithm = t
       <label className="flex items-center gap-1 text-sm text-muted">
         {label}
         <select
-          className="max-w-36 rounded border bg-raised px-1 py-0.5 text-ink"
+          className="max-w-[min(15rem,60vw)] rounded border bg-raised px-1 py-0.5 text-ink"
           value={keyOf(value)}
           onChange={(event) => {
             const chosen = choices.find((one) => keyOf(one.quantity) === event.target.value);

@@ -1,40 +1,18 @@
-import { Button } from '@/components/ui/button';
-
 import { useWorkbench, useWorkbenchStore } from '../state/store';
 import { ParameterChooser } from './parameter-chooser';
 import { RangeField } from './range-field';
+import { RunButton } from './run-button';
 import { StripTrack } from './strip-track';
 
-function RunButton() {
-  const engine = useWorkbench((state) => state.engine);
-  const job = useWorkbench((state) => state.job);
-  const ready = useWorkbench((state) => state.sweepSelection !== null && state.shownReport !== null);
-  const outdated = useWorkbench((state) => state.sweepOutdated);
-  if (job)
-    return (
-      <Button size="small" onClick={() => engine?.cancel()}>
-        Cancel
-      </Button>
-    );
-  return (
-    <Button
-      size="small"
-      look={outdated ? 'primary' : 'plain'}
-      disabled={!engine || !ready}
-      onClick={() => engine?.sweep()}
-    >
-      {outdated ? 'Sweep again' : 'Run the sweep'}
-    </Button>
-  );
-}
-
 function SweepFacts() {
-  const points = useWorkbench((state) => state.sweep?.split.points ?? null);
-  const milliseconds = useWorkbench((state) => state.sweep?.split.milliseconds ?? null);
-  if (points === null || milliseconds === null) return null;
+  const sweep = useWorkbench((state) => state.sweep?.split ?? null);
+  const cycles = useWorkbench((state) => state.cycles?.split ?? null);
+  if (!sweep) return null;
+  const points = sweep.points + (cycles?.points ?? 0);
+  const milliseconds = sweep.milliseconds + (cycles?.milliseconds ?? 0);
   return (
     <span className="text-sm whitespace-nowrap text-muted max-sm:hidden">
-      {points.toLocaleString('en-GB')} points, {Math.round(milliseconds)} ms
+      {points.toLocaleString('en-GB')} points, {Math.round(milliseconds).toLocaleString('en-GB')} ms
     </span>
   );
 }

@@ -2,12 +2,13 @@ import type { EquilibriaResult } from '@/engine/equilibria/contract';
 import type { Trajectory } from '@/engine/integrators/contract';
 import type { Quantity } from '@/engine/schema/preset';
 import { axisLabel, paddedDomain, type AxisSpec } from '@/graphics/axis';
-import { equilibriumGlyph, specialPointGlyph, type GlyphName } from '@/graphics/glyphs';
+import { equilibriumGlyph, specialPointGlyph } from '@/graphics/glyphs';
 import { formatNumber } from '@/graphics/numbers';
 import type { LegendItem } from '@/graphics/plot-spec';
 import type { PlotTable } from '@/graphics/plot-table';
 import { nameQuantity, readQuantity } from '@/graphics/quantities';
 
+import { presentLoops } from '../../cycles/present-loops';
 import { readParameterValue } from '../../engine/parameter-values';
 import { equilibriumSentence } from '../equilibrium-words';
 import { runStyle, STABILITY_WORDS, sweepRuns } from '../views/branch-runs';
@@ -21,27 +22,8 @@ import {
   type ViewInput,
 } from '../views/view-input';
 import { spaceAxes } from './space-axes';
-
-export interface SpaceLine {
-  readonly id: string;
-  readonly label: string;
-  readonly colour: string;
-  readonly dashed: boolean;
-  readonly opacity: number;
-  readonly twin: boolean;
-  /** x, y, z of each point in data units. */
-  readonly points: Float64Array;
-}
-
-export interface SpacePoint {
-  readonly label: string;
-  readonly description: string;
-  readonly at: readonly [number, number, number];
-  readonly glyph: GlyphName;
-  readonly colour: string;
-  readonly size: number;
-  readonly named: boolean;
-}
+import { cycleRings, orbitPoints } from './space-cycles';
+import type { ReadPoint, SpaceLine, SpacePoint } from './space-parts';
 
 export interface SpaceSpec {
   readonly title: string;
@@ -59,14 +41,10 @@ export interface SpaceSpec {
   readonly empty: string | null;
 }
 
-type Axes = readonly [Quantity, Quantity, Quantity];
-type ReadPoint = (
-  states: Float64Array,
-  offset: number,
-  time: number,
-  parameter: number,
-) => [number, number, number];
+/** What is drawn fainter is not feasible, and sets no extent. */
+const FAINT = 0.5;
 
+type Axes = readonly [Quantity, Quantity, Quantity];
 function reader(input: ViewInput, axes: Axes, symbols: readonly string[]): ReadPoint | null {
   const parts = axes.map((axis) => readQuantity(input.model, axis, symbols));
   const [a, b, c] = parts;
@@ -137,10 +115,33 @@ function phaseParts(input: ViewInput, axes: Axes) {
       twin: false,
       points: orbit(result.trajectory, own, parameter),
     });
-    if (!axes.some((axis) => axis.quantity === 'time'))
+    if (!axes.some((axis) => axis.quantity === 'time')) {
       points.push(...equilibria(input, result.equilibria, own, parameter, false));
+      const strong = palette.hues[model.populations.at(-1)?.hue ?? 'slate'][3] ?? palette.ink;
+      lines.push(...loopLines(input, axes, parameter, strong));
+    }
   }
   return { lines, points };
+}
+
+/** The cycles at the present value of the swept parameter. */
+function loopLines(input: ViewInput, axes: Axes, parameter: number, colour: string): SpaceLine[] {
+  const { state, palette } = input;
+  return presentLoops(state).flatMap((loop): SpaceLine[] => {
+    const read = reader(input, axes, loop.stateSymbols);
+    if (!read) return [];
+    return [
+      {
+        id: loop.id,
+        label: loop.label,
+        colour: loop.isTwin ? palette.twin : colour,
+        dashed: loop.cycle.attracts !== 1,
+        opacity: 1,
+        twin: loop.isTwin,
+        points: orbitPoints(loop.orbit, loop.stateSymbols.length, read, parameter),
+      },
+    ];
+  });
 }
 
 function sweepParts(input: ViewInput, axes: Axes) {
@@ -183,7 +184,15 @@ function sweepParts(input: ViewInput, axes: Axes) {
         size: isTwin ? 6 : 7,
         named: point.feasible,
       });
+    const cycles = isTwin ? state.cycles?.twin : state.cycles?.split;
+    if (cycles) {
+      const rings = cycleRings(input, cycles, read, isTwin);
+      lines.push(...rings.lines);
+      points.push(...rings.points);
+    }
   }
+  const value = readParameterValue(state.document, state.cycles?.split.parameterKey ?? '');
+  if (value !== null) lines.push(...loopLines(input, axes, value, palette.accent));
   return { lines, points };
 }
 
@@ -204,7 +213,7 @@ function axesOf(
   const specs = axes.map((axis, k): AxisSpec => {
     const extent = new Extent(axis.logarithm);
     for (const line of lines)
-      if (line.opacity === 1)
+      if (line.opacity > FAINT)
         for (let at = k; at < line.points.length; at += 3) extent.add(line.points[at] ?? NaN);
     for (const point of points) extent.add(point.at[k] ?? NaN);
     const sweep = input.state.sweep?.split;
@@ -251,6 +260,7 @@ export function spaceSpec(view: 'space' | 'space-diagram', input: ViewInput): Sp
   const { lines, points } = view === 'space' ? phaseParts(input, axes) : sweepParts(input, axes);
   const named = axesOf(input, axes, lines, points);
   const own = lines.find((line) => !line.twin);
+  const loops = lines.filter((line) => line.id.startsWith('cycle:'));
   const legend: LegendItem[] = own
     ? [
         {
@@ -265,6 +275,15 @@ export function spaceSpec(view: 'space' | 'space-diagram', input: ViewInput): Sp
     legend.push({ label: 'repels', colour: own.colour, marker: null, line: 'dashed' });
   if (lines.some((line) => line.twin))
     legend.push({ label: 'pooled twin', colour: palette.twin, marker: null, line: 'thin' });
+  if (view === 'space')
+    legend.push(
+      ...loops.map((line): LegendItem => ({
+        label: line.label,
+        colour: line.colour,
+        marker: null,
+        line: line.dashed ? 'dashed' : 'solid',
+      })),
+    );
   if (view === 'space')
     legend.push(
       { label: 'attracts', colour: palette.ink, marker: 'attracting', line: 'none' },

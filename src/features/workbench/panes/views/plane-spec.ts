@@ -7,7 +7,9 @@ import { classColours } from '@/graphics/palette';
 import type { LegendItem, PlotHandle, PlotLine, PlotPoint, PlotSpec } from '@/graphics/plot-spec';
 import { classQuantity, nameQuantity, readQuantity } from '@/graphics/quantities';
 
+import { presentLoops } from '../../cycles/present-loops';
 import { equilibriumSentence } from '../equilibrium-words';
+import { runStyle } from './branch-runs';
 import {
   commonNotes,
   currentStart,
@@ -98,6 +100,36 @@ function growthLines(input: ViewInput, x: Quantity, y: Quantity): PlotLine[] {
   });
 }
 
+/** The cycle at the present value of the swept parameter, solid where it attracts. */
+function cycleLoops(
+  input: ViewInput,
+  pair: (symbols: readonly string[]) => readonly [Reader, Reader] | null,
+): PlotLine[] {
+  const { state, palette, model } = input;
+  const last = model.populations.at(-1);
+  return presentLoops(state).flatMap((loop): PlotLine[] => {
+    const readers = pair(loop.stateSymbols);
+    if (!readers) return [];
+    const n = loop.stateSymbols.length;
+    const read = (reader: Reader) =>
+      Float64Array.from({ length: loop.orbit.length / n }, (_value, k) =>
+        reader(loop.orbit, k * n, NaN, NaN),
+      );
+    return [
+      {
+        id: loop.id,
+        label: loop.label,
+        colour: loop.isTwin ? palette.twin : (palette.hues[last?.hue ?? 'slate'][2] ?? palette.ink),
+        ...runStyle(loop.cycle.attracts, loop.isTwin),
+        marker: null,
+        x: read(readers[0]),
+        y: read(readers[1]),
+        twin: loop.isTwin,
+      },
+    ];
+  });
+}
+
 function startHandle({ state, palette }: ViewInput, x: Quantity, y: Quantity): PlotHandle[] {
   if (x.quantity !== 'class' || y.quantity !== 'class' || x.of === y.of) return [];
   const at = [currentStart(state, x.of), currentStart(state, y.of)] as const;
@@ -152,6 +184,7 @@ export function planeSpec(input: ViewInput): PlotSpec {
       ...orbit(trajectory, readers),
       twin: false,
     });
+  lines.push(...cycleLoops(input, pair));
   const points = [
     ...(twinReaders ? equilibriumPoints(input, state.result?.twinEquilibria, twinReaders, true) : []),
     ...(readers ? equilibriumPoints(input, state.result?.equilibria, readers, false) : []),
@@ -173,7 +206,7 @@ export function planeSpec(input: ViewInput): PlotSpec {
     label: line.label,
     colour: line.colour,
     marker: line.marker,
-    line: line.twin ? 'thin' : 'solid',
+    line: line.dash ? 'dashed' : line.twin ? 'thin' : 'solid',
   }));
   return {
     title: 'Phase plane',
