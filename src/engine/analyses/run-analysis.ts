@@ -2,9 +2,13 @@ import type { Progress } from '../continuation/contract';
 import type { AnalysisName, AnalysisTask } from '../schema/analysis-tasks';
 import type { CompiledModel } from '../system/compile-model';
 import type { AnalysisOptions, AnalysisResultOf } from './contract';
+import { runBasins } from './basins';
 import { runCycles } from './cycles';
+import { runExtremes } from './extremes';
 import { runLyapunov } from './lyapunov';
+import { runMap } from './map';
 import { runPicture } from './picture';
+import { runSection } from './section';
 
 type RunTask<Task extends AnalysisTask> = (
   model: CompiledModel,
@@ -18,9 +22,13 @@ type Runs = {
 
 /** What each task is carried out by. */
 const RUNS: Partial<Runs> = {
+  basins: runBasins,
   cycles: runCycles,
+  extremes: runExtremes,
   lyapunov: runLyapunov,
+  map: runMap,
   picture: runPicture,
+  section: runSection,
 };
 
 /**

@@ -13,14 +13,11 @@ export function quantitiesOf(system: CompiledSystem): Quantity[] {
   return [...classes, ...totals.map(({ symbol, states }) => ({ symbol, states }))];
 }
 
-/** The quantity of a symbol; the first population's total where none is given, null where there is no such. */
+/** The quantity of a symbol, a population's total first; the first population's where none is given, null where there is no such. */
 export function quantityNamed(system: CompiledSystem, symbol?: string): Quantity | null {
   if (symbol === undefined) return system.populations[0] ?? quantitiesOf(system)[0];
-  return (
-    system.populations.find((one) => one.symbol === symbol) ??
-    quantitiesOf(system).find((one) => one.symbol === symbol) ??
-    null
-  );
+  const known = [...system.populations, ...quantitiesOf(system)];
+  return known.find((one) => one.symbol === symbol) ?? null;
 }
 
 export function sumOf(states: readonly number[], values: Float64Array): number {

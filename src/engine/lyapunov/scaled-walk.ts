@@ -33,6 +33,8 @@ export class ScaledWalk {
   readonly scaled: LogScaledSystem;
   /** State at the present time, in its own scale. */
   readonly state: Float64Array;
+  /** Largest value of any state so far. */
+  size: number;
   private readonly options: Required<Omit<WalkOptions, 'startTime'>> & { readonly absoluteTolerance: number };
   private readonly bound: number;
   private slice = 0;
@@ -51,7 +53,8 @@ export class ScaledWalk {
     const maximumSteps = options.maximumSteps ?? INTEGRATION_DEFAULTS.maximumSteps;
     this.options = { relativeTolerance, absoluteTolerance, maximumSteps };
     this.state = start.slice(0, system.dimension);
-    this.bound = WALK_DEFAULTS.unbounded * Math.max(1, ...this.state.map(Math.abs));
+    this.size = Math.max(...this.state.map(Math.abs));
+    this.bound = WALK_DEFAULTS.unbounded * Math.max(1, this.size);
     this.stepper = createStepper(this.scaled.system, this.options);
     this.begin(options.startTime ?? 0, start);
   }
@@ -80,7 +83,8 @@ export class ScaledWalk {
       if (this.stepper.steps + this.stepper.rejected >= this.options.maximumSteps) return 'steps-spent';
       const outcome = this.stepper.advance(end);
       this.scaled.fromScale(this.stepper.state, this.state);
-      if (this.state.some((x) => Math.abs(x) > this.bound)) return 'unbounded';
+      for (const x of this.state) if (Math.abs(x) > this.size) this.size = Math.abs(x);
+      if (this.size > this.bound) return 'unbounded';
       if (outcome !== 'stepped') return outcome;
       for (const observer of observers) observer.note(this);
       this.slice += 1;

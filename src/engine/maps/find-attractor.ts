@@ -6,13 +6,13 @@ import { TurningPoints } from '../lyapunov/turning-points';
 import type { CompiledSystem } from '../system/contract';
 import { attractorClass, type LongRunKind } from './attractor-class';
 import type { AttractorClass } from './contract';
-import { restingAt } from './rest-check';
-import { Returns, type ReturnRule } from './returns';
+import { repelsAt, restingAt } from '../lyapunov/resting-at';
+import { Returns, type Closure, type ReturnRule } from './returns';
 
 export interface AttractorRequest {
-  /** Time before anything is observed. */
+  /** Time left out of extremes and exponents where no rest and no closed pattern ended it before. */
   readonly transient: number;
-  /** Time in which a pattern is waited for; exponents are averaged over as much again where there is none. */
+  /** Time after it in which a pattern is waited for; exponents are averaged over as much again where there is none. */
   readonly observed: number;
   /** Total of each population below which it counts as extinct, in the order of the populations. */
   readonly extinctBelow: Float64Array;
@@ -33,10 +33,10 @@ export interface Attractor {
 export const ATTRACTOR_DEFAULTS = {
   relativeTolerance: 1e-8,
   maximumSteps: 200_000,
-  /** Looks for rest during the transient, and for closed patterns during the time observed. */
-  looks: 12,
-  /** Share of the time observed in which the ranges are taken. */
-  rangeShare: 0.25,
+  /** Parts of the whole run, after each of which it is asked whether it rests or repeats. */
+  parts: 24,
+  /** Parts after which the section is laid anew, through the range seen last. */
+  freshReturns: [1, 2, 4, 8, 12] as readonly number[],
   /** Ranges below this, of logarithms or relative to the state, are none. */
   flat: 1e-6,
 } as const;
@@ -48,9 +48,9 @@ const REASONS: Readonly<Record<Exclude<WalkStatus, 'complete' | 'unbounded'>, st
 };
 
 /**
- * What a solution settles to. In order: rest, where Newton's method finds an attracting equilibrium next to the
+ * What a solution settles to. Asked after each part of the run, in this order: rest, where Newton's method finds an attracting equilibrium next to the
  * state; a cycle, where the returns to a section (or at every period of the forcing) repeat after up to 16
- * turns; else chaos, torus or undecided by the three largest Lyapunov exponents. Populations whose total
+ * turns; at its end chaos, torus or undecided by the three largest Lyapunov exponents. Populations whose total
  * stayed below the given densities and never came back are extinct. A generator that yields between slices.
  */
 export function* findAttractor(
@@ -68,7 +68,10 @@ class AttractorRun {
   private readonly turns: TurningPoints;
   private readonly fading: FadingWatch;
   private readonly watch: StepObserver;
+  /** Populations that can die out. */
   private readonly begunWith: readonly boolean[];
+  private readonly seenLowest: Float64Array;
+  private readonly seenHighest: Float64Array;
 
   constructor(
     private readonly system: CompiledSystem,
@@ -83,47 +86,67 @@ class AttractorRun {
     this.turns = new TurningPoints(this.walk, this.quantities);
     this.fading = new FadingWatch(system.nonnegative);
     this.watch = { note: ({ state }) => this.fading.note(state) };
-    this.begunWith = system.populations.map(({ states }) => states.some((i) => start[i] > 0));
+    this.seenLowest = new Float64Array(this.quantities.length).fill(Infinity);
+    this.seenHighest = new Float64Array(this.quantities.length).fill(-Infinity);
+    this.begunWith = system.populations.map(
+      ({ states }) => states.some((i) => start[i] > 0) && states.every((i) => system.nonnegative[i]),
+    );
   }
 
   *find(): Generator<void, Attractor> {
     const { walk, turns, request } = this;
-    const { looks, rangeShare } = ATTRACTOR_DEFAULTS;
-    for (let k = 1; k <= looks; k += 1) {
-      const status = yield* walk.to((request.transient * k) / looks, [this.watch]);
-      if (status !== 'complete') return this.stopped(status);
-      const rest = this.rest();
-      if (rest) return rest;
-    }
-    turns.reset(walk);
-    const until = request.transient + rangeShare * request.observed;
-    const ranged = yield* walk.to(until, [this.watch, turns]);
-    if (ranged !== 'complete') return this.stopped(ranged);
-    const range = this.ranges();
-    if (range.every((one) => one === 0)) return this.rest() ?? this.flat();
-    const returns = new Returns(walk, this.rule(range), range);
+    const { parts, freshReturns } = ATTRACTOR_DEFAULTS;
     const end = request.transient + request.observed;
-    for (let k = 1; k <= looks; k += 1) {
-      const status = yield* walk.to(until + ((end - until) * k) / looks, [this.watch, turns, returns]);
+    let returns: Returns | null = null;
+    let gone = 0;
+    for (let k = 1; k <= parts; k += 1) {
+      turns.reset(walk);
+      const observers = returns ? [this.watch, turns, returns] : [this.watch, turns];
+      const status = yield* walk.to((end * k) / parts, observers);
       if (status !== 'complete') return this.stopped(status);
-      const closed = returns.closure();
-      if (closed) {
-        turns.reset(walk);
-        const whole = yield* walk.to(walk.time + 1.01 * closed.period, [turns]);
-        if (whole !== 'complete') return this.stopped(whole);
-        return this.answer('cycle', { windings: closed.lag, period: closed.period });
-      }
       const rest = this.rest();
       if (rest) return rest;
+      const closed = returns?.closure();
+      if (closed) return yield* this.cycle(closed);
+      const past = walk.time > request.transient;
+      if (past) this.merge();
+      const range = this.ranges();
+      if (range.every((one) => one === 0)) {
+        if (past) return this.flat();
+        returns = null;
+        continue;
+      }
+      const extinct = this.extinct().length;
+      if (!returns || extinct !== gone || freshReturns.includes(k))
+        returns = new Returns(walk, this.rule(range), range);
+      gone = extinct;
     }
     return yield* this.byExponents();
+  }
+
+  /** Extremes over one whole period. */
+  private *cycle({ lag, period }: Closure): Generator<void, Attractor> {
+    const { walk, turns } = this;
+    turns.reset(walk);
+    const status = yield* walk.to(walk.time + 1.01 * period, [turns]);
+    if (status !== 'complete') return this.stopped(status);
+    return this.answer('cycle', { windings: lag, period });
+  }
+
+  /** Adds what the last part of the run has shown to what was seen since the transient. */
+  private merge(): void {
+    const { lowest, highest } = this.turns;
+    this.seenLowest.forEach((low, q) => {
+      this.seenLowest[q] = Math.min(low, lowest[q]);
+      this.seenHighest[q] = Math.max(this.seenHighest[q], highest[q]);
+    });
   }
 
   /** Rest at an attracting equilibrium next to the state; null where there is none. */
   private rest(): Attractor | null {
     const { system, walk } = this;
     if (!system.autonomous) return null;
-    const at = restingAt(system, walk.time, walk.state);
+    const at = restingAt(system, walk.time, walk.state, walk.size);
     if (!at) return null;
     const values = Float64Array.from(this.quantities, ({ states }) => sumOf(states, at));
     this.turns.lowest.set(values);
@@ -131,8 +154,11 @@ class AttractorRun {
     return { ...this.answer('rest', {}), state: at };
   }
 
-  /** Nothing moves, yet no equilibrium attracts for certain: rest on a curve, or forcing that does nothing. */
+  /** Nothing moves, yet no equilibrium attracts for certain: a curve of them, forcing that does nothing, or a saddle. */
   private flat(): Attractor {
+    const { system, walk } = this;
+    if (system.autonomous && repelsAt(system, walk.time, walk.state))
+      return this.answer('undecided', { reason: 'stays at an equilibrium that repels' });
     return this.answer('rest', {});
   }
 
@@ -170,6 +196,8 @@ class AttractorRun {
   }
 
   private *byExponents(): Generator<void, Attractor> {
+    this.turns.lowest.set(this.seenLowest);
+    this.turns.highest.set(this.seenHighest);
     const fading = this.fading.fading();
     if (fading.length > 0) return this.answer('undecided', { reason: 'nears a cycle through saddles' });
     const { system, walk, request } = this;

@@ -12,7 +12,7 @@ export const RETURN_DEFAULTS = {
   near: 1e-3,
   rounding: 1e-6,
   /** Distance that a pattern may still have to go, judged from how fast it closes. */
-  left: 1e-2,
+  left: 1e-3,
   /** Near returns in a row asked for, besides a whole pattern. */
   fewest: 4,
   looksPerStep: 2,
@@ -68,7 +68,7 @@ export class Returns implements StepObserver {
 
   /**
    * The shortest pattern in which the latest returns repeat, null while there is none. Returns must be near
-   * those one pattern before for several in a row, and on their way to less than a hundredth of the range, as
+   * those one pattern before for several in a row, and on their way to less than a thousandth of the range, as
    * judged from the rate at which they close: a slow spiral is no cycle, nor is a chance return of chaos.
    */
   closure(): Closure | null {

@@ -5,9 +5,11 @@ import type { CompiledSystem } from '../system/contract';
 export const REST_DEFAULTS = {
   iterations: 8,
   /** A state counts as arrived where it is this near to an attracting equilibrium, relative to each state. */
-  near: 1e-3,
-  /** States below this share of the largest are measured against it, and count as absent where they decline. */
-  floor: 1e-6,
+  near: 1e-2,
+  /** States below this share of the size of the solution are measured against it. */
+  nearFloor: 1e-3,
+  /** States below this share of it count as absent where they decline. */
+  floor: 1e-9,
   converged: 1e-10,
   /** Real parts above minus this share of the size of the Jacobian are not told from zero. */
   resolved: 1e-9,
@@ -18,17 +20,21 @@ export const REST_DEFAULTS = {
  * eigenvalue has a negative real part, those of absent populations included, so that a slow passage by a
  * saddle is not taken for rest. States that are tiny and decline are set to zero first.
  *
+ * @param size largest value that the solution has had, against which small states are measured
  * @returns the equilibrium, or null. Nothing is claimed where f or J is not finite there.
  */
-export function restingAt(system: CompiledSystem, t: number, state: Float64Array): Float64Array | null {
+export function restingAt(
+  system: CompiledSystem,
+  t: number,
+  state: Float64Array,
+  size: number,
+): Float64Array | null {
   const n = system.dimension;
   const u = state.slice(0, n);
   const f = new Float64Array(n);
   const J = new Float64Array(n * n);
   const lu = new Float64Array(n * n);
   const pivots = new Int32Array(n);
-  let size = 0;
-  for (let i = 0; i < n; i += 1) size = Math.max(size, Math.abs(u[i]));
   const least = REST_DEFAULTS.floor * size;
   system.rhs(t, u, f);
   for (let i = 0; i < n; i += 1) if (system.nonnegative[i] && u[i] < least && f[i] <= 0) u[i] = 0;
@@ -43,19 +49,37 @@ export function restingAt(system: CompiledSystem, t: number, state: Float64Array
     for (let i = 0; i < n; i += 1) {
       u[i] -= f[i];
       length = Math.max(length, Math.abs(f[i]) / Math.max(Math.abs(u[i]), least));
-      if (!(Math.abs(u[i] - state[i]) <= REST_DEFAULTS.near * Math.max(Math.abs(u[i]), least))) return null;
+      if (
+        !(
+          Math.abs(u[i] - state[i]) <=
+          REST_DEFAULTS.near * Math.max(Math.abs(u[i]), REST_DEFAULTS.nearFloor * size)
+        )
+      )
+        return null;
     }
   }
   if (!(length <= REST_DEFAULTS.converged)) return null;
   if (u.some((x, i) => system.nonnegative[i] && x < -least * REST_DEFAULTS.near)) return null;
   system.jacobian(t, u, J);
-  return allNegative(J, n) ? u.map((x, i) => (system.nonnegative[i] ? Math.max(x, 0) : x)) : null;
+  const { leading, size: rate } = leadingOf(J, n);
+  if (!(leading < -REST_DEFAULTS.resolved * rate)) return null;
+  return u.map((x, i) => (system.nonnegative[i] ? Math.max(x, 0) : x));
 }
 
-function allNegative(J: Float64Array, n: number): boolean {
+/** Whether an eigenvalue of the Jacobian at a state has a positive real part. */
+export function repelsAt(system: CompiledSystem, t: number, state: Float64Array): boolean {
+  const n = system.dimension;
+  const J = new Float64Array(n * n);
+  system.jacobian(t, state, J);
+  const { leading, size } = leadingOf(J, n);
+  return leading > REST_DEFAULTS.resolved * size;
+}
+
+/** Largest real part of the eigenvalues, NaN where they could not be found, and the size of the matrix. */
+function leadingOf(J: Float64Array, n: number): { leading: number; size: number } {
   const re = new Float64Array(n);
-  const found = eigenvaluesInto(J, createEigenWorkspace(n), re, new Float64Array(n));
+  eigenvaluesInto(J, createEigenWorkspace(n), re, new Float64Array(n));
   let size = 0;
   for (const entry of J) size = Math.max(size, Math.abs(entry));
-  return found && re[0] < -REST_DEFAULTS.resolved * size;
+  return { leading: re[0], size };
 }
