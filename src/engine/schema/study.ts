@@ -1,6 +1,15 @@
 import { z } from './zod';
 
-import { commonTask, cyclesTaskSchema, lyapunovTaskSchema, pictureTaskSchema } from './analysis-tasks';
+import {
+  basinsTaskSchema,
+  commonTask,
+  cyclesTaskSchema,
+  extremesTaskSchema,
+  lyapunovTaskSchema,
+  mapTaskSchema,
+  pictureTaskSchema,
+  sectionTaskSchema,
+} from './analysis-tasks';
 import { LIMITS } from './limits';
 import { presetSchema } from './preset';
 
@@ -77,7 +86,11 @@ export const studySchema = z.strictObject({
         equilibriaTaskSchema,
         sweepTaskSchema,
         cyclesTaskSchema,
+        mapTaskSchema,
+        basinsTaskSchema,
         lyapunovTaskSchema,
+        sectionTaskSchema,
+        extremesTaskSchema,
         pictureTaskSchema,
       ]),
     )
