@@ -10,6 +10,8 @@ import type { PlotBand, PlotLine, PlotPoint, PlotSpec } from './plot-spec';
 /** Way between two markers on one line, in pixels across and a fifth of those up and down. */
 const MARKER_SPACING = 110;
 const UPRIGHT_WEIGHT = 0.2;
+/** Pixels that a name may reach beyond the right edge. */
+const RIGHT_ROOM = 14;
 
 function linePoints(line: PlotLine, layout: PlotLayout): Float64Array {
   const points = new Float64Array(line.x.length * 2);
@@ -206,7 +208,12 @@ export function plotFigure(spec: PlotSpec, layout: PlotLayout, palette: Palette)
       },
       ...axes.over,
       ...points.map((point) => pointMark(point, layout, palette)),
-      ...nameMarks(points, layout, palette, obstacles),
+      ...nameMarks(
+        points.map((point) => ({ ...point, x: layout.x(point.x), y: layout.y(point.y) })),
+        { x0: window.x, x1: window.x + window.width + RIGHT_ROOM, y0: 0, y1: window.y + window.height },
+        palette,
+        obstacles,
+      ),
     ],
   };
 }

@@ -5,6 +5,8 @@ import type { GlyphName } from './glyphs';
 export interface PlotLine {
   readonly id: string;
   readonly label: string;
+  /** What the legend calls it, where the label holds numbers that move. */
+  readonly name?: string;
   readonly colour: string;
   readonly width: number;
   readonly dash?: readonly number[];

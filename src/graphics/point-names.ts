@@ -1,14 +1,22 @@
 /** Names beside the marks of special points: off marks and other names always, off lines where there is room. */
 import type { TextMark } from './marks';
 import type { Palette } from './palette';
-import type { PlotLayout } from './plot-layout';
-import type { PlotPoint } from './plot-spec';
 
-interface Box {
+export interface Box {
   readonly x0: number;
   readonly y0: number;
   readonly x1: number;
   readonly y1: number;
+}
+
+/** A mark in pixels, and its name where it is to have one. */
+export interface NamedMark {
+  readonly x: number;
+  readonly y: number;
+  readonly size: number;
+  readonly label: string;
+  readonly named: boolean;
+  readonly twin: boolean;
 }
 
 /** Pixels x0, y0, x1, y1, … of a line; a step of 4 takes unconnected strokes. */
@@ -20,9 +28,9 @@ export interface NameObstacle {
 const SIZE = 12;
 const LETTER_WIDTH = 6.3;
 /** Way that a name may stand off its mark, beyond the nearest place. */
-const FARTHER = [0, 12, 24] as const;
+const FARTHER = [0, 12, 24, 36, 48] as const;
 /** What it costs a name to stand off by one step, in crossed lines. */
-const OFF = 0.6;
+const OFF = 0.35;
 const SIDES = [
   [1, -1],
   [-1, -1],
@@ -70,56 +78,61 @@ interface Place {
   readonly y: number;
   readonly anchor: TextMark['anchor'];
   readonly box: Box;
+  readonly off: number;
 }
 
-function places(point: PlotPoint, px: number, py: number): readonly (Place & { readonly off: number })[] {
-  const width = point.label.length * LETTER_WIDTH;
+/** Places about a mark, nearest first; one above or below is pushed into the window from its sides. */
+function places(mark: NamedMark, window: Box): readonly Place[] {
+  const width = mark.label.length * LETTER_WIDTH;
   return FARTHER.flatMap((farther, off) =>
-    SIDES.map(([sideX, sideY]) => {
-      const x = px + sideX * (point.size + 2 + farther);
-      const y = py + sideY * (point.size + 9 + (sideX === 0 ? farther : farther / 2));
+    SIDES.map(([sideX, sideY]): Place => {
+      const reach = mark.size + 2 + (sideY === 0 ? farther : farther / 3);
+      const middle = Math.min(window.x1 - width / 2, Math.max(window.x0 + width / 2, mark.x));
+      const x = sideX === 0 ? middle : mark.x + sideX * reach;
+      const y = mark.y + sideY * (mark.size + 9 + farther);
       const x0 = sideX > 0 ? x : sideX < 0 ? x - width : x - width / 2;
-      const anchor = sideX > 0 ? ('start' as const) : sideX < 0 ? ('end' as const) : ('middle' as const);
+      const anchor = sideX > 0 ? 'start' : sideX < 0 ? 'end' : 'middle';
       return { x, y, anchor, off, box: { x0, x1: x0 + width, y0: y - SIZE / 2, y1: y + SIZE / 2 } };
     }),
   );
 }
 
+/** @param window within which names must lie, in pixels */
 export function nameMarks(
-  points: readonly PlotPoint[],
-  layout: PlotLayout,
+  marks: readonly NamedMark[],
+  window: Box,
   palette: Palette,
   obstacles: readonly NameObstacle[] = [],
 ): readonly TextMark[] {
-  const taken: Box[] = points.map((point) => {
-    const x = layout.x(point.x);
-    const y = layout.y(point.y);
-    return { x0: x - point.size, y0: y - point.size, x1: x + point.size, y1: y + point.size };
-  });
-  const right = layout.left + layout.innerWidth + 14;
-  const bottom = layout.top + layout.innerHeight;
+  const taken: Box[] = marks.map(({ x, y, size }) => ({
+    x0: x - size,
+    y0: y - size,
+    x1: x + size,
+    y1: y + size,
+  }));
   const fits = ({ box }: Place) =>
-    box.x0 >= layout.left && box.x1 <= right && box.y0 >= 0 && box.y1 <= bottom;
-  const marks: TextMark[] = [];
-  for (const point of points.filter((one) => one.named)) {
+    box.x0 >= window.x0 && box.x1 <= window.x1 && box.y0 >= window.y0 && box.y1 <= window.y1;
+  const names: TextMark[] = [];
+  // The model's own names come first, so that the twin's stand aside.
+  const ordered = marks.filter((one) => one.named).sort((a, b) => Number(a.twin) - Number(b.twin));
+  for (const mark of ordered) {
     let best: Place | null = null;
     let least = Infinity;
-    for (const place of places(point, layout.x(point.x), layout.y(point.y))) {
-      if (place.off * OFF >= least || !fits(place) || taken.some((other) => overlap(place.box, other)))
-        continue;
+    for (const place of places(mark, window)) {
+      if (place.off * OFF >= least) break;
+      if (!fits(place) || taken.some((other) => overlap(place.box, other))) continue;
       const cost = place.off * OFF + crossings(place.box, obstacles);
       if (cost < least) [best, least] = [place, cost];
-      if (least === 0) break;
     }
     if (!best) continue;
     taken.push(best.box);
-    marks.push({
+    names.push({
       kind: 'text',
       x: best.x,
       y: best.y,
-      text: point.label,
+      text: mark.label,
       size: SIZE,
-      colour: point.twin ? palette.muted : palette.ink,
+      colour: mark.twin ? palette.muted : palette.ink,
       anchor: best.anchor,
       baseline: 'middle',
       family: 'text',
@@ -127,5 +140,5 @@ export function nameMarks(
       halo: palette.raised,
     });
   }
-  return marks;
+  return names;
 }

@@ -5,12 +5,17 @@ import type { PresetDocument, Quantity } from '@/engine/schema/preset';
 import { cyclesAt, presentOrbit } from '@/features/workbench/cycles/present-cycles';
 import { cycleRuns } from '@/features/workbench/cycles/cycle-runs';
 import { pictureTask } from '@/features/workbench/engine/picture-task';
-import { readParameterValues, readStarts } from '@/features/workbench/engine/parameter-values';
+import {
+  readParameterValues,
+  readStarts,
+  readTaskValues,
+} from '@/features/workbench/engine/parameter-values';
 import { specialPointRows } from '@/features/workbench/findings/special-point-rows';
 import { diagramSpec } from '@/features/workbench/panes/views/diagram-spec';
 import { createWorkbenchStore, type WorkbenchState } from '@/features/workbench/state/store';
 import { placeTicks } from '@/features/workbench/strip/strip-ticks';
 import { markedPoints } from '@/features/workbench/cycles/marked-points';
+import { juvenileAdultConsumer } from '@/presets/juvenile-adult-consumer';
 import { PALETTES } from '@/graphics/palette';
 import { createLocalEngine } from '@/workers/local-engine';
 
@@ -48,7 +53,11 @@ beforeAll(async () => {
     starts: readStarts(document),
     withTwin: true,
   };
-  const picture = await engine.analyse(1, pictureTask(request, document), () => undefined);
+  const picture = await engine.analyse(
+    1,
+    pictureTask(request, document, readTaskValues(document, report)),
+    () => undefined,
+  );
   const store = createWorkbenchStore(document, { kind: 'new' });
   store.getState().set({
     report,
@@ -70,6 +79,17 @@ function cycles() {
   if (!split) throw new Error('There are cycles.');
   return split;
 }
+
+describe('the task behind a sweep', () => {
+  it('holds no dial of a trait that does not spread, which a task would refuse', async () => {
+    const model = juvenileAdultConsumer;
+    const engine = createLocalEngine();
+    const values = readTaskValues(model, await engine.setModel(model));
+    expect(Object.keys(readParameterValues(model))).toContain('dial:g');
+    expect(Object.keys(values)).not.toContain('dial:g');
+    expect(values['K']).toBe(10);
+  });
+});
 
 describe('cycles at one value of the parameter', () => {
   it('meets a branch that turns back as often as it passes, with its stability', () => {

@@ -37,9 +37,9 @@ export function cycleEvidence(
     });
     return [
       ...(model.populations.length <= MOST_AMPLITUDES
-        ? [row(`amplitude of the cycle, ${name}`, (low, high) => high - low)]
+        ? [row(`cycle amplitude, ${name}`, (low, high) => high - low)]
         : []),
-      row(`lowest on the cycle, ${name}`, (low) => low),
+      row(`cycle lowest, ${name}`, (low) => low),
     ];
   });
   const last = rows.at(-1);

@@ -22,8 +22,8 @@ export interface PresentCycle {
   readonly trivialError: number;
 }
 
-/** Shares of a step within which a continued cycle counts as the one at the value. */
-const EXACT = 1e-9;
+/** Shares of a step within which a continued cycle is as good as the one at the value: its own accuracy. */
+const EXACT = 1e-6;
 
 /** Every cycle at a value of the parameter: a branch that turns back is met more than once. */
 export function cyclesAt(result: CyclesResult, value: number): readonly PresentCycle[] {

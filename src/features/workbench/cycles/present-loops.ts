@@ -11,6 +11,8 @@ import { cyclesAt, presentOrbit, type PresentCycle } from './present-cycles';
 export interface PresentLoop {
   readonly id: string;
   readonly label: string;
+  /** The label without its numbers, which change as the strip is dragged. */
+  readonly name: string;
   readonly isTwin: boolean;
   readonly cycle: PresentCycle;
   readonly stateSymbols: readonly string[];
@@ -42,11 +44,12 @@ function loopsOf(
     const branch = result.branches[cycle.branch];
     if (!branch) return [];
     const isTwin = side === 'twin';
-    const name = `${STABILITY[cycle.attracts] ?? 'undecided'} ${cycleNoun(result)}`;
+    const name = `${isTwin ? 'pooled twin, ' : ''}${STABILITY[cycle.attracts] ?? 'undecided'} ${cycleNoun(result)}`;
     return [
       {
         id: `cycle:${side}:${order}`,
-        label: `${isTwin ? 'pooled twin, ' : ''}${name}, period ${formatNumber(cycle.period, 3)}`,
+        name,
+        label: `${name}, period ${formatNumber(cycle.period, 3)}`,
         isTwin,
         cycle,
         stateSymbols: result.stateSymbols,

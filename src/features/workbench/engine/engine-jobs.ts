@@ -10,7 +10,7 @@ import type {
 
 import type { EngineActions, WorkbenchData, WorkbenchStore } from '../state/store';
 import { DRIVER_DEFAULTS, explain, sameValues } from './driver-defaults';
-import { readParameterValues, readStarts } from './parameter-values';
+import { readParameterValues, readStarts, readTaskValues } from './parameter-values';
 import { hasUnfollowedCycles, pictureTask } from './picture-task';
 
 /** Long runs: one at a time, with progress, cancel, and partial results that stay. */
@@ -126,17 +126,15 @@ export class EngineJobs {
   /** All branches of equilibria and the cycles from them, streamed as they come. */
   private async follow(name: string): Promise<PictureResult | null> {
     const request = this.request();
-    if (!request) return null;
+    const { document, shownReport } = this.store.getState();
+    if (!request || !shownReport) return null;
+    const task = pictureTask(request, document, readTaskValues(document, shownReport));
     let done: PictureResult | null = null;
     await this.run(`${name} over ${request.parameter}`, async (id) => {
-      const result = await this.engine.analyse(
-        id,
-        pictureTask(request, this.store.getState().document),
-        (progress) => {
-          this.progress(id, progress);
-          if (progress.partial) this.showPicture(id, request, progress.partial, false);
-        },
-      );
+      const result = await this.engine.analyse(id, task, (progress) => {
+        this.progress(id, progress);
+        if (progress.partial) this.showPicture(id, request, progress.partial, false);
+      });
       if (!this.showPicture(id, request, result, true)) return;
       done = result;
       if (result.status !== 'complete' || !hasUnfollowedCycles(result)) return;

@@ -1,6 +1,7 @@
 /** Reading and moving the numbers of a document by the keys that sliders, sweeps and the strip use. */
 import type { PresetDocument } from '@/engine/schema/preset';
 import { SPREAD_KEY, traitDialKey, traitEntrySymbol } from '@/engine/schema/symbols';
+import type { ModelReport } from '@/engine/system/contract';
 import type { ParameterValues } from '@/workers/protocol';
 
 export function readParameterValues(document: PresetDocument): ParameterValues {
@@ -11,6 +12,12 @@ export function readParameterValues(document: PresetDocument): ParameterValues {
     for (const entry of trait.entries) values[traitEntrySymbol(trait.symbol, entry.of)] = entry.value;
   }
   return values;
+}
+
+/** Those values that the model on show can be given: tasks refuse the dial of a trait that does not spread. */
+export function readTaskValues(document: PresetDocument, report: ModelReport): ParameterValues {
+  const known = new Set(report.parameters.map((one) => one.key));
+  return Object.fromEntries(Object.entries(readParameterValues(document)).filter(([key]) => known.has(key)));
 }
 
 export function readParameterValue(document: PresetDocument, key: string): number | null {

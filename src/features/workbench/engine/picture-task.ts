@@ -4,16 +4,21 @@ import type { SweepResult } from '@/engine/continuation/contract';
 import type { CyclesResult } from '@/engine/cycles/contract';
 import type { PictureTask } from '@/engine/schema/analysis-tasks';
 import type { PresetDocument } from '@/engine/schema/preset';
-import type { SweepRequest } from '@/workers/protocol';
+import type { ParameterValues, SweepRequest } from '@/workers/protocol';
 
-export function pictureTask(request: SweepRequest, document: PresetDocument): PictureTask {
+/** @param values those of the request that the model knows, see `readTaskValues` */
+export function pictureTask(
+  request: SweepRequest,
+  document: PresetDocument,
+  values: ParameterValues,
+): PictureTask {
   const symbols = document.populations.flatMap((one) => one.classes.map((member) => member.symbol));
   return {
     task: 'picture',
     parameter: request.parameter,
     from: request.from,
     to: request.to,
-    parameters: { ...request.values },
+    parameters: { ...values },
     starts: Object.fromEntries(symbols.map((symbol, k) => [symbol, request.starts[k] ?? 0])),
     twin: request.withTwin,
     branches: true,

@@ -76,11 +76,11 @@ function PresentCycleSection({
   const n = branch.dimension;
   return (
     <section className="grid gap-1.5 border-t pt-2 first:border-t-0 first:pt-0">
-      <p>
-        {side === 'twin' ? 'Pooled twin: ' : ''}
+      <p className="first-letter:uppercase">
+        {side === 'twin' ? 'Pooled twin, ' : ''}
         {forced ? 'repeats after' : 'period'} <span className="figures">{formatNumber(cycle.period, 4)}</span>{' '}
         {model.timeUnit}
-        <span className="text-muted">, {branchName(branch.origin)}</span>
+        {forced ? null : <span className="text-muted">, {branchName(branch.origin)}</span>}
       </p>
       <Extents cycle={cycle} fixedPoint={forced ? presentOrbit(branch, cycle).subarray(0, n) : null} />
       <div className="text-sm text-muted">
@@ -88,7 +88,7 @@ function PresentCycleSection({
       </div>
       <ul className="flex flex-wrap gap-1.5" aria-label="What is known of it">
         <Chip tone={TONES[cycle.attracts] ?? 'plain'}>{WORDS[cycle.attracts] ?? 'undecided'}</Chip>
-        {cycle.exact ? null : <Chip>between two that were followed</Chip>}
+        {cycle.exact ? null : <Chip>interpolated</Chip>}
       </ul>
     </section>
   );

@@ -35,12 +35,16 @@ function EvidenceTable({ evidence }: { readonly evidence: readonly VerdictEviden
         {evidence.map((one) => (
           <Fragment key={one.label}>
             <tr className="border-t align-baseline">
-              <th scope="row" className="pt-1 pr-1 text-left font-normal">
+              <th scope="row" className="pt-1 pr-1 text-left leading-tight font-normal">
                 {one.label}
-                {one.unit ? <span className="whitespace-nowrap text-muted"> ({one.unit})</span> : null}
+                {one.unit ? (
+                  <span className="block text-xs whitespace-nowrap text-muted">{one.unit}</span>
+                ) : null}
               </th>
-              <td className="figures pt-1 pl-2 text-right whitespace-nowrap">{cell(one.pooled)}</td>
-              <td className="figures pt-1 pl-1 text-right font-semibold whitespace-nowrap">
+              <td className="figures pt-1 pl-1 text-right text-[13px] whitespace-nowrap">
+                {cell(one.pooled)}
+              </td>
+              <td className="figures pt-1 pl-1 text-right text-[13px] font-semibold whitespace-nowrap">
                 <span aria-hidden className="font-normal text-muted">
                   →{' '}
                 </span>

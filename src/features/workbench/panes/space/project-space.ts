@@ -3,6 +3,7 @@ import { Vector3, type Camera } from 'three';
 import { axisLabel, axisTicks, createScale, type AxisScale } from '@/graphics/axis';
 import type { Figure, Mark, TextMark } from '@/graphics/marks';
 import type { Palette } from '@/graphics/palette';
+import { nameMarks, type NamedMark } from '@/graphics/point-names';
 
 import type { SpaceSpec } from './space-spec';
 
@@ -197,6 +198,7 @@ export function projectSpace(
     }
   }
   marks.push(...axisTexts(spec, cube, project, palette, size));
+  const names: NamedMark[] = [];
   for (const one of spec.points) {
     cube.toCube(...one.at, point);
     if (Math.max(Math.abs(point.x), Math.abs(point.y), Math.abs(point.z)) > 1.02) continue;
@@ -211,20 +213,9 @@ export function projectSpace(
       colour: one.colour,
       ground: palette.raised,
     });
-    if (one.named)
-      marks.push({
-        kind: 'text',
-        x: at.x + one.size + 3,
-        y: at.y - 9,
-        text: one.label,
-        size: 12,
-        colour: one.colour,
-        anchor: 'start',
-        baseline: 'middle',
-        family: 'text',
-        weight: 500,
-        halo: palette.raised,
-      });
+    names.push({ x: at.x, y: at.y, size: one.size, label: one.label, named: one.named, twin: one.twin });
   }
+  const window = { x0: 0, x1: size.width, y0: 0, y1: size.height };
+  marks.push(...nameMarks(names, window, palette));
   return { ...size, title: spec.title, description: spec.description, marks };
 }

@@ -3,7 +3,7 @@ import { classQuantity } from '@/graphics/quantities';
 
 import { listClassNames } from '../views/view-input';
 
-/** Axes of a space: as chosen, else the first three classes, or the parameter and two classes. */
+/** Axes of a space: as chosen, else the first three classes, or the parameter and classes of two populations. */
 export function spaceAxes(
   model: PresetDocument,
   view: 'space' | 'space-diagram',
@@ -11,7 +11,10 @@ export function spaceAxes(
   parameter: string | null,
 ): readonly [Quantity, Quantity, Quantity] | null {
   const classes = listClassNames(model);
-  if (classes.length < 2) return null;
+  const [first] = classes;
+  // Classes of one population often move as one; those of two open up a cycle.
+  const second = classes.find((one) => one.population !== first?.population) ?? classes[1];
+  if (!first || !second) return null;
   const symbols = classes.map((one) => one.symbol);
   const known = (quantity: Quantity | undefined) => {
     if (!quantity) return null;
@@ -24,10 +27,9 @@ export function spaceAxes(
   if (view === 'space')
     return [known(chosen[0]) ?? nth(0), known(chosen[1]) ?? nth(1), known(chosen[2]) ?? nth(2)];
   if (!parameter) return null;
-  const last = Math.max(0, symbols.length - 2);
   return [
     { quantity: 'parameter', of: parameter, logarithm: false },
-    known(chosen[0]) ?? nth(last),
-    known(chosen[1]) ?? nth(last + 1),
+    known(chosen[0]) ?? classQuantity(first.symbol),
+    known(chosen[1]) ?? classQuantity(second.symbol),
   ];
 }

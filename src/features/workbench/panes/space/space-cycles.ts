@@ -86,6 +86,7 @@ export function cycleRings(
         colour: isTwin ? palette.twin : state.selectedPoint?.id === point.id ? palette.accent : palette.ink,
         size: isTwin ? 6 : 7,
         named: point.feasible,
+        twin: isTwin,
       },
     ];
   });

@@ -4,6 +4,8 @@ import type { GlyphName } from '@/graphics/glyphs';
 export interface SpaceLine {
   readonly id: string;
   readonly label: string;
+  /** What the legend calls it, where the label holds numbers that move. */
+  readonly name?: string;
   readonly colour: string;
   readonly dashed: boolean;
   readonly opacity: number;
@@ -20,6 +22,7 @@ export interface SpacePoint {
   readonly colour: string;
   readonly size: number;
   readonly named: boolean;
+  readonly twin: boolean;
 }
 
 /** Reads a state as a place in the space. */

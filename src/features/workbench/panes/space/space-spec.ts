@@ -77,6 +77,7 @@ function equilibria(
       colour: twin ? input.palette.twin : input.palette.ink,
       size: twin ? 4.5 : 5.5,
       named: false,
+      twin,
     }));
 }
 
@@ -134,6 +135,7 @@ function loopLines(input: ViewInput, axes: Axes, parameter: number, colour: stri
       {
         id: loop.id,
         label: loop.label,
+        name: loop.name,
         colour: loop.isTwin ? palette.twin : colour,
         dashed: loop.cycle.attracts !== 1,
         opacity: 1,
@@ -183,6 +185,7 @@ function sweepParts(input: ViewInput, axes: Axes) {
         colour: isTwin ? palette.twin : state.selectedPoint?.id === point.id ? palette.accent : palette.ink,
         size: isTwin ? 6 : 7,
         named: point.feasible,
+        twin: isTwin,
       });
     const cycles = isTwin ? state.cycles?.twin : state.cycles?.split;
     if (cycles) {
@@ -260,7 +263,8 @@ export function spaceSpec(view: 'space' | 'space-diagram', input: ViewInput): Sp
   const { lines, points } = view === 'space' ? phaseParts(input, axes) : sweepParts(input, axes);
   const named = axesOf(input, axes, lines, points);
   const own = lines.find((line) => !line.twin);
-  const loops = lines.filter((line) => line.id.startsWith('cycle:'));
+  // The twin is grey whatever it does, and has its one entry.
+  const loops = lines.filter((line) => line.id.startsWith('cycle:') && !line.twin);
   const legend: LegendItem[] = own
     ? [
         {
@@ -278,7 +282,7 @@ export function spaceSpec(view: 'space' | 'space-diagram', input: ViewInput): Sp
   if (view === 'space')
     legend.push(
       ...loops.map((line): LegendItem => ({
-        label: line.label,
+        label: line.name ?? line.label,
         colour: line.colour,
         marker: null,
         line: line.dashed ? 'dashed' : 'solid',

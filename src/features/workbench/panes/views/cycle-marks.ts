@@ -16,6 +16,10 @@ export interface CycleSource {
 }
 
 const NOT_FEASIBLE = 0.3;
+/** The twin's ground is the faintest, so that it leaves the hue of the model. */
+const TWIN_GROUND = 0.05;
+const GROUND = 0.2;
+const REPELLING_GROUND = 0.08;
 
 function labelOf({ result, isTwin }: CycleSource, shown: Shown, run: CycleRun): string {
   const origin = result.branches[run.branch]?.origin;
@@ -43,7 +47,7 @@ export function cycleBands(input: ViewInput, source: CycleSource, shown: Shown):
       x: run.parameters,
       low: run.low,
       high: run.high,
-      opacity: (source.isTwin ? 0.14 : run.attracts === 1 ? 0.2 : 0.1) * faint,
+      opacity: (source.isTwin ? TWIN_GROUND : run.attracts === 1 ? GROUND : REPELLING_GROUND) * faint,
       edge: { width, opacity: faint },
       ...(dash ? { dash } : {}),
       twin: source.isTwin,

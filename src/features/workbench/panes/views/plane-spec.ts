@@ -119,6 +119,7 @@ function cycleLoops(
       {
         id: loop.id,
         label: loop.label,
+        name: loop.name,
         colour: loop.isTwin ? palette.twin : (palette.hues[last?.hue ?? 'slate'][2] ?? palette.ink),
         ...runStyle(loop.cycle.attracts, loop.isTwin),
         marker: null,
@@ -203,7 +204,7 @@ export function planeSpec(input: ViewInput): PlotSpec {
   const sliced =
     plane && plane.x === x.of && plane.y === y.of && x.quantity === 'class' && y.quantity === 'class';
   const legend: LegendItem[] = lines.map((line) => ({
-    label: line.label,
+    label: line.name ?? line.label,
     colour: line.colour,
     marker: line.marker,
     line: line.dash ? 'dashed' : line.twin ? 'thin' : 'solid',
