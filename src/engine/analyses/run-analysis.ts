@@ -1,8 +1,9 @@
 import type { Progress } from '../continuation/contract';
 import type { AnalysisName, AnalysisTask } from '../schema/analysis-tasks';
 import type { CompiledModel } from '../system/compile-model';
-import type { AnalysisOptions, AnalysisResultOf } from './contract';
+import type { AnalysisOptions, AnalysisResultOf, AnalysisResults } from './contract';
 import { runBasins } from './basins';
+import { runBoundaries } from './boundaries';
 import { runCycles } from './cycles';
 import { runExtremes } from './extremes';
 import { runLyapunov } from './lyapunov';
@@ -10,19 +11,20 @@ import { runMap } from './map';
 import { runPicture } from './picture';
 import { runSection } from './section';
 
-type RunTask<Task extends AnalysisTask> = (
-  model: CompiledModel,
-  task: Task,
-  options: AnalysisOptions,
-) => Generator<Progress<AnalysisResultOf<Task>>, AnalysisResultOf<Task>>;
+type TaskNamed = { readonly [Name in AnalysisName]: Extract<AnalysisTask, { readonly task: Name }> };
 
 type Runs = {
-  readonly [Name in AnalysisName]: RunTask<Extract<AnalysisTask, { readonly task: Name }>>;
+  readonly [Name in AnalysisName]: (
+    model: CompiledModel,
+    task: TaskNamed[Name],
+    options: AnalysisOptions,
+  ) => Generator<Progress<AnalysisResults[Name]>, AnalysisResults[Name]>;
 };
 
 /** What each task is carried out by. */
-const RUNS: Partial<Runs> = {
+const RUNS: Runs = {
   basins: runBasins,
+  boundaries: runBoundaries,
   cycles: runCycles,
   extremes: runExtremes,
   lyapunov: runLyapunov,
@@ -39,10 +41,12 @@ const RUNS: Partial<Runs> = {
 export function runAnalysis<Task extends AnalysisTask>(
   model: CompiledModel,
   task: Task,
+  options?: AnalysisOptions,
+): Generator<Progress<AnalysisResultOf<Task>>, AnalysisResultOf<Task>>;
+export function runAnalysis<Name extends AnalysisName>(
+  model: CompiledModel,
+  task: TaskNamed[Name],
   options: AnalysisOptions = {},
-): ReturnType<RunTask<Task>> {
-  // The table has for each name what carries out the task of that name; the compiler cannot see it through Task.
-  const run = RUNS[task.task] as RunTask<Task> | undefined;
-  if (!run) throw new Error(`There is no task called ${task.task}.`);
-  return run(model, task, options);
+): Generator<Progress<AnalysisResults[Name]>, AnalysisResults[Name]> {
+  return RUNS[task.task as Name](model, task, options);
 }

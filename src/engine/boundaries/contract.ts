@@ -4,6 +4,8 @@ import type { Eigenvalue } from '../equilibria/contract';
 
 export type BoundaryKind = 'fold' | 'Hopf' | 'transcritical' | 'pitchfork';
 
+export type BoundaryEnd = BranchEnd | 'ended at a Bogdanov-Takens point' | 'does not persist';
+
 export type BoundaryPointKind = 'cusp' | 'Bogdanov-Takens' | 'generalised Hopf' | 'fold-Hopf' | 'double Hopf';
 
 /** A special point of a sweep, from which a curve is traced. */
@@ -51,8 +53,8 @@ export interface BoundaryCurve {
   /** Unit normal (in scaled parameters) pointing to the side where the equilibrium attracts, 2 a point; NaN where neither side does. */
   readonly stableSide: Float64Array;
   readonly start: BoundaryStart;
-  readonly startEnd: { readonly reason: BranchEnd; readonly message: string };
-  readonly endEnd: { readonly reason: BranchEnd; readonly message: string };
+  readonly startEnd: { readonly reason: BoundaryEnd; readonly message: string };
+  readonly endEnd: { readonly reason: BoundaryEnd; readonly message: string };
 }
 
 export interface BoundariesResult {
