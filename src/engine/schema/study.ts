@@ -1,15 +1,6 @@
 import { z } from './zod';
 
-import {
-  basinsTaskSchema,
-  commonTask,
-  cyclesTaskSchema,
-  extremesTaskSchema,
-  lyapunovTaskSchema,
-  mapTaskSchema,
-  pictureTaskSchema,
-  sectionTaskSchema,
-} from './analysis-tasks';
+import { ANALYSIS_TASK_SCHEMAS, commonTask } from './analysis-tasks';
 import { LIMITS } from './limits';
 import { presetSchema } from './preset';
 
@@ -85,13 +76,7 @@ export const studySchema = z.strictObject({
         trajectoryTaskSchema,
         equilibriaTaskSchema,
         sweepTaskSchema,
-        cyclesTaskSchema,
-        mapTaskSchema,
-        basinsTaskSchema,
-        lyapunovTaskSchema,
-        sectionTaskSchema,
-        extremesTaskSchema,
-        pictureTaskSchema,
+        ...ANALYSIS_TASK_SCHEMAS,
       ]),
     )
     .min(1, 'A study needs at least one task.')
