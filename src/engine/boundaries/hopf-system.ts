@@ -42,9 +42,11 @@ export class HopfSystem implements DefiningSystem {
     if (!loadPoint(this, x, this.buffer)) return null;
     scaledBlock(this.scope, this.active, this.A);
     const plane = omega > 0 ? complexEigenvector(this.A, m, 0, omega) : nullspace2(this.A, m);
-    x.set(unit(plane.re), m);
+    // A vector between the two: the null vector alone would solve these equations all along the fold as well.
+    const v = unit(sum(unit(plane.re), unit(plane.im)));
+    x.set(v, m);
     x[2 * m] = (omega / this.rate) ** 2;
-    this.setPlane(unit(plane.re), plane.im);
+    this.setPlane(v, plane.re);
     return x;
   }
 
@@ -105,6 +107,10 @@ function dot(a: Float64Array, b: Float64Array): number {
   let sum = 0;
   for (let k = 0; k < a.length; k += 1) sum += a[k] * b[k];
   return sum;
+}
+
+function sum(a: Float64Array, b: Float64Array): Float64Array {
+  return a.map((value, k) => value + b[k]);
 }
 
 function unit(v: Float64Array): Float64Array {
