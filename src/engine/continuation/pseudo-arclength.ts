@@ -79,7 +79,9 @@ export function* followBranch(
     }
 
     const index = followed.points.length - 1;
-    const zero = crossingOfZero(monitor, current, next, h, index);
+    const reached = crossingOfZero(monitor, current, next, h, index);
+    // Past the end of the range it is none of this sweep's.
+    const zero = reached && within(reached, settings) ? reached : null;
     const limit = zero?.located.point ?? next;
     const found = crossingsBetween(monitor, current, limit, index);
     // Where a population vanishes the determinant does too; several at once leave it to rounding.

@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest';
 
 import { sweep } from '@/engine/continuation/sweep';
 
-import { textbook } from '../../support/equations';
+import { finish, textbook } from '../../support/equations';
 import { pointsOf, runSweep } from './run-sweep';
 
 describe('what is no Hopf point', () => {
@@ -148,5 +148,23 @@ describe('what is withheld or refused', () => {
     expect(seen.value.partial?.status).toBe('cancelled');
     expect(seen.value.partial?.branches[0].parameters.length).toBeGreaterThan(10);
     expect(seen.value.fraction).toBeLessThan(1);
+  });
+});
+
+describe('the ends of the range', () => {
+  it('hold what lies within alone: a population that reaches zero just outside is no special point', () => {
+    const system = textbook(["x' = x*(1 - x/K)", "y' = -y"], { K: 2 });
+    const result = finish(
+      sweep(system, system.defaults, {
+        parameterIndex: 0,
+        from: 0.1,
+        to: 10,
+        starts: [Float64Array.of(1, 0)],
+        bands: false,
+      }),
+    );
+    expect(result.specialPoints).toHaveLength(0);
+    for (const branch of result.branches)
+      expect(Math.min(...branch.parameters)).toBeGreaterThanOrEqual(0.1 - 1e-12);
   });
 });
