@@ -62,7 +62,7 @@ export function* recordSection(
   for (let part = 1; part <= SECTION_DEFAULTS.parts && status === 'complete' && !recorder.full; part += 1)
     status = yield* advance(begin + (maximumTime * part) / SECTION_DEFAULTS.parts, [recorder]);
   const counted = recorder.times.length === 1 ? '1 crossing' : `${recorder.times.length} crossings`;
-  if (recorder.full) return recorder.result(system, 'event', `Recorded ${counted}.`);
+  if (recorder.full) return recorder.result(system, 'complete', `Recorded ${counted}.`);
   const few = `Recorded ${counted} of ${crossings}.`;
   if (status === 'complete')
     return recorder.result(

@@ -37,7 +37,7 @@ describe('a section', () => {
     ['both', [Math.PI / 3, (2 * Math.PI) / 3]],
   ] as const)('has the exact times of a linear oscillator, %s', (direction, firsts) => {
     const found = section(oscillator, [-1, 0], 'x', { value: 0.5, direction });
-    expect(found.status).toBe('event');
+    expect(found.status).toBe('complete');
     expect(found.times).toHaveLength(10);
     found.times.forEach((t, k) => {
       const turn = Math.floor(k / firsts.length);
