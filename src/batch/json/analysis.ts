@@ -1,4 +1,4 @@
-import type { AnalysisResultOf, SplitAnd } from '@/engine/analyses/contract';
+import type { AnalysisResultOf, AnalysisResults, SplitAnd } from '@/engine/analyses/contract';
 import type { AnalysisName, AnalysisTask } from '@/engine/schema/analysis-tasks';
 import type { CompiledModel } from '@/engine/system/compile-model';
 
@@ -12,14 +12,14 @@ import { sectionJson } from './section';
 import type { Json, JsonRecord } from './shared';
 import { overall } from './status';
 
-type WriteTask<Task extends AnalysisTask> = (
-  result: AnalysisResultOf<Task>,
-  task: Task,
-  model: CompiledModel,
-) => JsonRecord;
+type TaskNamed = { readonly [Name in AnalysisName]: Extract<AnalysisTask, { readonly task: Name }> };
 
 type Writers = {
-  readonly [Name in AnalysisName]: WriteTask<Extract<AnalysisTask, { readonly task: Name }>>;
+  readonly [Name in AnalysisName]: (
+    result: AnalysisResults[Name],
+    task: TaskNamed[Name],
+    model: CompiledModel,
+  ) => JsonRecord;
 };
 
 /** How the result of each task is written. */
@@ -51,10 +51,13 @@ export function analysisJson<Task extends AnalysisTask>(
   model: CompiledModel,
   task: Task,
   result: AnalysisResultOf<Task>,
+): JsonRecord;
+export function analysisJson<Name extends AnalysisName>(
+  model: CompiledModel,
+  task: TaskNamed[Name],
+  result: AnalysisResults[Name],
 ): JsonRecord {
-  // The table has for each name what writes the result of that name; the compiler cannot see it through Task.
-  const write = WRITERS[task.task] as WriteTask<Task>;
-  return write(result, task, model);
+  return WRITERS[task.task as Name](result, task, model);
 }
 
 function rangeJson({ parameter, from, to }: { parameter: string; from: number; to: number }): JsonRecord {
