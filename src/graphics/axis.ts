@@ -37,15 +37,24 @@ export interface Tick {
   readonly label: string;
 }
 
+/** Powers of ten within a range whose exponents are multiples of `every`. */
+function powersOfTen(from: number, to: number, every: number): readonly number[] {
+  const first = Math.ceil(Math.log10(from) / every - 1e-9);
+  const last = Math.floor(Math.log10(to) / every + 1e-9);
+  return Array.from({ length: Math.max(0, last - first + 1) }, (_value, k) =>
+    Number(`1e${(first + k) * every}`),
+  );
+}
+
 /** About `count` round values; on a logarithmic axis whole powers of ten where there are enough. */
 export function axisTicks(axis: AxisSpec, count: number): readonly Tick[] {
   const [from, to] = axis.domain;
   if (axis.logarithm && from > 0 && to > 0) {
     const decades = Math.log10(to / from);
-    const all = scaleLog([from, to], [0, 1]).ticks(Math.max(2, count));
-    const powers = all.filter((value) => Math.abs(Math.log10(value) - Math.round(Math.log10(value))) < 1e-9);
-    const every = Math.max(1, Math.ceil(decades / Math.max(2, count)));
-    const kept = decades >= 2 ? powers.filter((value) => Math.round(Math.log10(value)) % every === 0) : all;
+    const kept =
+      decades >= 2
+        ? powersOfTen(from, to, Math.max(1, Math.ceil(decades / Math.max(2, count))))
+        : scaleLog([from, to], [0, 1]).ticks(Math.max(2, count));
     return kept.map((value) => ({ value, label: formatShort(value, 3) }));
   }
   const values = scaleLinear([from, to], [0, 1]).ticks(Math.max(2, count));

@@ -130,7 +130,10 @@ export function parameterName(context: QuantityContext, key: string): { name: st
     return { name: `spread of ${trait?.name || key.slice(5)}`, unit: '' };
   }
   const parameter = context.parameters.find((one) => one.symbol === key);
-  if (parameter) return { name: parameter.name ? `${parameter.name}, ${key}` : key, unit: parameter.unit };
+  if (parameter) {
+    const { name, unit } = parameter;
+    return { name: name && name !== key ? `${name}, ${key}` : key, unit };
+  }
   for (const trait of context.traits) {
     const entry = trait.entries.find((one) => [trait.symbol, ...one.of].join('_') === key);
     if (!entry) continue;

@@ -52,6 +52,12 @@ function between(branch: CycleBranch, index: number, k: number, share: number): 
       const a = values[k * width + i] ?? NaN;
       return share === 0 ? a : a + share * ((values[(k + 1) * width + i] ?? NaN) - a);
     });
+  // Lowest densities fall by decades along a branch: between two positive ones their logarithms are mixed.
+  const low = mix(branch.lowest, m).map((value, i) => {
+    const a = branch.lowest[k * m + i] ?? NaN;
+    const b = branch.lowest[(share === 0 ? k : k + 1) * m + i] ?? NaN;
+    return a > 0 && b > 0 ? a * (b / a) ** share : value;
+  });
   const near = share < 0.5 ? k : k + 1;
   const sides = [branch.attracts[k], branch.attracts[share === 0 ? k : k + 1]];
   return {
@@ -64,7 +70,7 @@ function between(branch: CycleBranch, index: number, k: number, share: number): 
       branch.attracts[near] === 2 ? (sides.find((one) => one !== 2) ?? 2) : (branch.attracts[near] ?? 2),
     feasible: branch.feasible[near] === 1,
     quantities: branch.quantities,
-    lowest: mix(branch.lowest, m),
+    lowest: low,
     highest: mix(branch.highest, m),
     mean: mix(branch.mean, m),
     multipliers: multipliersAt(branch, near),

@@ -2,7 +2,7 @@ import { Button } from '@/components/ui/button';
 import { Dialog } from '@/components/ui/dialog';
 import type { PictureRow } from '@/engine/analyses/contract';
 import { CAUTION } from '@/engine/system/contract';
-import { formatNumber } from '@/graphics/numbers';
+import { formatShort } from '@/graphics/numbers';
 import { tablesToCsv } from '@/graphics/plot-table';
 import { parameterName } from '@/graphics/quantities';
 
@@ -14,10 +14,10 @@ import { fileNameOf, saveFile } from './save-file';
 
 const where = ({ parameter, extent }: PictureRow) =>
   extent
-    ? `${formatNumber(extent[0], 4)} to ${formatNumber(extent[1], 4)}`
+    ? `${formatShort(extent[0], 4)} to ${formatShort(extent[1], 4)}`
     : parameter === null
       ? ''
-      : formatNumber(parameter, 5);
+      : formatShort(parameter, 5);
 
 function SummaryTable({
   rows,

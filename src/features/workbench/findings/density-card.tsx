@@ -21,6 +21,11 @@ function useLowDensities(threshold: number | null): readonly LowDensity[] {
     if (threshold === null || !result) return [];
     const symbols = listClassNames(model).map((one) => one.symbol);
     const pooled = result.twinStateSymbols;
+    const densities = new Set(
+      model.populations
+        .filter((one) => one.sign === 'nonnegative')
+        .flatMap((one) => [one.symbol, ...one.classes.map((member) => member.symbol)]),
+    );
     return [
       ...lowInTrajectory(result.trajectory, symbols, 'split', threshold),
       ...lowOnCycles(split, symbols, 'split', threshold),
@@ -28,7 +33,7 @@ function useLowDensities(threshold: number | null): readonly LowDensity[] {
         ? lowInTrajectory(result.twinTrajectory, pooled, 'twin', threshold)
         : []),
       ...(withTwin ? lowOnCycles(twin, pooled, 'twin', threshold) : []),
-    ];
+    ].filter((low) => densities.has(low.symbol));
   }, [model, result, withTwin, split, twin, threshold]);
 }
 
@@ -55,11 +60,13 @@ export function DensityCard() {
   const own = useWorkbench((state) => state.document.lowDensity);
   const individuals = useWorkbench((state) => state.document.individualsPerUnit);
   const unit = useWorkbench((state) => state.document.densityUnit);
+  const anyDensity = useShownModel().populations.some((one) => one.sign === 'nonnegative');
   const threshold = warningThreshold({ lowDensity: own, individualsPerUnit: individuals });
   const found = useLowDensities(threshold);
   const change = (lowDensity: number | null) =>
     store.getState().edit('Density to warn below', (document) => ({ ...document, lowDensity }));
   const single = own === null && individuals !== null;
+  if (!anyDensity) return null;
   return (
     <Card title="Low densities">
       <div role="status">

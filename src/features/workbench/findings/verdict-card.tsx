@@ -1,4 +1,4 @@
-import { Fragment, useMemo } from 'react';
+import { useMemo } from 'react';
 
 import type { Verdict, VerdictEvidence } from '@/engine/verdict/contract';
 import { formatNumber } from '@/graphics/numbers';
@@ -31,36 +31,33 @@ function EvidenceTable({ evidence }: { readonly evidence: readonly VerdictEviden
           </th>
         </tr>
       </thead>
-      <tbody>
-        {evidence.map((one) => (
-          <Fragment key={one.label}>
-            <tr className="border-t align-baseline">
-              <th scope="row" className="pt-1 pr-1 text-left leading-tight font-normal">
-                {one.label}
-                {one.unit ? (
-                  <span className="block text-xs whitespace-nowrap text-muted">{one.unit}</span>
-                ) : null}
-              </th>
-              <td className="figures pt-1 pl-1 text-right text-[13px] whitespace-nowrap">
-                {cell(one.pooled)}
-              </td>
-              <td className="figures pt-1 pl-1 text-right text-[13px] font-semibold whitespace-nowrap">
-                <span aria-hidden className="font-normal text-muted">
-                  →{' '}
-                </span>
-                {cell(one.split)}
+      {evidence.map((one) => (
+        <tbody key={one.label} className="border-t">
+          <tr>
+            <th scope="rowgroup" colSpan={3} className="pt-1 text-left leading-tight font-normal">
+              {one.label}
+              {one.unit ? <span className="whitespace-nowrap text-muted"> ({one.unit})</span> : null}
+            </th>
+          </tr>
+          <tr>
+            <td />
+            <td className="figures pb-0.5 text-right text-[13px] whitespace-nowrap">{cell(one.pooled)}</td>
+            <td className="figures pb-0.5 pl-1 text-right text-[13px] font-semibold whitespace-nowrap">
+              <span aria-hidden className="font-normal text-muted">
+                →{' '}
+              </span>
+              {cell(one.split)}
+            </td>
+          </tr>
+          {one.note ? (
+            <tr>
+              <td colSpan={3} className="pb-1 text-xs text-muted">
+                {one.note}
               </td>
             </tr>
-            {one.note ? (
-              <tr>
-                <td colSpan={3} className="pb-1 text-xs text-muted">
-                  {one.note}
-                </td>
-              </tr>
-            ) : null}
-          </Fragment>
-        ))}
-      </tbody>
+          ) : null}
+        </tbody>
+      ))}
     </table>
   );
 }
