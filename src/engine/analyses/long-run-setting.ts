@@ -7,8 +7,8 @@ import type { Side } from './split-and-twin';
  * model is seen; and the smallest density where the document does not say how many individuals a unit holds.
  */
 export const LONG_RUN_SETTING = {
-  transient: 10,
-  observed: 10,
+  transient: 5,
+  observed: 5,
   /** Averaging of Lyapunov exponents. */
   averaged: 40,
   /** The longest run of a section in which crossings are waited for. */

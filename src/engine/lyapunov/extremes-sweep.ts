@@ -167,10 +167,13 @@ function inWords(
   const parts = [`Followed the long run at ${count} values.`];
   if (hysteresis.length > 0)
     parts.push(
-      `Upward and downward differ from ${hysteresis.map(({ from, to }) => `${shown(from)} to ${shown(to)}`).join(', and from ')}: more than one attractor there.`,
+      `Upward and downward differ from ${hysteresis.map(({ from, to }) => `${shown(from)} to ${shown(to)}`).join(', and from ')}: there the long run depends on where it comes from.`,
     );
   else if (sweeps.length > 1) parts.push('Upward and downward agree.');
-  if (open > 0) parts.push(`At ${open} values the range had not settled in the time observed.`);
+  if (open > 0)
+    parts.push(
+      `At ${open === 1 ? 'one value' : `${open} values`} the range had not settled in the time observed.`,
+    );
   if (floor > 0)
     parts.push(
       `Densities below ${shown(floor)} were lifted to it at each new value, so that what can invade comes back.`,

@@ -76,13 +76,13 @@ function readFree(zeros: number, { moves, all, exponents }: ExponentEvidence): s
 
 /**
  * Dimension of Kaplan and Yorke: k + (l_1 + ... + l_k) / |l_(k+1)|, k the most leading exponents whose sum is
- * not negative. Exponents read as zero count as zero. Null where the exponents given do not reach so far,
- * as where volumes grow. Source: Kaplan & Yorke, Lecture Notes in Mathematics 730 (1979) 204 (from memory).
+ * not negative. Exponents read as zero count as zero. Null where one of them is
+ * not known well enough, and where those given do not reach so far, as where volumes grow. Source: Kaplan & Yorke, Lecture Notes in Mathematics 730 (1979) 204 (from memory).
  */
 export function kaplanYorkeDimension(exponents: ArrayLike<number>, signs: readonly Sign[]): number | null {
   let sum = 0;
   for (let k = 0; k < exponents.length; k += 1) {
-    if (Number.isNaN(exponents[k])) return null;
+    if (Number.isNaN(exponents[k]) || signs[k] === 'open') return null;
     const value = signs[k] === 'zero' ? 0 : exponents[k];
     if (sum + value < 0) return k + sum / -value;
     sum += value;

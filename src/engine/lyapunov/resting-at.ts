@@ -68,11 +68,24 @@ export function restingAt(
 
 /** Whether an eigenvalue of the Jacobian at a state has a positive real part. */
 export function repelsAt(system: CompiledSystem, t: number, state: Float64Array): boolean {
+  const { leading, size } = leadingAt(system, t, state);
+  return leading > REST_DEFAULTS.resolved * size;
+}
+
+/** Largest real part of the eigenvalues of the Jacobian at a state; NaN where they cannot be found. */
+export function leadingRate(system: CompiledSystem, t: number, state: Float64Array): number {
+  return leadingAt(system, t, state).leading;
+}
+
+function leadingAt(
+  system: CompiledSystem,
+  t: number,
+  state: Float64Array,
+): { leading: number; size: number } {
   const n = system.dimension;
   const J = new Float64Array(n * n);
   system.jacobian(t, state, J);
-  const { leading, size } = leadingOf(J, n);
-  return leading > REST_DEFAULTS.resolved * size;
+  return leadingOf(J, n);
 }
 
 /** Largest real part of the eigenvalues, NaN where they could not be found, and the size of the matrix. */

@@ -1,14 +1,11 @@
 import type { Progress } from '../continuation/contract';
-import { createEigenWorkspace, eigenvaluesInto } from '../linalg/eigenvalues';
 import { lyapunovSpectrum } from '../lyapunov/lyapunov-spectrum';
-import { ScaledWalk } from '../lyapunov/scaled-walk';
 import type { CompiledSystem } from '../system/contract';
 import { ClassList } from './attractor-class';
 import type { MapAxis, MapResult } from './contract';
 import { fillSheet } from './fill-sheet';
 import { ATTRACTOR_DEFAULTS, findAttractor, type Attractor, type AttractorRequest } from './find-attractor';
 import { axisValues, MapSheet } from './map-sheet';
-import { restingAt } from '../lyapunov/resting-at';
 
 export interface AttractorMapRequest extends AttractorRequest {
   readonly quantity: 'attractor' | 'lowest' | 'exponent';
@@ -42,12 +39,8 @@ export function* attractorMap(
     p[request.columns[0]] = xs[ix];
     p[request.columns[1]] = ys[iy];
     system.setParameters(p);
-    if (request.quantity === 'exponent') {
-      const exponent = yield* largestExponent(system, request);
-      if (Number.isNaN(exponent)) undecided += 1;
-      return exponent;
-    }
     const found = yield* findAttractor(system, request.starts, request);
+    if (request.quantity === 'exponent') return yield* largestExponent(system, found, request);
     if (found.class.kind === 'undecided') undecided += 1;
     return request.quantity === 'attractor' ? kinds.indexOf(found.class) : lowestDensity(system, found);
   }
@@ -84,17 +77,16 @@ function lowestDensity(system: CompiledSystem, found: Attractor): number {
   return lowest;
 }
 
-/** Leading eigenvalue where the solution rests, else the mean growth over the time observed; NaN where it cannot be followed. */
-function* largestExponent(system: CompiledSystem, request: AttractorMapRequest): Generator<void, number> {
-  const walk = new ScaledWalk(system, request.starts, { ...ATTRACTOR_DEFAULTS, ...request });
-  const { parts } = ATTRACTOR_DEFAULTS;
-  for (let k = 1; k <= parts; k += 1) {
-    if ((yield* walk.to((request.transient * k) / parts)) !== 'complete') return Number.NaN;
-    const rest = system.autonomous ? restingAt(system, walk.time, walk.state, walk.size) : null;
-    if (rest) return leadingRate(system, rest);
-  }
-  const run = lyapunovSpectrum(system, walk.state, {
-    startTime: walk.time,
+/** What the attractor is known to have, else the mean growth over the time observed; NaN where it cannot be followed. */
+function* largestExponent(
+  system: CompiledSystem,
+  found: Attractor,
+  request: AttractorMapRequest,
+): Generator<void, number> {
+  if (found.exponent !== null) return found.exponent;
+  if (found.class.kind === 'unbounded') return Number.NaN;
+  const run = lyapunovSpectrum(system, found.state, {
+    startTime: found.time,
     transient: 0.1 * request.observed,
     horizon: request.observed,
     count: 1,
@@ -106,13 +98,4 @@ function* largestExponent(system: CompiledSystem, request: AttractorMapRequest):
     step = run.next();
   }
   return step.value.status === 'complete' ? step.value.exponents[0] : Number.NaN;
-}
-
-function leadingRate(system: CompiledSystem, rest: Float64Array): number {
-  const n = system.dimension;
-  const J = new Float64Array(n * n);
-  const re = new Float64Array(n);
-  system.jacobian(0, rest, J);
-  eigenvaluesInto(J, createEigenWorkspace(n), re, new Float64Array(n));
-  return re[0];
 }

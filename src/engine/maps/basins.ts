@@ -44,9 +44,11 @@ export function* basinsOfAttraction(
   yield* fillSheet(sheet, solve, 'Looking where solutions settle', () => found.classes());
   const count = found.classes().filter(({ kind }) => kind !== 'undecided' && kind !== 'unbounded').length;
   const message =
-    count === 1
-      ? 'One attractor takes every start that was decided.'
-      : `${count} attractors share the starts; the colour of a cell tells which one its centre goes to.`;
+    count === 0
+      ? 'No start was decided: a longer time observed may tell where they settle.'
+      : count === 1
+        ? 'One attractor takes every start that was decided.'
+        : `${count} attractors share the starts; the colour of a cell tells which one its centre goes to.`;
   return sheet.result('complete', message, found.classes());
 }
 

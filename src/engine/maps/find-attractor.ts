@@ -5,8 +5,9 @@ import { ScaledWalk, type StepObserver, type WalkStatus } from '../lyapunov/scal
 import { TurningPoints } from '../lyapunov/turning-points';
 import type { CompiledSystem } from '../system/contract';
 import { attractorClass, type LongRunKind } from './attractor-class';
+import { attractsNeighbours } from './attracts';
 import type { AttractorClass } from './contract';
-import { repelsAt, restingAt } from '../lyapunov/resting-at';
+import { leadingRate, repelsAt, restingAt } from '../lyapunov/resting-at';
 import { Returns, type Closure, type ReturnRule } from './returns';
 
 export interface AttractorRequest {
@@ -26,8 +27,11 @@ export interface Attractor {
   readonly lowest: Float64Array;
   readonly highest: Float64Array;
   readonly period: number | null;
-  /** State at the end. */
+  /** Largest Lyapunov exponent where it is known: leading eigenvalue at rest, 0 on a cycle; null where it was not worked out. */
+  readonly exponent: number | null;
+  /** State at the end, and when that is. */
   readonly state: Float64Array;
+  readonly time: number;
 }
 
 export const ATTRACTOR_DEFAULTS = {
@@ -37,6 +41,10 @@ export const ATTRACTOR_DEFAULTS = {
   parts: 24,
   /** Parts after which the section is laid anew, through the range seen last. */
   freshReturns: [1, 2, 4, 8, 12] as readonly number[],
+  /** Share of the time observed in which displacements turn to their directions before they are averaged. */
+  turning: 0.3,
+  /** Returns this near to an earlier one, as a share of the range, are no sign of a torus. */
+  nearlyClosed: 0.02,
   /** Ranges below this, of logarithms or relative to the state, are none. */
   flat: 1e-6,
 } as const;
@@ -60,6 +68,13 @@ export function* findAttractor(
 ): Generator<void, Attractor> {
   const run = new AttractorRun(system, start, { ...ATTRACTOR_DEFAULTS, ...request });
   return yield* run.find();
+}
+
+interface AnswerDetails {
+  readonly windings?: number;
+  readonly period?: number;
+  readonly reason?: string;
+  readonly exponent?: number;
 }
 
 class AttractorRun {
@@ -107,7 +122,7 @@ class AttractorRun {
       const rest = this.rest();
       if (rest) return rest;
       const closed = returns?.closure();
-      if (closed) return yield* this.cycle(closed);
+      if (returns && closed) return yield* this.closed(returns, closed);
       const past = walk.time > request.transient;
       if (past) this.merge();
       const range = this.ranges();
@@ -121,7 +136,18 @@ class AttractorRun {
         returns = new Returns(walk, this.rule(range), range);
       gone = extinct;
     }
-    return yield* this.byExponents();
+    return yield* this.byExponents(returns);
+  }
+
+  /** A cycle, unless neighbours of the closed orbit keep their distance; asked only where no approach was seen. */
+  private *closed(returns: Returns, closure: Closure): Generator<void, Attractor> {
+    const { system, walk, request } = this;
+    if (returns.repeatedThroughout(closure.lag)) {
+      const orbit = { state: walk.state.slice(), time: walk.time, returns, closure, ...returns.setting };
+      if (!(yield* attractsNeighbours(system, orbit, request)))
+        return this.answer('undecided', { reason: 'closed orbits of every size, none of which attracts' });
+    }
+    return yield* this.cycle(closure);
   }
 
   /** Extremes over one whole period. */
@@ -130,7 +156,12 @@ class AttractorRun {
     turns.reset(walk);
     const status = yield* walk.to(walk.time + 1.01 * period, [turns]);
     if (status !== 'complete') return this.stopped(status);
-    return this.answer('cycle', { windings: lag, period });
+    // Along a free cycle nothing grows or shrinks; forced ones have no such direction.
+    return this.answer('cycle', {
+      windings: lag,
+      period,
+      ...(this.system.autonomous ? { exponent: 0 } : {}),
+    });
   }
 
   /** Adds what the last part of the run has shown to what was seen since the transient. */
@@ -151,7 +182,7 @@ class AttractorRun {
     const values = Float64Array.from(this.quantities, ({ states }) => sumOf(states, at));
     this.turns.lowest.set(values);
     this.turns.highest.set(values);
-    return { ...this.answer('rest', {}), state: at };
+    return { ...this.answer('rest', { exponent: leadingRate(system, walk.time, at) }), state: at };
   }
 
   /** Nothing moves, yet no equilibrium attracts for certain: a curve of them, forcing that does nothing, or a saddle. */
@@ -195,7 +226,7 @@ class AttractorRun {
     return { kind: 'section', state, level };
   }
 
-  private *byExponents(): Generator<void, Attractor> {
+  private *byExponents(returns: Returns | null): Generator<void, Attractor> {
     this.turns.lowest.set(this.seenLowest);
     this.turns.highest.set(this.seenHighest);
     const fading = this.fading.fading();
@@ -203,7 +234,7 @@ class AttractorRun {
     const { system, walk, request } = this;
     const run = lyapunovSpectrum(system, walk.state, {
       startTime: walk.time,
-      transient: 0,
+      transient: ATTRACTOR_DEFAULTS.turning * request.observed,
       horizon: request.observed,
       count: Math.min(3, system.dimension),
       maximumSteps: request.maximumSteps,
@@ -213,12 +244,17 @@ class AttractorRun {
       yield;
       step = run.next();
     }
-    const { reading } = step.value;
-    if (/chaos$/.test(reading)) return this.answer('chaos', {});
-    if (reading.startsWith('torus')) return this.answer('torus', {});
-    const reason =
-      reading === 'cycle' || reading === 'rest' ? `on its way to a ${reading}` : 'a longer run decides';
-    return this.answer('undecided', { reason });
+    const { reading, exponents } = step.value;
+    const exponent = exponents[0];
+    if (/chaos$/.test(reading)) return this.answer('chaos', { exponent });
+    // Where returns nearly repeat, zero exponents are those of a cycle about to change.
+    const nearly = returns !== null && returns.nearest() < ATTRACTOR_DEFAULTS.nearlyClosed;
+    if (reading.startsWith('torus') && !nearly) return this.answer('torus', { exponent });
+    const known = reading === 'cycle' || reading === 'rest' || nearly;
+    const reason = known
+      ? `on its way to a ${reading === 'rest' ? 'rest' : 'cycle'}`
+      : 'a longer run decides';
+    return this.answer('undecided', { reason, exponent });
   }
 
   /** Populations there at the start that stayed below the density that counts, and never came back from below it. */
@@ -237,10 +273,7 @@ class AttractorRun {
     return this.answer('undecided', { reason: REASONS[status] });
   }
 
-  private answer(
-    kind: LongRunKind,
-    { windings, period, reason }: { windings?: number; period?: number; reason?: string },
-  ): Attractor {
+  private answer(kind: LongRunKind, { windings, period, reason, exponent }: AnswerDetails): Attractor {
     const extinct = kind === 'unbounded' ? [] : this.extinct(kind === 'rest');
     return {
       class: attractorClass(this.system, kind, {
@@ -251,7 +284,9 @@ class AttractorRun {
       lowest: this.turns.lowest.slice(),
       highest: this.turns.highest.slice(),
       period: period ?? null,
+      exponent: exponent ?? null,
       state: this.walk.state.slice(),
+      time: this.walk.time,
     };
   }
 }

@@ -11,6 +11,8 @@ export const RETURN_DEFAULTS = {
   /** Distances between returns, as shares of the range, that count as near and as rounding. */
   near: 1e-3,
   rounding: 1e-6,
+  /** Distances that show an approach rather than errors of integration. */
+  approach: 1e-4,
   /** Distance that a pattern may still have to go, judged from how fast it closes. */
   left: 1e-3,
   /** Near returns in a row asked for, besides a whole pattern. */
@@ -86,6 +88,33 @@ export class Returns implements StepObserver {
     return null;
   }
 
+  get setting(): { readonly rule: ReturnRule; readonly range: Float64Array } {
+    return { rule: this.rule, range: this.range };
+  }
+
+  /** Whether returns repeated so closely from the first one on that no approach was seen. */
+  repeatedThroughout(lag: number): boolean {
+    for (let k = lag; k < this.states.length; k += 1)
+      if (this.distance(k, lag) > RETURN_DEFAULTS.approach) return false;
+    return true;
+  }
+
+  /** Distance of the latest return from the nearest of the ones before, as a share of the range; Infinity without any. */
+  nearest(): number {
+    const last = this.states.length - 1;
+    let least = Infinity;
+    for (let lag = 1; lag <= Math.min(last, RETURN_DEFAULTS.longestPattern); lag += 1)
+      least = Math.min(least, this.distance(last, lag));
+    return least;
+  }
+
+  /** Distance of the latest return from the nearest of the last `lag` returns of another; null without any. */
+  gapTo(other: Returns, lag: number): number | null {
+    const own = this.states.at(-1);
+    if (!own) return null;
+    return Math.min(...other.states.slice(-lag).map((state) => this.apart(own, state)));
+  }
+
   private keep(walk: ScaledWalk, t: number): void {
     const state = new Float64Array(this.v.length);
     walk.stepper.interpolate(t, state);
@@ -94,10 +123,14 @@ export class Returns implements StepObserver {
   }
 
   private distance(k: number, lag: number): number {
+    return this.apart(this.states[k], this.states[k - lag]);
+  }
+
+  /** Largest difference of two states, in the walk's scale, as a share of the range. */
+  apart(a: Float64Array, b: Float64Array): number {
     let largest = 0;
     this.range.forEach((range, i) => {
-      if (range > 0)
-        largest = Math.max(largest, Math.abs(this.states[k][i] - this.states[k - lag][i]) / range);
+      if (range > 0) largest = Math.max(largest, Math.abs(a[i] - b[i]) / range);
     });
     return largest;
   }

@@ -175,3 +175,22 @@ describe('what is no attractor of these kinds', () => {
     expect(found.class.label).toBe('undecided: step budget spent');
   });
 });
+
+describe('closed orbits', () => {
+  it('of predator and prey without limits attract nothing, and are no cycle', () => {
+    const found = attractor(["x' = x - x*y", "y' = x*y - y"], [0.3, 0.8]);
+    expect(found.class.label).toBe('undecided: closed orbits of every size, none of which attracts');
+  });
+
+  it('neither where one more class only follows', () => {
+    const found = attractor(["x' = x - x*y", "y' = x*y - y", "z' = x - z"], [0.3, 0.8, 1]);
+    expect(found.class.kind).toBe('undecided');
+  });
+
+  it('a start on the cycle itself is a cycle all the same', () => {
+    const on = attractor(["x' = x*(1 - x/4) - 2*x*y/(1 + x)", "y' = 2*x*y/(1 + x) - y"], [0.5, 0.5]);
+    const again = attractor(["x' = x*(1 - x/4) - 2*x*y/(1 + x)", "y' = 2*x*y/(1 + x) - y"], [...on.state]);
+    expect(again.class.kind).toBe('cycle');
+    expect(again.exponent).toBe(0);
+  });
+});
