@@ -3,7 +3,17 @@ import reactHooks from 'eslint-plugin-react-hooks';
 import tseslint from 'typescript-eslint';
 
 export default tseslint.config(
-  { ignores: ['dist', 'data', 'coverage', 'node_modules', 'test-results'] },
+  {
+    ignores: [
+      'dist',
+      'data',
+      'coverage',
+      'node_modules',
+      'test-results',
+      'src/engine/core/assembly',
+      'src/engine/core/core-bytes.ts',
+    ],
+  },
   js.configs.recommended,
   ...tseslint.configs.recommended,
   reactHooks.configs.flat['recommended-latest'] ?? {},

@@ -9,6 +9,8 @@ export type Backend = 'wasm' | 'closure';
 /**
  * Compiles groups of outputs of a graph for evaluation with the given numbers of states and
  * parameters. `backend` defaults to WebAssembly with closures where it cannot be had.
+ *
+ * @param workspace doubles of memory left free for compiled code beside the formulas
  */
 export function compileProgram(
   graph: ExpressionGraph,
@@ -16,9 +18,10 @@ export function compileProgram(
   stateCount: number,
   parameterCount: number,
   backend: Backend = 'wasm',
+  workspace = 0,
 ): Program {
   const plan = planProgram(graph, groups, stateCount, parameterCount);
-  return (backend === 'wasm' ? compileWasm(plan) : null) ?? compileClosure(plan);
+  return (backend === 'wasm' ? compileWasm(plan, workspace) : null) ?? compileClosure(plan);
 }
 
 /** Compiles the outputs for derivatives along a direction; see `compileTaylor`. */

@@ -12,6 +12,18 @@ export interface Program {
   prepare(parameters: Float64Array): void;
   /** out[i] = value of output i of the group at time t and state u; out is the caller's. */
   evaluate(group: number, t: number, u: Float64Array, out: Float64Array): void;
+  /** The emitted functions themselves and the memory they work in, for compiled code beside them. */
+  readonly emitted?: EmittedFunctions;
+}
+
+export interface EmittedFunctions {
+  readonly memory: { readonly buffer: ArrayBuffer };
+  readonly prepare: () => void;
+  /** Group k from the state at byte address u to byte address out. */
+  readonly groups: readonly ((t: number, u: number, out: number) => void)[];
+  /** Where the parameters lie, and where nothing lies from there on, in doubles. */
+  readonly parameters: number;
+  readonly free: number;
 }
 
 /** What is computed when: the order of work that both backends follow. */

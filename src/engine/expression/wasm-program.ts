@@ -15,8 +15,10 @@ const PAGE_DOUBLES = 8192;
 /**
  * Compiles a plan to WebAssembly and runs it, or gives null where the host has no WebAssembly, refuses
  * it, or the plan is too large for it; the closures of `compileClosure` then serve instead.
+ *
+ * @param workspace doubles of memory left free behind its own
  */
-export function compileWasm(plan: Plan): Program | null {
+export function compileWasm(plan: Plan, workspace = 0): Program | null {
   const host = (globalThis as { WebAssembly?: WasmHost }).WebAssembly;
   if (host === undefined) return null;
   const emitted = emitWasm(plan);
@@ -24,8 +26,10 @@ export function compileWasm(plan: Plan): Program | null {
   const math = Object.fromEntries(IMPORTED_FUNCTIONS.map((name) => [name, Math[name]]));
   let instance: { readonly exports: Record<string, unknown> };
   let view: Float64Array;
+  let memory: { readonly buffer: ArrayBuffer };
   try {
-    const memory = new host.Memory({ initial: Math.max(1, Math.ceil(emitted.doubles / PAGE_DOUBLES)) });
+    const doubles = emitted.doubles + workspace;
+    memory = new host.Memory({ initial: Math.max(1, Math.ceil(doubles / PAGE_DOUBLES)) });
     instance = new host.Instance(new host.Module(emitted.bytes), { env: { memory }, math });
     view = new Float64Array(memory.buffer);
   } catch {
@@ -39,6 +43,7 @@ export function compileWasm(plan: Plan): Program | null {
   const [statesAddress, outputsAddress] = [states * 8, outputs * 8];
   return {
     backend: 'wasm',
+    emitted: { memory, prepare, groups, parameters: emitted.parameters, free: emitted.doubles },
     prepare(parameters) {
       for (let k = 0; k < parameterCount; k += 1) view[k] = parameters[k] as number;
       prepare();

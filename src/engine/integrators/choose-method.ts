@@ -54,12 +54,45 @@ export function takeOverIfStiff(
   options: IntegrationOptions = {},
 ): Stepper {
   if (!stepper.stiff || (options.method ?? 'auto') !== 'auto') return stepper;
+  return stiffStepperFrom(
+    system,
+    {
+      time: stepper.time,
+      state: stepper.state,
+      step: stepper.time - stepper.previousTime,
+      steps: stepper.steps,
+      rejected: stepper.rejected,
+      evaluations: stepper.method.evaluations,
+    },
+    end,
+    options,
+  );
+}
+
+/** Where a run stands when another method takes over. */
+export interface RunSoFar {
+  readonly time: number;
+  readonly state: Float64Array;
+  /** Length of the last step. */
+  readonly step: number;
+  readonly steps: number;
+  readonly rejected: number;
+  readonly evaluations: number;
+}
+
+/** The stiff method from where another one stands. */
+export function stiffStepperFrom(
+  system: CompiledSystem,
+  so: RunSoFar,
+  end: number,
+  options: IntegrationOptions = {},
+): Stepper {
   const setting = methodSetting(system, options);
   const method = createMethod('rodas', setting);
-  method.evaluations = stepper.method.evaluations;
+  method.evaluations = so.evaluations;
   const successor = new Stepper(method, setting);
-  successor.begin(stepper.time, stepper.state, end - stepper.time, stepper.time - stepper.previousTime);
-  successor.steps = stepper.steps;
-  successor.rejected = stepper.rejected;
+  successor.begin(so.time, so.state, end - so.time, so.step);
+  successor.steps = so.steps;
+  successor.rejected = so.rejected;
   return successor;
 }

@@ -1,6 +1,6 @@
 import type { Progress } from '../continuation/contract';
 import type { CompiledSystem } from '../system/contract';
-import { createStepper, takeOverIfStiff } from './choose-method';
+import { createStepper, stiffStepperFrom, takeOverIfStiff } from './choose-method';
 import {
   INTEGRATION_DEFAULTS,
   INTEGRATION_MESSAGES,
@@ -9,7 +9,9 @@ import {
   type Trajectory,
 } from './contract';
 import { logScaleSystem } from './log-scale';
+import { runInCore } from './native-run';
 import { integrateByExtrapolation } from './odex-extrapolation';
+import type { Stepper } from './stepper';
 
 /** Steps between two yields: a fraction of a millisecond for small systems. */
 const STEPS_PER_SLICE = 256;
@@ -45,9 +47,22 @@ export function* integrateInSlices(
   const recorder = new Recorder(system.dimension, times);
   const end = times[times.length - 1];
   const budget = options.maximumSteps ?? INTEGRATION_DEFAULTS.maximumSteps;
-  let stepper = createStepper(system, options);
-  stepper.begin(times[0], start, end - times[0], options.initialStep);
-  recorder.take(start);
+  let stepper: Stepper;
+  if (system.native && options.method !== 'rodas') {
+    const run = runInCore(system, system.native, start, times, options, (state) => recorder.take(state));
+    let step = run.next();
+    while (!step.done) {
+      yield { ...step.value, partial: recorder.finish('cancelled', NOTHING_COUNTED) };
+      step = run.next();
+    }
+    const { status, ...found } = step.value;
+    if (status !== 'stiff') return recorder.finish(status, { ...found, method: found });
+    stepper = stiffStepperFrom(system, found, end, options);
+  } else {
+    stepper = createStepper(system, options);
+    stepper.begin(times[0], start, end - times[0], options.initialStep);
+    recorder.take(start);
+  }
   while (recorder.filled < times.length) {
     if (times[recorder.filled] === stepper.time) {
       recorder.take(stepper.state);
@@ -91,6 +106,8 @@ function* integrateLogarithms(
   yield { fraction: 1, stage: 'Integrating', partial: { ...inner, states } };
   return { ...inner, states };
 }
+
+const NOTHING_COUNTED = { steps: 0, rejected: 0, method: { evaluations: 0 } } as const;
 
 /** Fills the requested times as the steps pass over them. */
 class Recorder {

@@ -1,6 +1,10 @@
 import { balanceMatrix } from './balance';
+import { nativeEigenvalues } from '../core/native-eigenvalues';
 import { reduceToHessenberg } from './hessenberg';
 import { hessenbergEigenvalues, pairEigenvalues } from './shifted-qr';
+
+/** Size from which the compiled core gains more than copying costs; the bench has the row. */
+const NATIVE_FROM = 12;
 
 export interface Eigenvalues {
   /** Real parts, falling; of a conjugate pair the one with positive imaginary part comes first. */
@@ -48,6 +52,14 @@ export function eigenvaluesInto(
     if (!Number.isFinite(a[k])) found = -1;
     matrix[k] = a[k];
   }
+  if (found === n && n >= NATIVE_FROM) {
+    const converged = nativeEigenvalues(a, n, re, im);
+    if (converged !== null) {
+      if (converged) orderByRealPart(re, im, n);
+      else failInto(re, im, n);
+      return converged;
+    }
+  }
   if (found === n && n > 2) {
     balanceMatrix(matrix, n);
     reduceToHessenberg(matrix, n, vector);
@@ -59,12 +71,16 @@ export function eigenvaluesInto(
     im[0] = 0;
   }
   if (found !== n) {
-    re.fill(Number.NaN, 0, n);
-    im.fill(Number.NaN, 0, n);
+    failInto(re, im, n);
     return false;
   }
   orderByRealPart(re, im, n);
   return true;
+}
+
+function failInto(re: Float64Array, im: Float64Array, n: number): void {
+  re.fill(Number.NaN, 0, n);
+  im.fill(Number.NaN, 0, n);
 }
 
 /** Insertion sort: n is small and the order is often nearly right. Stable, so pairs stay together. */

@@ -4,6 +4,7 @@ import { Coexistence } from './coexistence';
 import type { MapAxis } from './contract';
 import { axisValues, refinementStrides, type LevelRow, type MapSheet } from './map-sheet';
 import { marginCells, type MarginCells } from './margin-cells';
+import { nativeMarginCells } from './native-margin-cells';
 import { Seeds, type SeedKind } from './seeds';
 
 export interface MarginWorkRequest {
@@ -14,7 +15,7 @@ export interface MarginWorkRequest {
   /** State to begin searches from. */
   readonly starts: Float64Array;
   readonly box?: readonly ({ readonly from: number; readonly to: number } | null)[];
-  /** What solves many cells at once; plain code unless given. */
+  /** What solves many cells at once; the compiled core, or plain code where there is none, unless given. */
   readonly cells?: MarginCells;
 }
 
@@ -64,7 +65,11 @@ export class MarginWork {
     this.n = system.dimension;
     [this.firstStride] = refinementStrides(sheet.nx, sheet.ny);
     this.states = new Float64Array(MARGIN_WORK_DEFAULTS.cellsPerSlice * this.n);
-    this.cells = request.cells ?? marginCells(system, p, request.columns);
+    this.cells =
+      request.cells ??
+      (system.native
+        ? nativeMarginCells(system, system.native, p, request.columns)
+        : marginCells(system, p, request.columns));
     system.setParameters(p);
     this.coexistence = new Coexistence(system, [request.starts], request.box);
     this.seeds = new Seeds(sheet.nx, sheet.ny, this.n);
@@ -107,8 +112,8 @@ export class MarginWork {
     if (this.kinds[k] === 'several branches')
       for (const start of seeds.others(ix, row.iy, row.stride, state)) this.offer(best, start, ix, row.iy);
     if (this.isFirst(row)) this.searchHere(best, ix, row);
-    if (best.state === null && best.infeasible === null && this.kinds[k] !== 'none')
-      this.followHere(best, ix, row);
+    if (best.state === null && this.kinds[k] !== 'none') this.followHere(best, ix, row);
+    if (best.state === null && this.isBesideCoexistence(ix, row)) this.seek(best, ix, row.iy);
     const kept = best.state ?? best.infeasible;
     if (kept) seeds.keep(ix, row.iy, kept, 0);
     if (best.state === null) this.empty += 1;
@@ -135,16 +140,29 @@ export class MarginWork {
     }
     const sparse = stride * MARGIN_WORK_DEFAULTS.searchEvery;
     if (best.state === null || (ix % sparse === 0 && iy % sparse === 0)) {
-      this.setParameters(ix, iy);
-      this.searched += 1;
-      for (const state of this.coexistence.search()) this.offer(best, state, ix, iy);
+      this.seek(best, ix, iy);
     }
     this.branches.set(iy * nx + ix, best.all);
+  }
+
+  /** Whether a neighbour has a coexistence equilibrium: then one that is not found here is worth a search. */
+  private isBesideCoexistence(ix: number, { iy, stride }: LevelRow): boolean {
+    // Like no state there can be, so that every neighbour is another.
+    const nowhere = new Float64Array(this.n).fill(-Number.MAX_VALUE / 2);
+    return this.seeds.others(ix, iy, stride, nowhere).some((state) => this.coexistence.has(state, 0));
+  }
+
+  private seek(best: BestOf, ix: number, iy: number): void {
+    this.setParameters(ix, iy);
+    this.searched += 1;
+    for (const state of this.coexistence.search()) this.offer(best, state, ix, iy);
   }
 
   private followHere(best: BestOf, ix: number, { iy, stride }: LevelRow): void {
     const start = new Float64Array(this.n);
     this.seeds.best(ix, iy, stride, start, 0);
+    // Among states that are none of a community already, an infeasible answer is as good as another.
+    if (best.infeasible !== null && !this.coexistence.has(start, 0)) return;
     this.setParameters(ix, iy);
     const state = this.coexistence.follow(start);
     if (state) this.offer(best, state, ix, iy);

@@ -10,6 +10,9 @@ import {
   type Program,
   type TaylorProgram,
 } from '../expression/index';
+import type { NativeSystem } from '../core/contract';
+import { bindToCore } from '../core/bind-to-core';
+import { workspaceFor } from '../core/workspace';
 import type { CompiledSystem, StatePopulation } from './contract';
 import { commonPeriod, forcingFrequencies } from './forcing-period';
 
@@ -59,6 +62,7 @@ class System implements CompiledSystem {
   readonly autonomous: boolean;
   readonly smooth: boolean;
   readonly backend: Backend;
+  readonly native?: NativeSystem;
   private readonly program: Program;
   private readonly symbolicJacobian: boolean;
   private readonly byParameter = new Map<number, (t: number, u: Float64Array, out: Float64Array) => void>();
@@ -84,8 +88,11 @@ class System implements CompiledSystem {
     const jacobian = differentiateByStates(graph, equations, this.dimension);
     this.symbolicJacobian = !graph.full;
     graph.forgiveOverflow();
-    this.program = this.compile(this.symbolicJacobian ? [equations, jacobian] : [equations]);
+    const groups = this.symbolicJacobian ? [equations, jacobian] : [equations];
+    this.program = this.compile(groups, workspaceFor(this.dimension));
     this.backend = this.program.backend;
+    const native = bindToCore(this.program);
+    if (native) this.native = native;
     this.p = Float64Array.from(this.defaults);
     this.program.prepare(this.p);
   }
@@ -141,9 +148,9 @@ class System implements CompiledSystem {
     };
   }
 
-  private compile(groups: readonly (readonly NodeId[])[]): Program {
+  private compile(groups: readonly (readonly NodeId[])[], workspace = 0): Program {
     const { graph, parameterKeys } = this.spec;
-    return compileProgram(graph, groups, this.dimension, parameterKeys.length, this.wanted);
+    return compileProgram(graph, groups, this.dimension, parameterKeys.length, this.wanted, workspace);
   }
 
   private alongStates(): TaylorProgram {

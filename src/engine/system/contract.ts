@@ -1,3 +1,5 @@
+import type { NativeSystem } from '../core/contract';
+
 /**
  * What the rest of the engine knows of a model: a compiled system of ordinary differential equations
  * du/dt = f(t, u, p). Notation: n state dimension, u state, p parameters, t time,
@@ -21,6 +23,8 @@ export interface CompiledSystem {
   /** False where min, max, abs or a conditional occurs: normal forms are withheld at kinks. */
   readonly smooth: boolean;
   readonly backend: 'wasm' | 'closure';
+  /** The model bound to the compiled core; absent where it is not (closures, other coordinates). */
+  readonly native?: NativeSystem;
 
   /** Sets p for every later call; computes what depends on p alone once. */
   setParameters(p: Float64Array): void;
