@@ -29,8 +29,8 @@ export const SECTION_DEFAULTS = {
 
 /**
  * Crossings of a class or a population's total through a value (a section of Poincare): times and states, each
- * located on the dense output of the step to the rounding of the interpolant. `event` where all wanted
- * were found, `complete` where the time ended with fewer.
+ * located on the dense output of the step to the rounding of the interpolant. `complete` where all wanted were found or
+ * the time ended with fewer; the message says which.
  */
 export function* recordSection(
   system: CompiledSystem,

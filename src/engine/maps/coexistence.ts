@@ -45,14 +45,14 @@ export class Coexistence {
 
   /** Whether every population is present and no state negative, in n values of `states` from an index on. */
   has(states: Float64Array, at: number): boolean {
-    const { floor, groups } = this;
+    const { floor } = this;
     for (let i = 0; i < floor.length; i += 1) if (!(states[at + i] >= floor[i])) return false;
-    for (const group of groups) {
-      let present = false;
-      for (const i of group) if (states[at + i] > -floor[i]) present = true;
-      if (!present) return false;
-    }
-    return true;
+    return !this.lacks(states, at);
+  }
+
+  /** Whether a population is absent, so that the equilibrium lies on another branch, where it stays absent. */
+  lacks(states: Float64Array, at: number): boolean {
+    return this.groups.some((group) => group.every((i) => Math.abs(states[at + i]) <= -this.floor[i]));
   }
 
   /** States of all that a short search finds; no proof that there are no more. */

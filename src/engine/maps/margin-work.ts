@@ -194,7 +194,7 @@ class BestOf {
   constructor(private readonly coexistence: Coexistence) {}
 
   offer(margin: number, state: Float64Array): void {
-    if (Number.isNaN(margin)) return;
+    if (Number.isNaN(margin) || this.coexistence.lacks(state, 0)) return;
     if (!this.coexistence.has(state, 0)) {
       this.infeasible ??= state;
       return;
