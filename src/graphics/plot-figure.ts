@@ -1,6 +1,7 @@
 /** Turns a plot into marks: grid, bands, lines, flow, points, axes. Handles are drawn by the page. */
 import { axisLabel } from './axis';
 import type { Figure, Mark, TextMark } from './marks';
+import { cellMarks } from './cell-marks';
 import { flowMarks } from './flow-arrows';
 import { nameMarks, type NameObstacle } from './point-names';
 import type { Palette } from './palette';
@@ -186,6 +187,7 @@ export function plotFigure(spec: PlotSpec, layout: PlotLayout, palette: Palette)
   };
   const points = spec.points.filter(within);
   const drawn = [
+    ...(spec.cells ? cellMarks(spec.cells, layout) : []),
     ...[...spec.bands]
       .sort((a, b) => Number(b.twin) - Number(a.twin))
       .flatMap((band) => bandMarks(band, layout)),

@@ -70,6 +70,19 @@ export interface LegendItem {
   readonly line: 'solid' | 'dashed' | 'thin' | 'band' | 'none';
 }
 
+/** Coloured cells on a grid, beneath everything else. */
+export interface PlotCells {
+  readonly x: { readonly from: number; readonly to: number; readonly count: number };
+  readonly y: { readonly from: number; readonly to: number; readonly count: number };
+  /** Colour of cell iy*nx + ix; null where there is none. */
+  readonly colour: (cell: number) => string | null;
+  /** What a cell says under the pointer and in the table. */
+  readonly describe: (cell: number) => string | null;
+  /** Number of a cell for the table; NaN where there is none. */
+  readonly value: (cell: number) => number;
+  readonly label: string;
+}
+
 export interface PlotSpec {
   readonly title: string;
   /** Sentence for readers who do not see the plot. */
@@ -80,6 +93,7 @@ export interface PlotSpec {
   readonly bands: readonly PlotBand[];
   readonly points: readonly PlotPoint[];
   readonly handles: readonly PlotHandle[];
+  readonly cells?: PlotCells | null;
   /** x, y, dx, dy of arrows, in data units. */
   readonly flow: Float64Array | null;
   readonly legend: readonly LegendItem[];

@@ -1,5 +1,6 @@
 /** The same numbers as a plot shows, as a table and as comma-separated values. */
 import { axisLabel } from './axis';
+import { cellCentre } from './cell-marks';
 import type { PlotSpec } from './plot-spec';
 
 export interface PlotTable {
@@ -38,6 +39,17 @@ export function plotTables(spec: PlotSpec): readonly PlotTable[] {
   for (const band of spec.bands) {
     const rows = [...band.x].map((value, k) => [value, band.low[k] ?? NaN, band.high[k] ?? NaN]);
     tables.push({ name: band.label, columns: [x, 'lowest', 'highest'], rows });
+  }
+  if (spec.cells) {
+    const { x: across, y: up, value, describe, label } = spec.cells;
+    const rows: (number | string)[][] = [];
+    for (let cell = 0; cell < across.count * up.count; cell += 1) {
+      const text = describe(cell);
+      if (text === null) continue;
+      const [ix, iy] = [cell % across.count, Math.floor(cell / across.count)];
+      rows.push([cellCentre(across, ix), cellCentre(up, iy), value(cell), text]);
+    }
+    tables.push({ name: label, columns: [x, axisLabel(spec.y), label, 'in words'], rows });
   }
   if (spec.points.length > 0) {
     tables.push({

@@ -185,6 +185,7 @@ export const PANE_VIEWS = [
   'space',
   'diagram',
   'space-diagram',
+  'two-parameters',
   'processes',
   'equations',
 ] as const;

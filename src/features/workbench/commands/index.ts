@@ -17,11 +17,12 @@ import { runSweep } from './run-sweep';
 import { saveCopy } from './save-copy';
 import { saveVersion } from './save-version';
 import { share } from './share';
-import { showExplore, showModel, showSweep } from './show-arrangement';
+import { showExplore, showModel, showSweep, showTwoParameters } from './show-arrangement';
 import { showShortcuts } from './show-shortcuts';
 import { toggleFindings } from './toggle-findings';
 import { toggleRail } from './toggle-rail';
 import { toggleTwin } from './toggle-twin';
+import { computeMap, traceBoundaries } from './two-parameters';
 import { typeEquations } from './type-equations';
 import { undo } from './undo';
 import { versionHistory } from './version-history';
@@ -40,6 +41,8 @@ export const COMMANDS: readonly Command[] = [
   importModel,
   runSweep,
   fullPicture,
+  traceBoundaries,
+  computeMap,
   pictureTable,
   findEquilibria,
   checkOtherMethod,
@@ -49,6 +52,7 @@ export const COMMANDS: readonly Command[] = [
   toggleTwin,
   showExplore,
   showSweep,
+  showTwoParameters,
   showModel,
   toggleRail,
   toggleFindings,

@@ -14,4 +14,5 @@ function showArrangement(arrangement: Arrangement, label: string): Command {
 
 export const showExplore = showArrangement('explore', 'explore');
 export const showSweep = showArrangement('sweep', 'sweep');
+export const showTwoParameters = showArrangement('two-parameters', 'two parameters');
 export const showModel = showArrangement('model', 'model');

@@ -1,5 +1,5 @@
-import type { PictureResult } from '@/engine/analyses/contract';
-import type { Progress, SweepResult } from '@/engine/continuation/contract';
+import type { AnalysisResults, PictureResult } from '@/engine/analyses/contract';
+import type { Progress, SpecialPoint, SweepResult } from '@/engine/continuation/contract';
 import type {
   EngineClient,
   ExploreRequest,
@@ -9,15 +9,19 @@ import type {
 } from '@/workers/protocol';
 
 import type { EngineActions, WorkbenchData, WorkbenchStore } from '../state/store';
+import type { TwoParameters } from '../state/two-parameters';
 import { DRIVER_DEFAULTS, explain, sameValues } from './driver-defaults';
 import { readParameterValues, readStarts, readTaskValues } from './parameter-values';
 import { hasUnfollowedCycles, pictureTask } from './picture-task';
+import { boundariesTask, mapTask } from './two-parameter-tasks';
 
 /** Long runs: one at a time, with progress, cancel, and partial results that stay. */
 export class EngineJobs {
   readonly actions: EngineActions = {
     sweep: () => void this.follow('Sweep'),
     picture: () => void this.picture(),
+    traceBoundaries: (point) => void this.traceBoundaries(point),
+    computeMap: () => void this.computeMap(),
     findEquilibria: () => void this.findEquilibria(),
     secondOpinion: () => void this.secondOpinion(),
     cancel: () => this.cancel(),
@@ -170,6 +174,41 @@ export class EngineJobs {
     this.sweptAt = request;
     set({ ...patch, sweepOutdated: false });
     return true;
+  }
+
+  /** Curves of special points over the swept parameter and the second one. */
+  private async traceBoundaries(point?: SpecialPoint): Promise<void> {
+    const task = boundariesTask(this.store.getState(), point);
+    if (!task) return;
+    await this.run(`Boundaries over ${task.first.parameter} and ${task.second.parameter}`, async (id) => {
+      const show = (result: AnalysisResults['boundaries']) =>
+        this.showTwo(id, { second: task.second, boundaries: { task, result } });
+      const result = await this.engine.analyse(id, task, (progress) => {
+        this.progress(id, progress);
+        if (progress.partial && progress.partial.split.curves.length > 0) show(progress.partial);
+      });
+      show(result);
+    });
+  }
+
+  /** The map over both, coarse first. */
+  private async computeMap(): Promise<void> {
+    const task = mapTask(this.store.getState());
+    if (!task) return;
+    await this.run(`Map over ${task.x.parameter} and ${task.y.parameter}`, async (id) => {
+      const second = { parameter: task.y.parameter, from: task.y.from, to: task.y.to };
+      const show = (result: AnalysisResults['map']) => this.showTwo(id, { second, map: { task, result } });
+      const result = await this.engine.analyse(id, task, (progress) => {
+        this.progress(id, progress);
+        if (progress.partial) show(progress.partial);
+      });
+      show(result);
+    });
+  }
+
+  private showTwo(id: number, patch: Partial<TwoParameters>): void {
+    const { job, twoParameters, set } = this.store.getState();
+    if (job?.id === id) set({ twoParameters: { ...twoParameters, ...patch } });
   }
 
   private async run(name: string, work: (id: number) => Promise<void>): Promise<void> {

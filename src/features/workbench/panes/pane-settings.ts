@@ -13,6 +13,7 @@ export const VIEW_NAMES: Readonly<Record<PaneView, string>> = {
   space: 'Phase space',
   diagram: 'Sweep',
   'space-diagram': 'Sweep in space',
+  'two-parameters': 'Two parameters',
   processes: 'Processes',
   equations: 'Equations',
 };
@@ -20,6 +21,7 @@ export const VIEW_NAMES: Readonly<Record<PaneView, string>> = {
 export const ARRANGEMENTS: readonly { readonly value: Arrangement; readonly label: string }[] = [
   { value: 'explore', label: 'Explore' },
   { value: 'sweep', label: 'Sweep' },
+  { value: 'two-parameters', label: 'Two parameters' },
   { value: 'model', label: 'Model' },
 ];
 
@@ -30,6 +32,7 @@ const pane = (view: PaneView): PaneSettings => ({ view, axes: [] });
 export function defaultPanes(document: PresetDocument, arrangement: Arrangement): readonly PaneSettings[] {
   const classes = document.populations.reduce((sum, one) => sum + one.classes.length, 0);
   if (arrangement === 'model') return [pane('processes'), pane('equations')];
+  if (arrangement === 'two-parameters') return [pane('two-parameters'), pane('diagram')];
   if (arrangement === 'sweep')
     return classes > 1 ? [pane('diagram'), pane('space-diagram')] : [pane('diagram')];
   if (document.view.panes.length > 0) return document.view.panes;

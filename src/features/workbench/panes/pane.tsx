@@ -13,6 +13,7 @@ import { VIEW_NAMES, type PaneSettings } from './pane-settings';
 import { useShownModel } from './use-shown-model';
 import { DiagramView } from './views/diagram-view';
 import { PlaneView } from './views/plane-view';
+import { TwoParametersView } from '../two-parameters/two-parameters-view';
 import { TrajectoriesView } from './views/trajectories-view';
 
 const SpacePane = lazy(() => import('./space/space-pane'));
@@ -25,6 +26,8 @@ function PaneContent({ view, axes }: { readonly view: PaneView; readonly axes: r
       return <PlaneView axes={axes} />;
     case 'diagram':
       return <DiagramView axes={axes} />;
+    case 'two-parameters':
+      return <TwoParametersView axes={axes} />;
     case 'processes':
       return <ProcessPane />;
     case 'equations':

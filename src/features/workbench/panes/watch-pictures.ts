@@ -5,6 +5,7 @@ const RESULTS = [
   'sweep',
   'cycles',
   'sweepOutdated',
+  'twoParameters',
   'selectedPoint',
   'shownReport',
   'report',

@@ -5,6 +5,7 @@ import type { PictureResult, SplitAnd } from '@/engine/analyses/contract';
 import type { SpecialPoint } from '@/engine/continuation/contract';
 import type { CyclesResult, CycleSpecialPoint } from '@/engine/cycles/contract';
 import type { PresetDocument } from '@/engine/schema/preset';
+import { NO_TWO_PARAMETERS, type TwoParameters } from './two-parameters';
 import type { ModelReport } from '@/engine/system/contract';
 import type { Verdict } from '@/engine/verdict/contract';
 import type { ExploreResult, PlaneRequest, SecondOpinion, SplitSweepResult } from '@/workers/protocol';
@@ -48,7 +49,7 @@ export interface SweepSelection {
 export type MarkedPoint = SpecialPoint | CycleSpecialPoint;
 
 /** A named arrangement of panes. */
-export type Arrangement = 'explore' | 'sweep' | 'model';
+export type Arrangement = 'explore' | 'sweep' | 'two-parameters' | 'model';
 
 /** What the page asks of the engine; there while the driver runs. */
 export interface EngineActions {
@@ -57,6 +58,9 @@ export interface EngineActions {
   /** The same with nothing taken over from before, and with every equilibrium at the present numbers. */
   picture(): void;
   findEquilibria(): void;
+  /** Traces special points in a second parameter: all of the sweep, or one. */
+  traceBoundaries(point?: SpecialPoint): void;
+  computeMap(): void;
   /** Integrates the trajectory shown with the other method. */
   secondOpinion(): void;
   cancel(): void;
@@ -86,6 +90,8 @@ export interface WorkbenchState {
   readonly cycles: SplitAnd<CyclesResult> | null;
   /** The whole picture that sweep and cycles are part of, as far as it has come. */
   readonly picture: PictureResult | null;
+  /** What is shown over the swept parameter and a second one. */
+  readonly twoParameters: TwoParameters;
   readonly job: Job | null;
   readonly selectedPoint: MarkedPoint | null;
   /** Why the engine could not answer last, in words. */
@@ -135,6 +141,7 @@ function initialData(document: PresetDocument, origin: Origin): FreshData {
     sweepOutdated: false,
     cycles: null,
     picture: null,
+    twoParameters: NO_TWO_PARAMETERS,
     job: null,
     selectedPoint: null,
     engineError: null,

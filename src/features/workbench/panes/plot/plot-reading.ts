@@ -1,4 +1,5 @@
 import { axisLabel } from '@/graphics/axis';
+import { cellCentre } from '@/graphics/cell-marks';
 import { formatNumber } from '@/graphics/numbers';
 import type { PlotLayout } from '@/graphics/plot-layout';
 import type { PlotSpec } from '@/graphics/plot-spec';
@@ -54,7 +55,20 @@ export function readNearest(spec: PlotSpec, layout: PlotLayout, px: number, py: 
           () => place(spec, `${band.label}, ${edge}`, band.x[k] ?? NaN, values[k] ?? NaN),
           0,
         );
-  return best;
+  return best ?? readCell(spec, layout, px, py);
+}
+
+/** The cell of a map under the pointer. */
+function readCell(spec: PlotSpec, layout: PlotLayout, px: number, py: number): Reading | null {
+  if (!spec.cells) return null;
+  const { x, y, describe } = spec.cells;
+  const ix = Math.floor(((layout.x.invert(px) - x.from) / (x.to - x.from)) * x.count);
+  const iy = Math.floor(((layout.y.invert(py) - y.from) / (y.to - y.from)) * y.count);
+  if (!(ix >= 0 && ix < x.count && iy >= 0 && iy < y.count)) return null;
+  const text = describe(iy * x.count + ix);
+  if (text === null) return null;
+  const place = `${spec.x.name} ${formatNumber(cellCentre(x, ix))}, ${spec.y.name} ${formatNumber(cellCentre(y, iy))}`;
+  return { text: `${text} at ${place}`, x: px, y: py };
 }
 
 /** Steps in which the arrow keys walk along one line. */
