@@ -9,6 +9,7 @@ import { LeaveGuard } from '@/features/workbench/drafts/leave-guard';
 import { useKeepDraft } from '@/features/workbench/drafts/use-keep-draft';
 import { useCommandContext } from '@/features/workbench/commands/use-command-context';
 import { useBenchUi } from '@/features/workbench/layout/bench-ui';
+import { handedOver, settleHandOver } from '@/features/workbench/state/hand-over';
 import type { Origin } from '@/features/workbench/state/store';
 
 import { renderOnBench, twoSexes } from './support';
@@ -183,6 +184,22 @@ describe('saving', () => {
       visibility: 'private',
       document: { title: 'Voles and weasels, my copy', spread: 0.5 },
     });
+  });
+
+  it('takes the history along when the first save moves the page to its own address', async () => {
+    answerWith(() => ({ status: 201, body: presetBody(1, twoSexes(), 'p9') }));
+    const { user, store, router, turn, open } = renderBench({ kind: 'new' });
+    turn(0.5);
+    open('save');
+    await user.click(screen.getByRole('button', { name: 'Save' }));
+    await waitFor(() => expect(router.state.location.pathname).toBe('/presets/p9'));
+    expect(handedOver('p9')).toBe(store);
+    expect(handedOver('p1')).toBeNull();
+    expect(store.getState().origin).toMatchObject({ kind: 'preset', id: 'p9', version: 1 });
+    act(() => store.getState().undo());
+    expect(store.getState().document.spread).toBe(1);
+    settleHandOver();
+    expect(handedOver('p9')).toBeNull();
   });
 
   it('says what the server refuses and keeps the work', async () => {

@@ -4,9 +4,30 @@ import { formatNumber, formatToTolerance } from '@/graphics/numbers';
 
 import { isOfCycles } from '../cycles/marked-points';
 import { useShownModel } from '../panes/use-shown-model';
-import { useWorkbench, type MarkedPoint } from '../state/store';
+import { useWorkbench, useWorkbenchStore, type MarkedPoint } from '../state/store';
 import { LowestDensities } from './lowest-densities';
 import { Multipliers } from './multipliers';
+
+/** Kinds that go on as curves when a second parameter moves. */
+const TRACED: ReadonlySet<string> = new Set(['fold', 'Hopf', 'transcritical', 'pitchfork']);
+
+function TraceButton({ point }: { readonly point: SpecialPoint }) {
+  const store = useWorkbenchStore();
+  if (!TRACED.has(point.kind)) return null;
+  return (
+    <button
+      type="button"
+      className="mt-1 text-accent underline underline-offset-2"
+      onClick={() => {
+        const { set, engine } = store.getState();
+        set({ arrangement: 'two-parameters' });
+        engine?.traceBoundaries(point);
+      }}
+    >
+      Trace in two parameters
+    </button>
+  );
+}
 
 function EquilibriumPoint({ point }: { readonly point: SpecialPoint }) {
   const { hopf } = point;
@@ -59,7 +80,14 @@ export function SpecialPointDetails({
         located to <span className="figures">{formatNumber(point.accuracy, 1)}</span> of the range.
       </p>
       <p>{point.meaning}</p>
-      {isOfCycles(point) ? <CyclePoint point={point} /> : <EquilibriumPoint point={point} />}
+      {isOfCycles(point) ? (
+        <CyclePoint point={point} />
+      ) : (
+        <>
+          <EquilibriumPoint point={point} />
+          <TraceButton point={point} />
+        </>
+      )}
     </>
   );
 }

@@ -116,11 +116,13 @@ export function VerdictCard() {
   const twin = useWorkbench((state) => state.shownReport?.twin ?? null);
   const model = useShownModel();
   const comparable = twin?.kind === 'lumped' || twin?.kind === 'unlumped';
-  const split = usePresentCycles('split').cycles;
-  const pooled = usePresentCycles('twin').cycles;
+  const { cycles: split, result: ownResult } = usePresentCycles('split');
+  const { cycles: pooled, result: twinResult } = usePresentCycles('twin');
+  // While one side is still being followed, that nothing was found there says nothing.
+  const known = ownResult?.status === 'complete' && twinResult?.status === 'complete';
   const cycles = useMemo(
-    () => (comparable ? cycleEvidence(model, split, pooled) : []),
-    [comparable, model, split, pooled],
+    () => (comparable && known ? cycleEvidence(model, split, pooled) : []),
+    [comparable, known, model, split, pooled],
   );
   return (
     <Card title="Does the split stabilise?" accent>
