@@ -14,6 +14,7 @@ import { securityHeaders } from './middleware/security-headers';
 import { createSessions } from './middleware/sessions';
 import { refuseUnsound } from './middleware/sound-text';
 import { accountRoutes } from './routes/account-routes';
+import { auditRoutes } from './routes/audit-routes';
 import { demoRoutes } from './routes/demo-routes';
 import { healthRoutes } from './routes/health-routes';
 import { labRoutes } from './routes/lab-routes';
@@ -36,6 +37,7 @@ function apiRouter(dependencies: Dependencies): Router {
   router.use(
     accountRoutes(dependencies),
     labRoutes(dependencies),
+    auditRoutes(dependencies),
     presetRoutes(dependencies),
     sharedRoutes(dependencies),
   );

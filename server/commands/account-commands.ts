@@ -1,5 +1,8 @@
-import { Op, UniqueConstraintError } from 'sequelize';
+import { Op, UniqueConstraintError, type Transaction } from 'sequelize';
 
+import type { AuditAction } from '@/contract/audit';
+
+import { recordAudit } from '../audit/record-audit';
 import { refuseBadToken, refuseInvalid } from '../errors';
 import type { Dependencies } from '../dependencies';
 import { hashToken, makeId, makeToken } from '../ids';
@@ -17,6 +20,9 @@ const CONFIRM_WITHIN = 48 * HOUR;
 const RESET_WITHIN = HOUR;
 
 const SPENT = 'This link was used already or is too old. Ask for a new one.';
+
+const auditAccount = (database: Database, user: User | null, action: AuditAction, transaction: Transaction) =>
+  recordAudit(database, transaction, { actor: user, action, labId: null, subject: '', details: {} });
 
 /** Tidies up. Done where a known and an unknown address part ways, so that both wait for one write. */
 export async function discardExpired(database: Database): Promise<void> {
@@ -108,7 +114,9 @@ export async function resetPassword(
     await PasswordReset.destroy({ where: { userId: reset.userId }, transaction });
     await SessionRecord.destroy({ where: { userId: reset.userId }, transaction });
     await User.update({ passwordHash }, { where: { id: reset.userId }, transaction });
-    return User.findByPk(reset.userId, { transaction });
+    const owner = await User.findByPk(reset.userId, { transaction });
+    await auditAccount(database, owner, 'password changed', transaction);
+    return owner;
   });
   if (user) mailer.send(passwordChangedMessage(user.email, user.name, settings.publicUrl));
 }
@@ -129,6 +137,7 @@ export async function changePassword(
     await User.update({ passwordHash }, { where: { id: userId }, transaction });
     await PasswordReset.destroy({ where: { userId }, transaction });
     await SessionRecord.destroy({ where: { userId }, transaction });
+    await auditAccount(database, user, 'password changed', transaction);
   });
   mailer.send(passwordChangedMessage(user.email, user.name, settings.publicUrl));
 }
@@ -143,5 +152,9 @@ export async function checkPassword(
     await passwords.verifyNobody(password);
     return null;
   }
-  return (await passwords.verify(user.passwordHash, password)) ? user : null;
+  const right = await passwords.verify(user.passwordHash, password);
+  await database.change((transaction) =>
+    auditAccount(database, user, right ? 'signed in' : 'sign-in refused', transaction),
+  );
+  return right ? user : null;
 }

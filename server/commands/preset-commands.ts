@@ -3,6 +3,9 @@ import type { Transaction } from 'sequelize';
 import { LIMITS } from '@/engine/schema/limits';
 import type { PresetDocument } from '@/engine/schema/preset';
 
+import type { AuditAction } from '@/contract/audit';
+
+import { recordAudit } from '../audit/record-audit';
 import type { Dependencies } from '../dependencies';
 import { Refusal, refuseNotAllowed, refuseNotFound, refuseStaleSave } from '../errors';
 import { hashToken, makeId, makeToken } from '../ids';
@@ -82,6 +85,22 @@ async function replaceTags(
   }
 }
 
+const audit = (
+  { database }: Dependencies,
+  transaction: Transaction,
+  actor: Person | null,
+  action: AuditAction,
+  { id, title, labId }: Pick<Preset, 'id' | 'title' | 'labId'>,
+  details: Record<string, string | number> = {},
+) =>
+  recordAudit(database, transaction, {
+    actor,
+    action,
+    labId,
+    subject: title,
+    details: { preset: id, ...details },
+  });
+
 export interface NewPreset {
   document: PresetDocument;
   note: string;
@@ -117,6 +136,11 @@ export async function createPreset(
       { transaction },
     );
     await replaceTags(dependencies, id, document.tags, transaction);
+    await audit(dependencies, transaction, person, 'preset created', {
+      id,
+      title: document.title,
+      labId: placed.labId,
+    });
   });
   return readBack(dependencies, id);
 }
@@ -179,6 +203,11 @@ export async function saveVersion(
       { where: { id }, transaction },
     );
     await replaceTags(dependencies, id, save.document.tags, transaction);
+    const action = save.restoredFrom === undefined ? 'version saved' : 'version restored';
+    await audit(dependencies, transaction, person, action, preset, {
+      version: number,
+      ...(save.restoredFrom === undefined ? {} : { restoredFrom: save.restoredFrom }),
+    });
   });
   return readBack(dependencies, id);
 }
@@ -223,17 +252,32 @@ export async function changeVisibility(
   const preset = await findPreset(dependencies, id);
   demand(person, 'change visibility', preset);
   const placed = placement(person, visibility, labId);
-  await dependencies.database.write(() =>
-    dependencies.database.models.Preset.update(placed, { where: { id } }),
-  );
+  await dependencies.database.change(async (transaction) => {
+    await dependencies.database.models.Preset.update(placed, { where: { id }, transaction });
+    // A lab that loses the preset is told as well as one that gains it.
+    for (const lab of new Set([preset.labId, placed.labId])) {
+      await audit(
+        dependencies,
+        transaction,
+        person,
+        'visibility changed',
+        { id, title: preset.title, labId: lab },
+        { to: placed.visibility },
+      );
+    }
+  });
   return readBack(dependencies, id);
 }
 
-/** Takes a preset out of sight; its versions stay in the file. Its links stop working. */
+/** Takes a preset out of sight for 30 days, in which it can be brought back. Its links stop working meanwhile. */
 export async function deletePreset(dependencies: Dependencies, person: Person, id: string): Promise<void> {
-  demand(person, 'delete', await findPreset(dependencies, id));
-  const { Preset } = dependencies.database.models;
-  await dependencies.database.write(() => Preset.update({ deletedAt: new Date() }, { where: { id } }));
+  await dependencies.database.change(async (transaction) => {
+    const preset = await findPreset(dependencies, id, transaction);
+    demand(person, 'delete', preset);
+    const { Preset } = dependencies.database.models;
+    await Preset.update({ deletedAt: new Date() }, { where: { id }, transaction });
+    await audit(dependencies, transaction, person, 'preset deleted', preset);
+  });
 }
 
 export async function createLink(
@@ -242,19 +286,24 @@ export async function createLink(
   presetId: string,
   label: string,
 ): Promise<{ link: ShareLink; token: string }> {
-  demand(person, 'share by link', await findPreset(dependencies, presetId));
+  const preset = await findPreset(dependencies, presetId);
+  demand(person, 'share by link', preset);
   const token = makeToken();
   const { ShareLink } = dependencies.database.models;
-  const link = await dependencies.database.write(() =>
-    ShareLink.create({
-      id: makeId(),
-      presetId,
-      tokenHash: hashToken(token),
-      label,
-      createdById: person.id,
-      createdAt: new Date(),
-    }),
-  );
+  const link = await dependencies.database.change(async (transaction) => {
+    await audit(dependencies, transaction, person, 'link created', preset, { label });
+    return ShareLink.create(
+      {
+        id: makeId(),
+        presetId,
+        tokenHash: hashToken(token),
+        label,
+        createdById: person.id,
+        createdAt: new Date(),
+      },
+      { transaction },
+    );
+  });
   return { link, token };
 }
 
@@ -264,14 +313,16 @@ export async function revokeLink(
   presetId: string,
   linkId: string,
 ): Promise<void> {
-  demand(person, 'share by link', await findPreset(dependencies, presetId));
+  const preset = await findPreset(dependencies, presetId);
+  demand(person, 'share by link', preset);
   const { ShareLink } = dependencies.database.models;
   const link = await ShareLink.findOne({ where: { id: linkId, presetId } });
   if (link === null) throw refuseNotFound('This preset has no such link.');
   if (link.revokedAt !== null) return;
-  await dependencies.database.write(() =>
-    ShareLink.update({ revokedAt: new Date() }, { where: { id: linkId } }),
-  );
+  await dependencies.database.change(async (transaction) => {
+    await ShareLink.update({ revokedAt: new Date() }, { where: { id: linkId }, transaction });
+    await audit(dependencies, transaction, person, 'link withdrawn', preset, { label: link.label });
+  });
 }
 
 /** What a link opens: the head version, as long as neither link nor preset is gone. */
@@ -291,6 +342,14 @@ export async function openLink(
   }
 }
 
-export async function countOpening({ database }: Dependencies, link: ShareLink): Promise<void> {
-  await database.write(() => database.models.ShareLink.increment('opened', { where: { id: link.id } }));
+export async function countOpening(
+  dependencies: Dependencies,
+  person: Person | null,
+  { link, preset }: { link: ShareLink; preset: Preset },
+): Promise<void> {
+  const { database } = dependencies;
+  await database.change(async (transaction) => {
+    await database.models.ShareLink.increment('opened', { where: { id: link.id }, transaction });
+    await audit(dependencies, transaction, person, 'link opened', preset, { label: link.label });
+  });
 }

@@ -4,8 +4,9 @@ import type { Database } from '../models/database';
 import { accountsAndLabs } from './001-accounts-and-labs';
 import type { Migration } from './migration';
 import { presetsAndLinks } from './002-presets-and-links';
+import { auditAndPurge } from './003-audit-and-purge';
 
-export const MIGRATIONS: readonly Migration[] = [accountsAndLabs, presetsAndLinks];
+export const MIGRATIONS: readonly Migration[] = [accountsAndLabs, presetsAndLinks, auditAndPurge];
 
 /** Steps the schema forward (`up`) and back (`down`); each step is a transaction of its own. */
 export function createMigrator(database: Database) {

@@ -1,5 +1,6 @@
 import type { Sequelize, Transaction } from 'sequelize';
 
+import { defineAuditEntry } from './audit-entry';
 import { connectSqlite } from './connection';
 import { defineLab } from './lab';
 import { defineMembership } from './membership';
@@ -25,6 +26,7 @@ function defineModels(sequelize: Sequelize) {
     PresetVersion: definePresetVersion(sequelize),
     PresetTag: definePresetTag(sequelize),
     ShareLink: defineShareLink(sequelize),
+    AuditEntry: defineAuditEntry(sequelize),
   };
   models.Membership.belongsTo(models.User, { as: 'user', foreignKey: 'userId' });
   models.Membership.belongsTo(models.Lab, { as: 'lab', foreignKey: 'labId' });

@@ -5,7 +5,7 @@ import type { PresetDocument } from '@/engine/schema/preset';
 
 import { copyDocument, countOpening, openLink } from '../commands/preset-commands';
 import type { Dependencies } from '../dependencies';
-import { requireSignedIn, signedIn } from '../middleware/current-user';
+import { requireSignedIn, signedIn, visitorOrPerson } from '../middleware/current-user';
 import { parseBody } from '../middleware/parse';
 import { presentPreset, presentVersion } from '../presenters/present-preset';
 
@@ -15,7 +15,7 @@ export function sharedRoutes(dependencies: Dependencies): Router {
 
   router.get('/shared/:token', async (request, response) => {
     const { link, preset, version } = await openLink(dependencies, String(request.params.token));
-    await countOpening(dependencies, link);
+    await countOpening(dependencies, visitorOrPerson(request), { link, preset });
     const body: SharedBody = {
       title: preset.title,
       owner: preset.owner?.name ?? '',

@@ -6,6 +6,7 @@ export type Role = (typeof ROLES)[number];
 export const LAB_RIGHTS = {
   'view lab': ['supervisor', 'researcher', 'student', 'collaborator'],
   'view members': ['supervisor', 'researcher', 'student', 'collaborator'],
+  'view lab history': ['supervisor'],
   'view lab presets': ['supervisor', 'researcher', 'student', 'collaborator'],
   'create lab presets': ['supervisor', 'researcher', 'student'],
   'save lab presets': ['supervisor', 'researcher'],

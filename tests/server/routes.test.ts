@@ -100,6 +100,18 @@ const rows = (): Row[] => [
   { method: 'delete', path: '/account/sessions/nothing', expect: signedInOnly(404) },
   { method: 'get', path: `/labs/${DEMO_LAB.id}`, expect: { ...signedInOnly(200), outsider: 404 } },
   { method: 'get', path: '/labs/none', expect: signedInOnly(404) },
+  ...['audit', 'audit.csv'].flatMap((name): Row[] => [
+    {
+      method: 'get',
+      path: `/labs/${DEMO_LAB.id}/${name}`,
+      expect: { ...signedInOnly(403), supervisor: 200, outsider: 404 },
+    },
+    {
+      method: 'get',
+      path: `/labs/${DEMO_LAB.id}/${name}?action=nonsense`,
+      expect: { ...signedInOnly(403), supervisor: 400, outsider: 404 },
+    },
+  ]),
   { method: 'get', path: '/presets', expect: signedInOnly(200) },
   { method: 'post', path: '/presets', body: () => ({ document: {} }), expect: signedInOnly(400) },
   { method: 'get', path: '/presets/none', expect: signedInOnly(404) },
@@ -263,7 +275,8 @@ describe('every route with every role', () => {
         .replace(/\/presets\/none/, '/presets/:id')
         .replace(/\/versions\/\d+/, '/versions/:number')
         .replace(/\/links\/none/, '/links/:linkId')
-        .replace(/\/labs\/.*/, '/labs/:labId')
+        .replace(/\/labs\/[^/]*/, '/labs/:labId')
+        .replace(/\?.*/, '')
         .replace(new RegExp(`/shared/(${token}|none)`), '/shared/:token')
         .replace(/\/sessions\/nothing/, '/sessions/:id')
         .replace(/\/mail\/none/, '/mail/:id');

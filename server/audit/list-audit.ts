@@ -1,0 +1,59 @@
+import { Op, type WhereOptions } from 'sequelize';
+
+import { AUDIT_SENTENCES, type AuditEntryBody, type AuditPage, type AuditQuery } from '@/contract/audit';
+
+import type { AuditEntry } from '../models/audit-entry';
+import type { Database } from '../models/database';
+
+const PAGE = 50;
+const A_DAY = 24 * 60 * 60_000;
+/** Lines of one CSV file; a longer history is taken in stretches of dates. */
+const MOST_LINES = 10_000;
+
+function conditions(labId: string, { person, action, from, to }: AuditQuery): WhereOptions {
+  return {
+    labId,
+    ...(person === undefined ? {} : { actorId: person }),
+    ...(action === undefined ? {} : { action }),
+    at: {
+      [Op.gte]: new Date(from ?? 0),
+      // The last day counts whole.
+      [Op.lt]: new Date((to === undefined ? Date.now() : Date.parse(to)) + A_DAY),
+    },
+  };
+}
+
+function present({ id, at, actorId, actorName, action, subject, details }: AuditEntry): AuditEntryBody {
+  const actor = { id: actorId, name: actorName };
+  return { id, at: at.toISOString(), actor, action, sentence: AUDIT_SENTENCES[action], subject, details };
+}
+
+/** A page of the history of a lab, newest first. */
+export async function listAudit({ models }: Database, labId: string, query: AuditQuery): Promise<AuditPage> {
+  const { rows, count } = await models.AuditEntry.findAndCountAll({
+    where: conditions(labId, query),
+    order: [['id', 'DESC']],
+    limit: PAGE,
+    offset: (query.page - 1) * PAGE,
+  });
+  return { items: rows.map(present), total: count, page: query.page, pageSize: PAGE };
+}
+
+/** A cell that no spreadsheet takes for a formula. */
+function cell(value: string): string {
+  const safe = /^[=+\-@\t\r]/.test(value) ? `'${value}` : value;
+  return `"${safe.replaceAll('"', '""')}"`;
+}
+
+/** The same as CSV, without pages. */
+export async function auditAsCsv({ models }: Database, labId: string, query: AuditQuery): Promise<string> {
+  const rows = await models.AuditEntry.findAll({
+    where: conditions(labId, query),
+    order: [['id', 'DESC']],
+    limit: MOST_LINES,
+  });
+  const lines = rows.map(({ at, actorName, action, subject, details }) =>
+    [at.toISOString(), actorName, action, subject, JSON.stringify(details)].map(cell).join(','),
+  );
+  return ['time,person,action,subject,details', ...lines, ''].join('\r\n');
+}

@@ -1,0 +1,46 @@
+import { z } from 'zod';
+
+/** What the history of a lab or an account records, each with its sentence after the person's name. */
+export const AUDIT_SENTENCES = {
+  'preset created': 'began a preset',
+  'version saved': 'saved a version',
+  'version restored': 'restored an old version',
+  'visibility changed': 'changed who sees a preset',
+  'preset deleted': 'deleted a preset',
+  'preset brought back': 'brought a deleted preset back',
+  'preset purged': 'was deleted for good after 30 days',
+  'link created': 'made a share link',
+  'link withdrawn': 'withdrew a share link',
+  'link opened': 'opened a share link',
+  'signed in': 'signed in',
+  'sign-in refused': 'was refused a sign-in with a wrong password',
+  'password changed': 'changed the password',
+} as const;
+export type AuditAction = keyof typeof AUDIT_SENTENCES;
+export const AUDIT_ACTIONS = Object.keys(AUDIT_SENTENCES) as [AuditAction, ...AuditAction[]];
+
+export const auditQuerySchema = z.object({
+  person: z.string().max(60).optional(),
+  action: z.enum(AUDIT_ACTIONS).optional(),
+  from: z.iso.date().optional(),
+  to: z.iso.date().optional(),
+  page: z.coerce.number().int().min(1).max(100_000).default(1),
+});
+export type AuditQuery = z.infer<typeof auditQuerySchema>;
+
+export interface AuditEntryBody {
+  id: number;
+  at: string;
+  actor: { id: string | null; name: string };
+  action: AuditAction;
+  sentence: string;
+  subject: string;
+  details: Record<string, string | number>;
+}
+
+export interface AuditPage {
+  items: AuditEntryBody[];
+  total: number;
+  page: number;
+  pageSize: number;
+}
