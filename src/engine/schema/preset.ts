@@ -186,6 +186,7 @@ export const PANE_VIEWS = [
   'diagram',
   'space-diagram',
   'two-parameters',
+  'long-run',
   'processes',
   'equations',
 ] as const;

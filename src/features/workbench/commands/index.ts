@@ -17,7 +17,7 @@ import { runSweep } from './run-sweep';
 import { saveCopy } from './save-copy';
 import { saveVersion } from './save-version';
 import { share } from './share';
-import { showExplore, showModel, showSweep, showTwoParameters } from './show-arrangement';
+import { showExplore, showLongRun, showModel, showSweep, showTwoParameters } from './show-arrangement';
 import { showShortcuts } from './show-shortcuts';
 import { toggleFindings } from './toggle-findings';
 import { toggleRail } from './toggle-rail';
@@ -53,6 +53,7 @@ export const COMMANDS: readonly Command[] = [
   showExplore,
   showSweep,
   showTwoParameters,
+  showLongRun,
   showModel,
   toggleRail,
   toggleFindings,

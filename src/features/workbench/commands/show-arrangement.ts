@@ -15,4 +15,5 @@ function showArrangement(arrangement: Arrangement, label: string): Command {
 export const showExplore = showArrangement('explore', 'explore');
 export const showSweep = showArrangement('sweep', 'sweep');
 export const showTwoParameters = showArrangement('two-parameters', 'two parameters');
+export const showLongRun = showArrangement('long-run', 'long run');
 export const showModel = showArrangement('model', 'model');

@@ -1,4 +1,4 @@
-import type { AnalysisResults, PictureResult } from '@/engine/analyses/contract';
+import type { AnalysisResultOf, AnalysisResults, PictureResult } from '@/engine/analyses/contract';
 import type { Progress, SpecialPoint, SweepResult } from '@/engine/continuation/contract';
 import type {
   EngineClient,
@@ -9,10 +9,12 @@ import type {
 } from '@/workers/protocol';
 
 import type { EngineActions, WorkbenchData, WorkbenchStore } from '../state/store';
+import type { LongRunName } from '../state/long-run';
 import type { TwoParameters } from '../state/two-parameters';
 import { DRIVER_DEFAULTS, explain, sameValues } from './driver-defaults';
 import { readParameterValues, readStarts, readTaskValues } from './parameter-values';
 import { hasUnfollowedCycles, pictureTask } from './picture-task';
+import { LONG_RUN_NAMES, longRunTask } from './long-run-tasks';
 import { boundariesTask, mapTask } from './two-parameter-tasks';
 
 /** Long runs: one at a time, with progress, cancel, and partial results that stay. */
@@ -22,6 +24,7 @@ export class EngineJobs {
     picture: () => void this.picture(),
     traceBoundaries: (point) => void this.traceBoundaries(point),
     computeMap: () => void this.computeMap(),
+    longRun: (name) => void this.runLongRun(name),
     findEquilibria: () => void this.findEquilibria(),
     secondOpinion: () => void this.secondOpinion(),
     cancel: () => this.cancel(),
@@ -198,6 +201,23 @@ export class EngineJobs {
     await this.run(`Map over ${task.x.parameter} and ${task.y.parameter}`, async (id) => {
       const second = { parameter: task.y.parameter, from: task.y.from, to: task.y.to };
       const show = (result: AnalysisResults['map']) => this.showTwo(id, { second, map: { task, result } });
+      const result = await this.engine.analyse(id, task, (progress) => {
+        this.progress(id, progress);
+        if (progress.partial) show(progress.partial);
+      });
+      show(result);
+    });
+  }
+
+  /** One of the tasks of the long run, with partial results as they come. */
+  private async runLongRun(name: LongRunName): Promise<void> {
+    const task = longRunTask(this.store.getState(), name);
+    if (!task) return;
+    await this.run(LONG_RUN_NAMES[name], async (id) => {
+      const show = (result: AnalysisResultOf<typeof task>) => {
+        const { job, longRun, set } = this.store.getState();
+        if (job?.id === id) set({ longRun: { ...longRun, [name]: { task, result } } });
+      };
       const result = await this.engine.analyse(id, task, (progress) => {
         this.progress(id, progress);
         if (progress.partial) show(progress.partial);

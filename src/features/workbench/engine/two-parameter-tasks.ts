@@ -8,7 +8,8 @@ import { readParameterValue, readTaskValues } from './parameter-values';
 type BoundaryKind = (typeof BOUNDARY_KINDS)[number];
 const isBoundaryKind = (kind: string): kind is BoundaryKind => BOUNDARY_KINDS.some((one) => one === kind);
 
-function common(state: WorkbenchState) {
+/** Values and start values of the bench, as every task has them. */
+export function commonTask(state: WorkbenchState) {
   const { document, shownReport } = state;
   return {
     parameters: { ...(shownReport ? readTaskValues(document, shownReport) : {}) },
@@ -38,7 +39,7 @@ export function boundariesTask(state: WorkbenchState, point?: SpecialPoint): Bou
       : null;
   return {
     task: 'boundaries',
-    ...common(state),
+    ...commonTask(state),
     first,
     second,
     kinds: [...BOUNDARY_KINDS],
@@ -55,7 +56,7 @@ export function mapTask(state: WorkbenchState): MapTask | null {
   const { cells, quantity } = state.twoParameters;
   return {
     task: 'map',
-    ...common(state),
+    ...commonTask(state),
     x: { ...first, cells },
     y: { ...second, cells },
     show: quantity,

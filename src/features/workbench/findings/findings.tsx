@@ -3,6 +3,7 @@ import { BranchesCard } from './branches-card';
 import { CyclesCard } from './cycles-card';
 import { DensityCard } from './density-card';
 import { EquilibriaSection } from './equilibria-section';
+import { ExponentsCard } from './exponents-card';
 import { JobCard } from './job-card';
 import { NotesCard } from './notes-card';
 import { PictureCard } from './picture-card';
@@ -43,6 +44,7 @@ export function Findings() {
       <VerdictCard />
       <SpecialPointsCard />
       <CyclesCard />
+      <ExponentsCard />
       <DensityCard />
       <EquilibriaSection />
       <PictureCard />

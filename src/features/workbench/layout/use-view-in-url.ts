@@ -3,7 +3,7 @@ import { useSearchParams } from 'react-router-dom';
 
 import { useWorkbench, useWorkbenchStore, type Arrangement, type SweepSelection } from '../state/store';
 
-const ARRANGEMENTS: readonly Arrangement[] = ['explore', 'sweep', 'two-parameters', 'model'];
+const ARRANGEMENTS: readonly Arrangement[] = ['explore', 'sweep', 'two-parameters', 'long-run', 'model'];
 
 /** `K:0.5:6`, the parameter's key first; a dial's key holds a colon of its own. */
 export function readSweep(text: string | null): SweepSelection | null {

@@ -14,6 +14,7 @@ export const VIEW_NAMES: Readonly<Record<PaneView, string>> = {
   diagram: 'Sweep',
   'space-diagram': 'Sweep in space',
   'two-parameters': 'Two parameters',
+  'long-run': 'Long run',
   processes: 'Processes',
   equations: 'Equations',
 };
@@ -22,6 +23,7 @@ export const ARRANGEMENTS: readonly { readonly value: Arrangement; readonly labe
   { value: 'explore', label: 'Explore' },
   { value: 'sweep', label: 'Sweep' },
   { value: 'two-parameters', label: 'Two parameters' },
+  { value: 'long-run', label: 'Long run' },
   { value: 'model', label: 'Model' },
 ];
 
@@ -32,6 +34,7 @@ const pane = (view: PaneView): PaneSettings => ({ view, axes: [] });
 export function defaultPanes(document: PresetDocument, arrangement: Arrangement): readonly PaneSettings[] {
   const classes = document.populations.reduce((sum, one) => sum + one.classes.length, 0);
   if (arrangement === 'model') return [pane('processes'), pane('equations')];
+  if (arrangement === 'long-run') return [pane('long-run'), pane('trajectories')];
   if (arrangement === 'two-parameters') return [pane('two-parameters'), pane('diagram')];
   if (arrangement === 'sweep')
     return classes > 1 ? [pane('diagram'), pane('space-diagram')] : [pane('diagram')];

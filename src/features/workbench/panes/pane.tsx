@@ -13,6 +13,7 @@ import { VIEW_NAMES, type PaneSettings } from './pane-settings';
 import { useShownModel } from './use-shown-model';
 import { DiagramView } from './views/diagram-view';
 import { PlaneView } from './views/plane-view';
+import { LongRunView } from '../long-run/long-run-view';
 import { TwoParametersView } from '../two-parameters/two-parameters-view';
 import { TrajectoriesView } from './views/trajectories-view';
 
@@ -28,6 +29,8 @@ function PaneContent({ view, axes }: { readonly view: PaneView; readonly axes: r
       return <DiagramView axes={axes} />;
     case 'two-parameters':
       return <TwoParametersView axes={axes} />;
+    case 'long-run':
+      return <LongRunView axes={axes} />;
     case 'processes':
       return <ProcessPane />;
     case 'equations':

@@ -6,6 +6,7 @@ const RESULTS = [
   'cycles',
   'sweepOutdated',
   'twoParameters',
+  'longRun',
   'selectedPoint',
   'shownReport',
   'report',

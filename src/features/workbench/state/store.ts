@@ -5,6 +5,7 @@ import type { PictureResult, SplitAnd } from '@/engine/analyses/contract';
 import type { SpecialPoint } from '@/engine/continuation/contract';
 import type { CyclesResult, CycleSpecialPoint } from '@/engine/cycles/contract';
 import type { PresetDocument } from '@/engine/schema/preset';
+import { NO_LONG_RUN, type LongRun, type LongRunName } from './long-run';
 import { NO_TWO_PARAMETERS, type TwoParameters } from './two-parameters';
 import type { ModelReport } from '@/engine/system/contract';
 import type { Verdict } from '@/engine/verdict/contract';
@@ -49,7 +50,7 @@ export interface SweepSelection {
 export type MarkedPoint = SpecialPoint | CycleSpecialPoint;
 
 /** A named arrangement of panes. */
-export type Arrangement = 'explore' | 'sweep' | 'two-parameters' | 'model';
+export type Arrangement = 'explore' | 'sweep' | 'two-parameters' | 'long-run' | 'model';
 
 /** What the page asks of the engine; there while the driver runs. */
 export interface EngineActions {
@@ -61,6 +62,7 @@ export interface EngineActions {
   /** Traces special points in a second parameter: all of the sweep, or one. */
   traceBoundaries(point?: SpecialPoint): void;
   computeMap(): void;
+  longRun(name: LongRunName): void;
   /** Integrates the trajectory shown with the other method. */
   secondOpinion(): void;
   cancel(): void;
@@ -92,6 +94,8 @@ export interface WorkbenchState {
   readonly picture: PictureResult | null;
   /** What is shown over the swept parameter and a second one. */
   readonly twoParameters: TwoParameters;
+  /** What the long run is: extremes along the strip, basins, a section, exponents. */
+  readonly longRun: LongRun;
   readonly job: Job | null;
   readonly selectedPoint: MarkedPoint | null;
   /** Why the engine could not answer last, in words. */
@@ -142,6 +146,7 @@ function initialData(document: PresetDocument, origin: Origin): FreshData {
     cycles: null,
     picture: null,
     twoParameters: NO_TWO_PARAMETERS,
+    longRun: NO_LONG_RUN,
     job: null,
     selectedPoint: null,
     engineError: null,
