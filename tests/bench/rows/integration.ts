@@ -1,13 +1,15 @@
 import type { MethodName } from '../../../src/engine/integrators/contract';
 import { integrateTo } from '../../../src/engine/integrators/driver';
-import { absent, atLeast, atMost, median, time, times, told, type Row } from '../measure';
+import { absent, atLeast, atMost, median, time, times, type Row } from '../measure';
 import { compileBenchModel, EIGHT_CLASSES, THREE_CLASSES, type BenchModel } from '../models';
-import type { NativeYardstick } from '../yardsticks/run';
+import { runLsoda, type NativeYardstick } from '../yardsticks/run';
 
 const END = 1000;
 /** Error at the end, relative to the largest state, at which methods are compared. */
 const ERROR = 1e-7;
 const TOLERANCES = [1e-6, 1e-7, 1e-8, 1e-9, 1e-10, 1e-11];
+/** LSODA is less accurate than its tolerance. */
+const LSODA_TOLERANCES = [1e-8, 1e-9, 1e-10, 1e-11, 1e-12];
 const ROUNDS = 5;
 
 /** One method at one tolerance: how long it took and how far off it was. */
@@ -46,10 +48,23 @@ function rowsOf(model: BenchModel, native: NativeYardstick | null): Row[] {
       ? atMost(`workhorse method ${about}: time over C Dormand-Prince 5(4)`, median(ratios.auto), 1.5, times)
       : absent(`workhorse method ${about}: time over C Dormand-Prince 5(4)`, noCompiler, 'at most 1.5 x'),
     native
-      ? told(`Dormand-Prince 5(4) ${about}: time over the same in C`, times(median(ratios.pair)))
-      : absent(`Dormand-Prince 5(4) ${about}: time over the same in C`, noCompiler),
+      ? atMost(`Dormand-Prince 5(4) ${about}: time over the same in C`, median(ratios.pair), 1.5, times)
+      : absent(`Dormand-Prince 5(4) ${about}: time over the same in C`, noCompiler, 'at most 1.5 x'),
     atLeast(`odex ${about}: time over the workhorse method`, median(ratios.odex), 5, times),
+    ...(model.classes === 3 ? [lsodaRow(model, reference, about)] : []),
   ];
+}
+
+/** LSODA from Python, with Python formulas: what most people would use. */
+function lsodaRow(model: BenchModel, reference: Float64Array, about: string): Row {
+  const name = `SciPy LSODA ${about}: time over the workhorse method`;
+  const runs = runLsoda(END, LSODA_TOLERANCES);
+  if (!runs) return absent(name, 'no python3 with SciPy on this machine', 'at least 50 x');
+  const theirs = atError(
+    runs.map(({ milliseconds, state }) => ({ milliseconds, error: largestError(state, reference) })),
+  );
+  const ours = atError(TOLERANCES.slice(1).map((tol) => work(model, 'auto', tol, reference)));
+  return atLeast(name, theirs / ours, 50, times);
 }
 
 function finalState(model: BenchModel, method: MethodName, tolerance: number): Float64Array {

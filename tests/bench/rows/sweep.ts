@@ -20,6 +20,7 @@ export function sweepRows(): Row[] {
   const share = POINTS / result.points;
   const wasm = share * followingTime(system, step);
   const closure = share * followingTime(compileBenchModel(THREE_CLASSES, 'closure'), step);
+  if (!(wasm > 0)) throw new Error('The sweep told of no time spent on following branches.');
   const name = `sweep of ${POINTS} points, 3 classes`;
   const python = runPythonSweep(POINTS);
   const versusPython = `${name}: NumPy over ours, branches known`;
@@ -39,7 +40,7 @@ export function sweepRows(): Row[] {
 
 interface Run {
   readonly result: SweepResult;
-  /** Milliseconds after the search for equilibria along the range. */
+  /** Milliseconds spent on following branches, without the searches for equilibria between. */
   readonly following: number;
 }
 
@@ -52,11 +53,14 @@ function run(system: CompiledSystem, largestStep: number): Run {
     bands: false,
     largestStep,
   });
-  let began = performance.now();
+  let following = 0;
+  let isFollowing = false;
   for (;;) {
+    const began = performance.now();
     const next = work.next();
-    if (next.done) return { result: next.value, following: performance.now() - began };
-    if (next.value.stage.startsWith('looking for')) began = performance.now();
+    if (isFollowing) following += performance.now() - began;
+    if (next.done) return { result: next.value, following };
+    isFollowing = next.value.stage === 'following branches';
   }
 }
 
