@@ -4,6 +4,7 @@ import { dirname, join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 
 import { createApp } from './app';
+import { purgeDaily } from './commands/deleted-presets';
 import type { Dependencies } from './dependencies';
 import { EnvironmentError, readEnvironment, type Environment } from './env';
 import { createLogger } from './logger';
@@ -65,6 +66,7 @@ async function start(environment: Environment): Promise<void> {
 
   const server = createServer(createApp(dependencies));
   const stopSweeping = sweepSessions(database);
+  const stopPurging = await purgeDaily(database, (error) => logger.error({ err: error }, 'purge failed'));
   await new Promise<void>((resolve, reject) => {
     server.once('error', reject);
     server.listen(environment.port, environment.host, resolve);
@@ -77,6 +79,7 @@ async function start(environment: Environment): Promise<void> {
     if (!ready) return;
     ready = false;
     stopSweeping();
+    stopPurging();
     const closed = new Promise<void>((resolve) => server.close(() => resolve()));
     server.closeIdleConnections();
     setTimeout(() => server.closeAllConnections(), GRACE).unref();

@@ -12,6 +12,7 @@ import {
   saveVersionSchema,
 } from '@/contract/presets';
 
+import { bringBack, listDeleted } from '../commands/deleted-presets';
 import { listPresets } from '../commands/list-presets';
 import {
   changeVisibility,
@@ -57,6 +58,15 @@ export function presetRoutes(dependencies: Dependencies): Router {
   router.post('/presets', async (request, response) => {
     const made = await createPreset(dependencies, signedIn(request), parseBody(request, createPresetSchema));
     response.status(201).json(present(request, made));
+  });
+
+  router.get('/presets/deleted', async (request, response) => {
+    response.json(await listDeleted(dependencies, signedIn(request)));
+  });
+
+  router.post('/presets/:id/bring-back', async (request, response) => {
+    await bringBack(dependencies, signedIn(request), presetId(request));
+    response.status(204).end();
   });
 
   router.get('/presets/:id', async (request, response) => {

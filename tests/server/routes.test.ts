@@ -113,6 +113,8 @@ const rows = (): Row[] => [
     },
   ]),
   { method: 'get', path: '/presets', expect: signedInOnly(200) },
+  { method: 'get', path: '/presets/deleted', expect: signedInOnly(200) },
+  { method: 'post', path: '/presets/none/bring-back', expect: signedInOnly(404) },
   { method: 'post', path: '/presets', body: () => ({ document: {} }), expect: signedInOnly(400) },
   { method: 'get', path: '/presets/none', expect: signedInOnly(404) },
   { method: 'get', path: `/presets/${own.preset.id}`, expect: by({ researcher: 200 }) },
@@ -221,6 +223,19 @@ const rows = (): Row[] => [
   {
     method: 'delete',
     path: `/presets/${lab.preset.id}`,
+    expect: {
+      visitor: 401,
+      student: 403,
+      collaborator: 403,
+      outsider: 404,
+      supervisor: 204,
+      researcher: 404,
+    },
+  },
+  { method: 'post', path: `/presets/${own.preset.id}/bring-back`, expect: by({ researcher: 204 }) },
+  {
+    method: 'post',
+    path: `/presets/${lab.preset.id}/bring-back`,
     expect: {
       visitor: 401,
       student: 403,
