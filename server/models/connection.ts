@@ -2,14 +2,14 @@ import { Sequelize } from 'sequelize';
 import sqlite3 from 'sqlite3';
 
 /**
- * Every connection waits for locks, syncs at checkpoints (safe with a write-ahead log) and keeps references
+ * Every connection waits for locks, syncs at each commit (so that what was acknowledged outlives a loss of power) and keeps references
  * whole. Sequelize offers no hook on new SQLite connections, and opens one for each transaction, so the
  * statements ride on opening itself: `exec` is exclusive and goes first.
  */
 const PRAGMAS = [
   'PRAGMA busy_timeout = 5000',
   'PRAGMA journal_mode = WAL',
-  'PRAGMA synchronous = NORMAL',
+  'PRAGMA synchronous = FULL',
   'PRAGMA foreign_keys = ON',
 ].join(';');
 

@@ -182,7 +182,7 @@ describe('the database', () => {
     await server.database.change(async (transaction) => {
       expect(await read('foreign_keys', transaction)).toBe(1);
       expect(await read('busy_timeout', transaction)).toBe(5000);
-      expect(await read('synchronous', transaction)).toBe(1);
+      expect(await read('synchronous', transaction)).toBe(2);
     });
   });
 
