@@ -25,7 +25,16 @@ for (const file of inputs) digest.update(readFileSync(file));
 const stamp = `// Written by build-core.mjs from ${digest.digest('hex')}; not to be edited.`;
 if (existsSync(target) && readFileSync(target, 'utf8').startsWith(stamp)) process.exit(0);
 
-const { default: asc } = await import('assemblyscript/asc');
+const asc = await import('assemblyscript/asc').then(
+  (module) => module.default,
+  () => null,
+);
+if (asc === null) {
+  // An install without development packages runs what was built before.
+  if (process.env.npm_lifecycle_event === 'prepare') process.exit(0);
+  console.error('The compiled core needs the package assemblyscript. Run npm ci.');
+  process.exit(1);
+}
 const { readTableau, writeMethod } = await import('./write-method.mjs');
 
 /** What is compiled: the sources, and one copy of the step loop with its method for each tableau. */
