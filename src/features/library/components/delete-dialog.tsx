@@ -1,5 +1,6 @@
 import { Button } from '@/components/ui/button';
 import { Dialog } from '@/components/ui/dialog';
+import { KEPT_DAYS } from '@/contract/deleted';
 import type { PresetSummary } from '@/contract/presets';
 import { plural } from '@/lib/format';
 
@@ -20,7 +21,7 @@ export function DeleteDialog({
       title="Delete this preset?"
       description={
         preset
-          ? `“${preset.title}” and its ${plural(preset.version, 'version')} leave the library, and its links stop working.`
+          ? `“${preset.title}” and its ${plural(preset.version, 'version')} leave the library, and its links stop working. All of it is kept for ${KEPT_DAYS} days and then deleted for good.`
           : ''
       }
     >
