@@ -44,7 +44,7 @@ for (const colorScheme of ['light', 'dark'] as const) {
       await signInAs(page, 'Rui Maddock');
       await openStarter(page, 'saturating-two-sex-predator');
       await expect(page.getByRole('region', { name: /Special points/ })).toBeVisible({ timeout: 30_000 });
-      for (const arrangement of ['Explore', 'Sweep', 'Model']) {
+      for (const arrangement of ['Explore', 'Sweep', 'Two parameters', 'Long run', 'Model']) {
         await page.getByRole('tab', { name: arrangement, exact: true }).click();
         await page.waitForTimeout(800);
         expect(await seriousFindings(page), arrangement).toEqual([]);

@@ -32,6 +32,11 @@ export interface SpecialPoint {
   readonly accuracy: number;
   readonly feasible: boolean;
   readonly hopf: HopfForm | null;
+  /**
+   * Quadratic coefficient of a fold, x' = a x^2 + ..., with the null vector in units of the scales of the states;
+   * null elsewhere, and where the model has a kink and no second derivative. See `fold-normal-form.ts`.
+   */
+  readonly foldCoefficient: number | null;
   /** For a transcritical point: populations that can invade on one side. */
   readonly invades: readonly string[];
   /** One sentence in plain words. */

@@ -1,6 +1,8 @@
 import type { Eigenvalue } from '../equilibria/contract';
 import type { CompiledSystem } from '../system/contract';
 import type { HopfForm, SpecialPoint, SpecialPointKind } from './contract';
+import { leftNullVector, nullVector } from '../linalg/null-vector';
+import { foldForm } from './fold-normal-form';
 import { firstLyapunovCoefficient } from './hopf-normal-form';
 import { kinkNear } from './kink-near';
 import { pointAlong } from './locate';
@@ -143,9 +145,24 @@ export function makeSpecialPoint(monitor: Monitor, system: CompiledSystem, input
       (needed, i) => !needed || at.u[i] >= -1e-7 * monitor.curve.stateScale[i],
     ),
     hopf: input.hopf ?? null,
+    foldCoefficient: kind === 'fold' ? foldCoefficient(monitor, at) : null,
     invades: input.invades ?? [],
     meaning: input.hopf?.meaning ?? meaningOf(kind, input.invades ?? [], input.label),
   };
+}
+
+/** Of the last evaluated point; null at a kink, and where the two null vectors are orthogonal. */
+function foldCoefficient({ curve }: Monitor, at: BranchPoint): number | null {
+  const { active, stateScale, system, jacobian, n, m } = curve;
+  if (kinkNear(system, at.u, active, stateScale)) return null;
+  const scaled = new Float64Array(m * m);
+  active.forEach((i, a) =>
+    active.forEach((j, b) => (scaled[a * m + b] = (jacobian[i * n + j] * stateScale[j]) / stateScale[i])),
+  );
+  const v = nullVector(scaled, m).vector.map((value, a) => value * stateScale[active[a]]);
+  const w = leftNullVector(scaled, m).vector.map((value, a) => value / stateScale[active[a]]);
+  const { numerator, denominator } = foldForm(system, at.u, active, v, w);
+  return denominator === 0 || !Number.isFinite(numerator) ? null : numerator / denominator;
 }
 
 /** The same transcritical point with other invaders. */

@@ -150,3 +150,15 @@ describe('two crossings within one step', () => {
     expect(Math.abs(values[1] - 0.301)).toBeLessThan(1e-10);
   });
 });
+
+describe('the quadratic coefficient of a fold', () => {
+  // x' = b + s x^2 has it exactly s at x = b = 0, in units of the scale of x.
+  it.each([1, -1])('has the sign of the curvature %i, and is told beside the point', (s) => {
+    const result = runSweep(
+      { equations: [`x' = b + ${s}*x^2`], parameters: { b: -s }, init: { x: 1 } },
+      { parameter: 'b', from: -1, to: 1 },
+    );
+    const fold = result.specialPoints.find((one) => one.kind === 'fold');
+    expect(Math.sign(fold?.foldCoefficient ?? NaN)).toBe(s);
+  });
+});

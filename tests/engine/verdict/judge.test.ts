@@ -207,6 +207,7 @@ function swept(crossing: number, slope = 0.1, absent: readonly string[] = []): S
     feasible: true,
     hopf: { omega: 1, l1: -1, criticality: 'supercritical', meaning: '', crossingSpeed: slope },
     invades: [],
+    foldCoefficient: null,
     meaning: '',
   };
   return {

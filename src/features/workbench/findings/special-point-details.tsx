@@ -30,7 +30,14 @@ function TraceButton({ point }: { readonly point: SpecialPoint }) {
 }
 
 function EquilibriumPoint({ point }: { readonly point: SpecialPoint }) {
-  const { hopf } = point;
+  const { hopf, foldCoefficient } = point;
+  if (foldCoefficient !== null)
+    return (
+      <p>
+        Quadratic coefficient <span className="figures">{formatNumber(foldCoefficient, 4)}</span>, in units of
+        the states’ own size
+      </p>
+    );
   if (!hopf) return null;
   return (
     <>
