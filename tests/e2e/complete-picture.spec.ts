@@ -19,7 +19,7 @@ test('onset, cycles, boundary, map and long run of the saturating predator', asy
   await expect(points.getByRole('row', { name: /Hopf.*1\.325.*1\.375/ })).toBeVisible({ timeout: 30_000 });
   const verdict = bench.findings.getByRole('region', { name: 'Does the split stabilise?' });
   await expect(verdict).toContainText('cycle lowest', { timeout: 30_000 });
-  await expect(bench.findings).toContainText(/Period .*week/);
+  await expect(bench.findings).toContainText(/period 20\.68 week/);
 
   await page.getByRole('tab', { name: 'Two parameters' }).click();
   const pane = page.getByRole('region', { name: 'Two parameters', exact: true });
@@ -31,7 +31,7 @@ test('onset, cycles, boundary, map and long run of the saturating predator', asy
   await expect(page.getByRole('button', { name: 'Cancel' })).toHaveCount(0, { timeout: 60_000 });
 
   // The ring at the present values moves both by the keyboard.
-  const spread = page.getByRole('textbox', { name: 'Spread', exact: true }).first();
+  const spread = page.getByRole('textbox', { name: 'Spread, value' }).first();
   const before = await spread.inputValue();
   await pane.getByRole('button', { name: /^Present values/ }).press('Shift+ArrowDown');
   await expect(spread).not.toHaveValue(before);
@@ -39,8 +39,8 @@ test('onset, cycles, boundary, map and long run of the saturating predator', asy
 
   const download = page.waitForEvent('download');
   await pane.getByRole('button', { name: /^Export/ }).click();
-  await page.getByRole('dialog').getByRole('button', { name: /SVG/ }).click();
-  expect((await download).suggestedFilename()).toMatch(/\.svg$/);
+  await page.getByRole('dialog').getByRole('button', { name: 'Save the file' }).click();
+  expect((await download).suggestedFilename()).toMatch(/\.(svg|png|csv)$/);
   await page.keyboard.press('Escape');
 
   await page.getByRole('tab', { name: 'Long run' }).click();

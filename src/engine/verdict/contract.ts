@@ -19,6 +19,12 @@ export interface Verdict {
   readonly cautions: readonly string[];
 }
 
+/** What margins leave open; once cycles are followed on both sides, the second half is known. */
+export const OPEN_WITHOUT_CYCLES =
+  'What large disturbances do, and how wide and low cycles swing: margins speak of small disturbances.';
+export const OPEN_WITH_CYCLES =
+  'What large disturbances do: margins and the cycles followed speak of what lies near them.';
+
 export interface VerdictEvidence {
   readonly label: string;
   readonly unit: string;

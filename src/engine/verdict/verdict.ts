@@ -3,7 +3,7 @@ import type { EquilibriaResult } from '../equilibria/contract';
 import { CAUTION, type TwinReport } from '../system/contract';
 import { coexistenceOf, comparePair, type PairFinding } from './compare-equilibria';
 import { compareSweeps, type SweepComparison } from './compare-sweeps';
-import type { Verdict, VerdictAnswer } from './contract';
+import { OPEN_WITHOUT_CYCLES, type Verdict, type VerdictAnswer } from './contract';
 import { equilibriumEvidence, sweepEvidence } from './evidence';
 import type { EquilibriumPair } from './pair-by-continuation';
 import { inWords, listed } from './wording';
@@ -250,7 +250,7 @@ function context(
           `Whether the answer holds under another mean: now ${held} is held, and in saturating models the choice can turn the answer.`,
         ]),
     ...(comparison ? [] : ['How onsets of cycles and collapses move: sweep a parameter to see.']),
-    'What large disturbances do, and how wide and low cycles swing: margins speak of small disturbances.',
+    OPEN_WITHOUT_CYCLES,
     'The risk of extinction by chance.',
     ...(Math.abs(input.spread) < 0.3
       ? ['Small spreads act at second order, so effects at this spread are small by nature.']

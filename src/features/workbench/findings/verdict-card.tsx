@@ -1,6 +1,11 @@
 import { useMemo } from 'react';
 
-import type { Verdict, VerdictEvidence } from '@/engine/verdict/contract';
+import {
+  OPEN_WITH_CYCLES,
+  OPEN_WITHOUT_CYCLES,
+  type Verdict,
+  type VerdictEvidence,
+} from '@/engine/verdict/contract';
 import { formatNumber } from '@/graphics/numbers';
 import { joinClasses } from '@/lib/join-classes';
 
@@ -87,6 +92,9 @@ function VerdictBody({
   readonly cycles: readonly VerdictEvidence[];
 }) {
   const evidence = [...verdict.evidence, ...cycles];
+  const open = verdict.leavesOpen.map((one) =>
+    cycles.length > 0 && one === OPEN_WITHOUT_CYCLES ? OPEN_WITH_CYCLES : one,
+  );
   return (
     <>
       <p
@@ -99,7 +107,7 @@ function VerdictBody({
       </p>
       {evidence.length > 0 ? <EvidenceTable evidence={evidence} /> : null}
       <Reasons title="What it rests on" items={verdict.restsOn} />
-      <Reasons title="What it leaves open" items={verdict.leavesOpen} />
+      <Reasons title="What it leaves open" items={open} />
       {verdict.cautions.map((caution) => (
         <p key={caution} className="mt-2 border-l-2 border-caution pl-2 text-sm text-caution">
           {caution}

@@ -6,7 +6,7 @@ import { parameterName } from '@/graphics/quantities';
 
 import { readParameterValue } from '../engine/parameter-values';
 import { commonNotes, showsTwin, waitingText, type ViewInput } from '../panes/views/view-input';
-import { mapCells, mapLegend } from './map-colours';
+import { MAP_NAMES, mapCells, mapLegend } from './map-colours';
 import { secondParameter } from './second-parameter';
 
 const CURVE_NAMES: Readonly<Record<BoundaryKind, string>> = {
@@ -185,7 +185,7 @@ export function twoParametersSpec({ state, model, palette }: ViewInput): PlotSpe
     title: `Boundaries over ${across.name} and ${up.name}`,
     description: nothing
       ? 'Nothing is traced or mapped yet.'
-      : `${lines.length} curves over ${across.name} and ${up.name}. ${said ?? ''}`,
+      : `${across.name} across, ${up.name} up. ${said ?? ''}${cells ? ` A map of ${MAP_NAMES[cells.quantity]} lies beneath.` : ''}`,
     x: { name: across.name, unit: across.unit, logarithm: false, domain: [first.from, first.to] },
     y: { name: up.name, unit: up.unit, logarithm: false, domain: [second.from, second.to] },
     lines,
