@@ -80,6 +80,21 @@ describe('the view over two parameters', () => {
     }
   });
 
+  it('has a zero contour that lies on the traced boundary', () => {
+    const { lines } = specNow();
+    const contour = lines.find((one) => one.id === 'zero-margin');
+    const own = lines.find((one) => one.label === 'onset of cycles (Hopf)');
+    expect(contour?.x.length).toBeGreaterThan(20);
+    contour?.y.forEach((spread, k) => {
+      const near = [...(own?.y ?? [])].reduce(
+        (best, value, at) => (Math.abs(value - spread) < Math.abs((own?.y[best] ?? 9) - spread) ? at : best),
+        0,
+      );
+      // A cell is 0.16 wide; the margin is nearly straight within it.
+      expect(Math.abs((contour.x[k] ?? NaN) - (own?.x[near] ?? NaN))).toBeLessThan(0.03);
+    });
+  });
+
   it('reads the exact value of the cell under the pointer, and keeps it in the table', () => {
     const spec = specNow();
     const layout = layoutPlot(spec, 800, 500, null);

@@ -1,13 +1,14 @@
 import type { BoundariesResult, BoundaryCurve, BoundaryKind } from '@/engine/boundaries/contract';
 import { formatNumber } from '@/graphics/numbers';
 import type { Palette } from '@/graphics/palette';
-import type { LegendItem, PlotHandle, PlotLine, PlotPoint, PlotSpec } from '@/graphics/plot-spec';
+import type { LegendItem, PlotCells, PlotHandle, PlotLine, PlotPoint, PlotSpec } from '@/graphics/plot-spec';
 import { parameterName } from '@/graphics/quantities';
 
 import { readParameterValue } from '../engine/parameter-values';
 import { commonNotes, showsTwin, waitingText, type ViewInput } from '../panes/views/view-input';
 import { MAP_NAMES, mapCells, mapLegend } from './map-colours';
 import { secondParameter } from './second-parameter';
+import { zeroContour } from './zero-contour';
 
 const CURVE_NAMES: Readonly<Record<BoundaryKind, string>> = {
   fold: 'fold',
@@ -99,6 +100,20 @@ function strokesOf(curve: BoundaryCurve, index: number, colour: string, result: 
   };
 }
 
+/** Zero margin as the map has it: beneath the traced curve, which it should meet. */
+function contourLine(cells: PlotCells, palette: Palette): PlotLine {
+  return {
+    id: 'zero-margin',
+    label: 'zero margin on the map',
+    colour: palette.ink,
+    width: 0.9,
+    marker: null,
+    ...zeroContour(cells),
+    twin: false,
+    segments: true,
+  };
+}
+
 function pointsOf(result: BoundariesResult, twin: boolean, palette: Palette): PlotPoint[] {
   // One point met from two curves is one mark.
   const seen = new Set<string>();
@@ -158,8 +173,10 @@ export function twoParametersSpec({ state, model, palette }: ViewInput): PlotSpe
       ? map.result
       : null;
   const cells = mapped ? (side === 'twin' ? mapped.twin : mapped.split) : null;
+  const drawn = cells ? mapCells(cells, palette, `1/${model.timeUnit}`) : null;
   const withTwin = showsTwin(state) && traced?.twin ? traced.twin : null;
   const lines = [
+    ...(drawn && cells?.quantity === 'margin' ? [contourLine(drawn, palette)] : []),
     ...(withTwin ? curveLines(withTwin, true, palette) : []),
     ...(traced ? curveLines(traced.split, false, palette) : []),
   ];
@@ -179,7 +196,7 @@ export function twoParametersSpec({ state, model, palette }: ViewInput): PlotSpe
       moves: 'both',
       colour: palette.accent,
     });
-  const nothing = lines.length === 0 && !cells;
+  const nothing = lines.length === 0 && !drawn;
   const said = traced ? traced.split.message : null;
   return {
     title: `Boundaries over ${across.name} and ${up.name}`,
@@ -195,7 +212,7 @@ export function twoParametersSpec({ state, model, palette }: ViewInput): PlotSpe
       ...(traced ? pointsOf(traced.split, false, palette) : []),
     ],
     handles,
-    cells: cells ? mapCells(cells, palette, `1/${model.timeUnit}`) : null,
+    cells: drawn,
     flow: null,
     legend: [
       ...curveLegend(traced?.split ?? null, withTwin, palette),
