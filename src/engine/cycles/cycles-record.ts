@@ -9,6 +9,8 @@ import { describeCyclePoint } from './describe-cycle';
 import { isKnownCycle } from './known-cycles';
 import type { CycleCrossing } from './locate-cycle';
 
+/** Share of the range that is rounding. */
+const ROUNDING = 1e-12;
 const STOPPED = 'Stopped before the end; what was found is kept.';
 
 /** A special point at which another branch is to be entered. */
@@ -127,7 +129,7 @@ export class CyclesRecord {
       feasible: isFeasible(cycles, extremes.lowest),
       note: note ?? null,
     });
-    this.points.push(special);
+    this.points.push({ ...special, parameter: this.snapped(special.parameter) });
     const own =
       curve.N === point.orbit.mesh.length - 1
         ? curve
@@ -136,6 +138,12 @@ export class CyclesRecord {
     if (!special.feasible || note) return;
     if (kind === 'period doubling' ? generation < most : kind === 'branch point of cycles')
       this.switches.push({ curve: own, at: point, special, generation });
+  }
+
+  /** A value within rounding of an end of the range is that end. */
+  private snapped(value: number): number {
+    const { from, to } = this.options;
+    return [from, to].find((end) => Math.abs(value - end) < ROUNDING * this.parameterScale) ?? value;
   }
 
   isKnown(curve: CycleCurve, point: CyclePoint, besides = -1): boolean {
