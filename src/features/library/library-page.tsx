@@ -12,6 +12,7 @@ import { useSession } from '@/lib/session';
 import { deletePreset } from './api/delete-preset';
 import { duplicatePreset } from './api/duplicate-preset';
 import { usePresetList } from './api/list-presets';
+import { DeletedPresets } from './components/deleted-presets';
 import { DeleteDialog } from './components/delete-dialog';
 import { ImportButton } from './components/import-button';
 import { LibraryFilters } from './components/library-filters';
@@ -109,6 +110,7 @@ export default function LibraryPage() {
           onPage={(page) => changeQuery({ page })}
         />
       ) : null}
+      {me ? <DeletedPresets /> : null}
       <DeleteDialog preset={doomed} onCancel={() => setDoomed(null)} onConfirm={(id) => remove.mutate(id)} />
     </div>
   );
