@@ -150,6 +150,16 @@ export async function checkPassword(
   const user = await database.models.User.findOne({ where: { email } });
   if (user === null || (user.demo && !settings.demo)) {
     await passwords.verifyNobody(password);
+    // The same write as for a known address, so that the time taken tells nothing. The address is not kept.
+    await database.change((transaction) =>
+      recordAudit(database, transaction, {
+        actor: null,
+        action: 'sign-in refused',
+        labId: null,
+        subject: 'an address that is not known',
+        details: {},
+      }),
+    );
     return null;
   }
   const right = await passwords.verify(user.passwordHash, password);
