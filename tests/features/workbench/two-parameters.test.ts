@@ -1,6 +1,8 @@
 import { beforeAll, describe, expect, it } from 'vitest';
 
+import { runStudy } from '@/batch/run-study';
 import { boundariesTask, mapTask } from '@/features/workbench/engine/two-parameter-tasks';
+import { studyOf, studyTasks } from '@/features/workbench/dialogs/study-tasks';
 import { readNearest } from '@/features/workbench/panes/plot/plot-reading';
 import { createWorkbenchStore, type WorkbenchStore } from '@/features/workbench/state/store';
 import { secondParameter } from '@/features/workbench/two-parameters/second-parameter';
@@ -128,6 +130,17 @@ describe('the view over two parameters', () => {
       state: { x: 1, y1: 2, y2: 3 },
       omega: 0.4,
     });
+  });
+
+  it('goes into the exported study, which batch accepts and reruns', () => {
+    const { twoParameters, longRun } = store.getState();
+    const offered = studyTasks(document, { parameter: 'K', from: 0.2, to: 4 }, { twoParameters, longRun });
+    const labels = offered.map((one) => one.label);
+    expect(labels).toContain('boundaries over K and dial:spread');
+    expect(labels).toContain('map of the stability margin over K and dial:spread');
+    const wanted = offered.filter((one) => one.task.task === 'boundaries').map((one) => one.task);
+    const outcome = runStudy(JSON.parse(JSON.stringify(studyOf(document, wanted))));
+    expect(outcome.ok).toBe(true);
   });
 
   it('says what to do where nothing lies across yet', () => {

@@ -22,7 +22,9 @@ export function ExportModelDialog() {
   const document = useWorkbench((state) => state.document);
   const sweep = useWorkbench((state) => state.sweepSelection);
   const harvested = useWorkbench((state) => state.report?.harvested ?? false);
-  const offered = studyTasks(document, sweep);
+  const twoParameters = useWorkbench((state) => state.twoParameters);
+  const longRun = useWorkbench((state) => state.longRun);
+  const offered = studyTasks(document, sweep, { twoParameters, longRun });
   const [left, setLeft] = useState<readonly string[]>([]);
   const chosen = offered.filter((one) => !left.includes(one.task.task));
   const close = () => set({ dialog: null });
