@@ -18,6 +18,7 @@ import { auditRoutes } from './routes/audit-routes';
 import { demoRoutes } from './routes/demo-routes';
 import { healthRoutes } from './routes/health-routes';
 import { labRoutes } from './routes/lab-routes';
+import { mailSettingsRoutes, unsubscribeRoutes } from './routes/mail-routes';
 import { presetRoutes } from './routes/preset-routes';
 import { sharedRoutes } from './routes/shared-routes';
 
@@ -31,13 +32,14 @@ function apiRouter(dependencies: Dependencies): Router {
     response.set('cache-control', 'no-store');
     next();
   });
-  router.use(healthRoutes(dependencies));
+  router.use(healthRoutes(dependencies), unsubscribeRoutes(dependencies));
   router.use(createSessions(database, settings), refuseForgeries(settings));
   router.use(express.json({ limit: LARGEST_BODY, strict: true }), refuseUnsound, findPerson(dependencies));
   router.use(
     accountRoutes(dependencies),
     labRoutes(dependencies),
     auditRoutes(dependencies),
+    mailSettingsRoutes(dependencies),
     presetRoutes(dependencies),
     sharedRoutes(dependencies),
   );

@@ -8,6 +8,7 @@ import { purgeDaily } from './commands/deleted-presets';
 import type { Dependencies } from './dependencies';
 import { EnvironmentError, readEnvironment, type Environment } from './env';
 import { createLogger } from './logger';
+import { forgetMailDaily } from './mail/claim-mail';
 import { startLocalSmtp } from './mail/local-smtp';
 import { Mailbox } from './mail/mailbox';
 import { Mailer } from './mail/mailer';
@@ -43,12 +44,22 @@ async function start(environment: Environment): Promise<void> {
   if (localSmtp !== null && !environment.demo) {
     logger.warn('SMTP_URL is not set: mail is kept as files in the data folder and reaches nobody');
   }
-  const mailer = new Mailer(environment.smtpUrl ?? localSmtp?.url ?? '', environment.mailFrom, logger);
+  const sessionSecret = environment.sessionSecret ?? readOrCreateSecret(environment.dataFolder);
+  const mailer = new Mailer(
+    database,
+    {
+      smtpUrl: environment.smtpUrl ?? localSmtp?.url ?? '',
+      from: environment.mailFrom,
+      publicUrl: environment.publicUrl,
+      secret: sessionSecret,
+    },
+    logger,
+  );
   let ready = true;
   const dependencies: Dependencies = {
     settings: {
       publicUrl: environment.publicUrl,
-      sessionSecret: environment.sessionSecret ?? readOrCreateSecret(environment.dataFolder),
+      sessionSecret,
       secureCookies: environment.secureCookies,
       trustProxy: environment.trustProxy,
       demo: environment.demo,
@@ -67,6 +78,10 @@ async function start(environment: Environment): Promise<void> {
   const server = createServer(createApp(dependencies));
   const stopSweeping = sweepSessions(database);
   const stopPurging = await purgeDaily(database, (error) => logger.error({ err: error }, 'purge failed'));
+  const stopForgetting = await forgetMailDaily(database, (error) =>
+    logger.error({ err: error }, 'old mail could not be forgotten'),
+  );
+  mailer.wake();
   await new Promise<void>((resolve, reject) => {
     server.once('error', reject);
     server.listen(environment.port, environment.host, resolve);
@@ -80,12 +95,12 @@ async function start(environment: Environment): Promise<void> {
     ready = false;
     stopSweeping();
     stopPurging();
+    stopForgetting();
     const closed = new Promise<void>((resolve) => server.close(() => resolve()));
     server.closeIdleConnections();
     setTimeout(() => server.closeAllConnections(), GRACE).unref();
     await closed;
-    await mailer.idle();
-    mailer.close();
+    await mailer.stop();
     await localSmtp?.close();
     await database.close();
   };

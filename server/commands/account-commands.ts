@@ -12,6 +12,7 @@ import {
   passwordChangedMessage,
   resetMessage,
 } from '../mail/messages';
+import { queueMail } from '../mail/queue-mail';
 import type { Database } from '../models/database';
 import type { User } from '../models/user';
 
@@ -25,37 +26,35 @@ const auditAccount = (database: Database, user: User | null, action: AuditAction
   recordAudit(database, transaction, { actor: user, action, labId: null, subject: '', details: {} });
 
 /** Tidies up. Done where a known and an unknown address part ways, so that both wait for one write. */
-export async function discardExpired(database: Database): Promise<void> {
-  const expired = { where: { expiresAt: { [Op.lt]: new Date() } } };
-  await database.write(async () => {
-    await database.models.PendingAccount.destroy(expired);
-    await database.models.PasswordReset.destroy(expired);
-  });
+async function discardExpired({ models }: Database, transaction: Transaction): Promise<void> {
+  const expired = { where: { expiresAt: { [Op.lt]: new Date() } }, transaction };
+  await models.PendingAccount.destroy(expired);
+  await models.PasswordReset.destroy(expired);
 }
 
 /** Takes a sign-up; what the mail says differs for a known address, what the caller learns does not. */
 export async function requestAccount(
-  { database, passwords, mailer, settings }: Dependencies,
+  dependencies: Dependencies,
   { name, email, password }: { name: string; email: string; password: string },
 ): Promise<void> {
+  const { database, passwords, settings } = dependencies;
   const known = await database.models.User.findOne({ where: { email } });
   const passwordHash = await passwords.hash(password);
-  if (known) {
-    await discardExpired(database);
-    mailer.send(knownAddressMessage(email, known.name, settings.publicUrl));
-    return;
-  }
   const token = makeToken();
-  await database.write(() =>
-    database.models.PendingAccount.create({
-      tokenHash: hashToken(token),
-      name,
-      email,
-      passwordHash,
-      expiresAt: new Date(Date.now() + CONFIRM_WITHIN),
-    }),
-  );
-  mailer.send(confirmationMessage(email, name, settings.publicUrl, token));
+  await database.change(async (transaction) => {
+    await discardExpired(database, transaction);
+    const expiresAt = new Date(Date.now() + CONFIRM_WITHIN);
+    const mail = { to: email, kind: 'account', key: `sign-up ${hashToken(token)}`, expiresAt } as const;
+    if (known) {
+      const content = knownAddressMessage(known.name, settings.publicUrl);
+      await queueMail(dependencies, transaction, { ...mail, content });
+      return;
+    }
+    const pending = { tokenHash: hashToken(token), name, email, passwordHash, expiresAt };
+    await database.models.PendingAccount.create(pending, { transaction });
+    const content = confirmationMessage(name, settings.publicUrl, token);
+    await queueMail(dependencies, transaction, { ...mail, content });
+  });
 }
 
 /** Makes the account that a mailed link confirms. */
@@ -84,31 +83,48 @@ export async function confirmAccount({ database }: Dependencies, token: string):
 }
 
 /** Mails a link for a new password where the address has an account. */
-export async function requestReset(
-  { database, mailer, settings }: Dependencies,
-  email: string,
-): Promise<void> {
+export async function requestReset(dependencies: Dependencies, email: string): Promise<void> {
+  const { database, settings } = dependencies;
   const user = await database.models.User.findOne({ where: { email } });
-  if (user === null) return discardExpired(database);
   const token = makeToken();
-  await database.write(() =>
-    database.models.PasswordReset.create({
+  await database.change(async (transaction) => {
+    await discardExpired(database, transaction);
+    if (user === null) return;
+    const reset = {
       tokenHash: hashToken(token),
       userId: user.id,
       expiresAt: new Date(Date.now() + RESET_WITHIN),
-    }),
-  );
-  mailer.send(resetMessage(user.email, user.name, settings.publicUrl, token));
+    };
+    await database.models.PasswordReset.create(reset, { transaction });
+    await queueMail(dependencies, transaction, {
+      to: user.email,
+      kind: 'account',
+      content: resetMessage(user.name, settings.publicUrl, token),
+      key: `reset ${reset.tokenHash}`,
+      expiresAt: reset.expiresAt,
+    });
+  });
+}
+
+/** Tells the owner of an account that its password is another. */
+function queuePasswordChanged(dependencies: Dependencies, transaction: Transaction, user: User) {
+  return queueMail(dependencies, transaction, {
+    to: user.email,
+    kind: 'account',
+    content: passwordChangedMessage(user.name, dependencies.settings.publicUrl),
+    key: `password changed ${makeId()}`,
+  });
 }
 
 /** Sets a new password by a mailed link and ends every session of the account. */
 export async function resetPassword(
-  { database, passwords, mailer, settings }: Dependencies,
+  dependencies: Dependencies,
   { token, password }: { token: string; password: string },
 ): Promise<void> {
+  const { database, passwords } = dependencies;
   const { PasswordReset, User, SessionRecord } = database.models;
   const passwordHash = await passwords.hash(password);
-  const user = await database.change(async (transaction) => {
+  await database.change(async (transaction) => {
     const reset = await PasswordReset.findByPk(hashToken(token), { transaction });
     if (reset === null || reset.expiresAt < new Date()) throw refuseBadToken(SPENT);
     await PasswordReset.destroy({ where: { userId: reset.userId }, transaction });
@@ -116,17 +132,17 @@ export async function resetPassword(
     await User.update({ passwordHash }, { where: { id: reset.userId }, transaction });
     const owner = await User.findByPk(reset.userId, { transaction });
     await auditAccount(database, owner, 'password changed', transaction);
-    return owner;
+    if (owner) await queuePasswordChanged(dependencies, transaction, owner);
   });
-  if (user) mailer.send(passwordChangedMessage(user.email, user.name, settings.publicUrl));
 }
 
 /** Changes the password of someone signed in and ends all sessions; the caller begins a new one. */
 export async function changePassword(
-  { database, passwords, mailer, settings }: Dependencies,
+  dependencies: Dependencies,
   userId: string,
   { current, next }: { current: string; next: string },
 ): Promise<void> {
+  const { database, passwords } = dependencies;
   const { User, SessionRecord, PasswordReset } = database.models;
   const user = await User.findByPk(userId);
   if (user === null || !(await passwords.verify(user.passwordHash, current))) {
@@ -138,8 +154,8 @@ export async function changePassword(
     await PasswordReset.destroy({ where: { userId }, transaction });
     await SessionRecord.destroy({ where: { userId }, transaction });
     await auditAccount(database, user, 'password changed', transaction);
+    await queuePasswordChanged(dependencies, transaction, user);
   });
-  mailer.send(passwordChangedMessage(user.email, user.name, settings.publicUrl));
 }
 
 /** The user of an address and password, or null; takes as long for an unknown address. */

@@ -1,9 +1,8 @@
+import { createHash } from 'node:crypto';
 import { mkdir, readdir, readFile, rename, writeFile } from 'node:fs/promises';
 import { join } from 'node:path';
 
 import { simpleParser, type AddressObject } from 'mailparser';
-
-import { makeId } from '../ids';
 
 export interface StoredMail {
   id: string;
@@ -12,6 +11,9 @@ export interface StoredMail {
   subject: string;
   receivedAt: Date;
   text: string;
+  /** As it was sent; for a frame in which nothing runs. */
+  html: string;
+  unsubscribeUrl: string | null;
 }
 
 const FILE_NAME = /^(\d{13}-[A-Za-z0-9_-]{16})\.eml$/;
@@ -22,13 +24,25 @@ const addressText = (address: AddressObject | AddressObject[] | undefined): stri
     .map((entry) => entry.text)
     .join(', ');
 
+/** Names a message by its Message-ID, so that one handed over twice is kept once. */
+function nameOf(source: Buffer): string {
+  const head = source.toString('latin1').split(/\r?\n\r?\n/, 1)[0] ?? '';
+  const messageId = /^message-id:\s*(<[^>]+>)/im.exec(head)?.[1];
+  return createHash('sha256')
+    .update(messageId ?? source)
+    .digest('base64url')
+    .slice(0, 16);
+}
+
 /** Messages taken by the local mail server, one `.eml` file each, named by the time of arrival. */
 export class Mailbox {
   constructor(readonly folder: string) {}
 
   async store(source: Buffer): Promise<void> {
     await mkdir(this.folder, { recursive: true, mode: 0o700 });
-    const id = `${String(Date.now()).padStart(13, '0')}-${makeId()}`;
+    const name = nameOf(source);
+    if ((await this.fileNames()).some((id) => id.endsWith(`-${name}`))) return;
+    const id = `${String(Date.now()).padStart(13, '0')}-${name}`;
     const draft = join(this.folder, `${id}.part`);
     await writeFile(draft, source, { mode: 0o600 });
     await rename(draft, join(this.folder, `${id}.eml`));
@@ -53,6 +67,10 @@ export class Mailbox {
       subject: parsed.subject ?? '',
       receivedAt: new Date(Number(id.slice(0, 13))),
       text: parsed.text ?? '',
+      html: parsed.html || '',
+      unsubscribeUrl:
+        parsed.headerLines.find(({ key }) => key === 'list-unsubscribe')?.line.match(/<([^>]+)>/)?.[1] ??
+        null,
     };
   }
 

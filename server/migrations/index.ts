@@ -5,8 +5,9 @@ import { accountsAndLabs } from './001-accounts-and-labs';
 import type { Migration } from './migration';
 import { presetsAndLinks } from './002-presets-and-links';
 import { auditAndPurge } from './003-audit-and-purge';
+import { mailQueue } from './004-mail-queue';
 
-export const MIGRATIONS: readonly Migration[] = [accountsAndLabs, presetsAndLinks, auditAndPurge];
+export const MIGRATIONS: readonly Migration[] = [accountsAndLabs, presetsAndLinks, auditAndPurge, mailQueue];
 
 /** Steps the schema forward (`up`) and back (`down`); each step is a transaction of its own. */
 export function createMigrator(database: Database) {

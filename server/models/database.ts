@@ -3,6 +3,8 @@ import type { Sequelize, Transaction } from 'sequelize';
 import { defineAuditEntry } from './audit-entry';
 import { connectSqlite } from './connection';
 import { defineLab } from './lab';
+import { defineMailMessage } from './mail-message';
+import { defineMailSettings } from './mail-settings';
 import { defineMembership } from './membership';
 import { definePasswordReset } from './password-reset';
 import { definePendingAccount } from './pending-account';
@@ -27,6 +29,8 @@ function defineModels(sequelize: Sequelize) {
     PresetTag: definePresetTag(sequelize),
     ShareLink: defineShareLink(sequelize),
     AuditEntry: defineAuditEntry(sequelize),
+    MailMessage: defineMailMessage(sequelize),
+    MailSettings: defineMailSettings(sequelize),
   };
   models.Membership.belongsTo(models.User, { as: 'user', foreignKey: 'userId' });
   models.Membership.belongsTo(models.Lab, { as: 'lab', foreignKey: 'labId' });

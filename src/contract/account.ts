@@ -103,6 +103,8 @@ export const mailSchema = z.object({
   subject: z.string(),
   receivedAt: z.string(),
   text: z.string(),
+  html: z.string(),
+  unsubscribeUrl: z.string().nullable(),
 });
 
 /** GET /api/labs/:labId */

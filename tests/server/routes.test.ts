@@ -3,6 +3,7 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import type { PresetBody } from '@/contract/presets';
 import type { Role } from '@/contract/rights';
 
+import { makeUnsubscribeToken } from '../../server/mail/unsubscribe-token';
 import { DEMO_LAB } from '../../server/seeds/demo';
 import { sampleDocument, startTestServer, Visitor, type TestServer } from '../support/test-server';
 
@@ -67,6 +68,11 @@ beforeAll(async () => {
 });
 afterAll(() => server.close());
 
+const stopToken = () =>
+  makeUnsubscribeToken(
+    { address: 'someone@example.org', scope: 'all' },
+    server.dependencies.settings.sessionSecret,
+  );
 const save = () => ({ document: sampleDocument('Changed'), note: '', baseVersion: 999 });
 
 /** Every route that exists, with what each may get. Saves use a stale base, so that nothing changes: 409 means allowed. */
@@ -112,6 +118,20 @@ const rows = (): Row[] => [
       expect: { ...signedInOnly(403), supervisor: 400, outsider: 404 },
     },
   ]),
+  { method: 'get', path: '/account/mail', expect: signedInOnly(200) },
+  {
+    method: 'patch',
+    path: '/account/mail',
+    body: () => ({ timings: { account: 'off' } }),
+    expect: signedInOnly(400),
+  },
+  { method: 'patch', path: '/account/mail', body: () => ({ digestHour: 8 }), expect: signedInOnly(200) },
+  { method: 'get', path: '/mail/subscription?token=short', expect: all(400) },
+  { method: 'get', path: `/mail/subscription?token=${stopToken()}`, expect: all(200) },
+  { method: 'get', path: `/mail/unsubscribe?token=${stopToken()}`, expect: all(303) },
+  { method: 'post', path: `/mail/unsubscribe?token=${stopToken()}x`, expect: all(400) },
+  { method: 'post', path: `/mail/unsubscribe?token=${stopToken()}`, expect: all(200) },
+  { method: 'post', path: `/mail/subscribe-again?token=${stopToken()}`, expect: all(200) },
   { method: 'get', path: '/presets', expect: signedInOnly(200) },
   { method: 'get', path: '/presets/deleted', expect: signedInOnly(200) },
   { method: 'post', path: '/presets/none/bring-back', expect: signedInOnly(404) },

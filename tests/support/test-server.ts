@@ -94,12 +94,18 @@ export async function startTestServer(
   await seedStarters(database);
   const mailbox = new Mailbox(join(folder, 'mail'));
   const smtp: LocalSmtp = await startLocalSmtp(mailbox, logger);
-  const mailer = new Mailer(smtp.url, 'Moiety <moiety@example.org>', logger);
+  const secret = 'a secret that only tests know, long enough';
+  const publicUrl = 'http://moiety.test';
+  const mailer = new Mailer(
+    database,
+    { smtpUrl: smtp.url, from: 'Moiety <moiety@example.org>', publicUrl, secret },
+    logger,
+  );
   const demo = options.demo ?? true;
   const dependencies: Dependencies = {
     settings: {
-      publicUrl: 'http://moiety.test',
-      sessionSecret: 'a secret that only tests know, long enough',
+      publicUrl,
+      sessionSecret: secret,
       secureCookies: false,
       trustProxy: 0,
       demo,
@@ -130,8 +136,7 @@ export async function startTestServer(
       return visitor;
     },
     close: async () => {
-      await mailer.idle();
-      mailer.close();
+      await mailer.stop();
       await smtp.close();
       await database.close();
       rmSync(folder, { recursive: true, force: true });
