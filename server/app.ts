@@ -17,6 +17,7 @@ import { accountRoutes } from './routes/account-routes';
 import { auditRoutes } from './routes/audit-routes';
 import { demoRoutes } from './routes/demo-routes';
 import { healthRoutes } from './routes/health-routes';
+import { invitationRoutes } from './routes/invitation-routes';
 import { labRoutes } from './routes/lab-routes';
 import { mailSettingsRoutes, unsubscribeRoutes } from './routes/mail-routes';
 import { presetRoutes } from './routes/preset-routes';
@@ -39,6 +40,7 @@ function apiRouter(dependencies: Dependencies): Router {
     accountRoutes(dependencies),
     labRoutes(dependencies),
     auditRoutes(dependencies),
+    invitationRoutes(dependencies),
     mailSettingsRoutes(dependencies),
     presetRoutes(dependencies),
     sharedRoutes(dependencies),

@@ -1,9 +1,9 @@
 import { pino, type DestinationStream, type Logger } from 'pino';
 
-/** Addresses in logs lose the tokens that open things: share links and mailed links. */
+/** Addresses in logs lose the tokens that open things: share links, invitations and mailed links. */
 export function concealTokens(url: string): string {
   return url
-    .replace(/(\/shared\/)[^/?#]+/gi, '$1[token]')
+    .replace(/(\/(?:shared|invitations)\/)[^/?#]+/gi, '$1[token]')
     .replace(/([?&][^=&#]*token[^=&#]*=)[^&#]*/gi, '$1[token]');
 }
 

@@ -18,10 +18,14 @@ const daysAgo = () => new Date(Date.now() - KEPT);
 
 /** What a person may bring back: their own, and those of labs in which they may delete. */
 function recoverable(person: Person): WhereOptions {
+  const mine = person.memberships.map(({ labId }) => labId);
   const labs = person.memberships.filter(({ role }) => roleMay(role, 'delete lab presets'));
   return {
     deletedAt: { [Op.gte]: daysAgo() },
-    [Op.or]: [{ ownerId: person.id }, { labId: labs.map(({ labId }) => labId) }],
+    [Op.or]: [
+      { ownerId: person.id, labId: { [Op.or]: [null, mine] } },
+      { labId: labs.map(({ labId }) => labId) },
+    ],
   };
 }
 

@@ -36,7 +36,7 @@ export async function listPresets(
   const labs = person.memberships
     .filter(({ role }) => roleMay(role, 'view lab presets'))
     .map(({ labId }) => labId);
-  const visible = `p.deletedAt IS NULL AND (p.visibility = 'starter' OR p.ownerId = :me OR (p.visibility = 'lab' AND p.labId IN (:labs)))`;
+  const visible = `p.deletedAt IS NULL AND (p.visibility = 'starter' OR (p.visibility = 'private' AND p.ownerId = :me) OR (p.visibility = 'lab' AND p.labId IN (:labs)))`;
   const conditions = [visible];
   const match = wordsToMatch(query.search);
   if (query.search !== '') {

@@ -88,7 +88,7 @@ async function replaceTags(
 const audit = (
   { database }: Dependencies,
   transaction: Transaction,
-  actor: Person | null,
+  actor: { id: string; name: string } | null,
   action: AuditAction,
   { id, title, labId }: Pick<Preset, 'id' | 'title' | 'labId'>,
   details: Record<string, string | number> = {},
@@ -108,6 +108,46 @@ export interface NewPreset {
   labId: string | null;
 }
 
+interface CheckedPreset {
+  document: PresetDocument;
+  /** The document as it is kept. */
+  text: string;
+  note: string;
+  placed: { visibility: 'private' | 'lab'; labId: string | null };
+}
+
+/** Writes a preset with its first version, in the transaction of the change that it belongs to; its document has been checked. */
+export async function insertPreset(
+  dependencies: Dependencies,
+  transaction: Transaction,
+  owner: { id: string; name: string },
+  { document, text, note, placed }: CheckedPreset,
+): Promise<string> {
+  const { Preset, PresetVersion } = dependencies.database.models;
+  const id = makeId();
+  const now = new Date();
+  await Preset.create(
+    {
+      id,
+      ownerId: owner.id,
+      ...placed,
+      ...shownFields(document),
+      headNumber: 1,
+      createdAt: now,
+      changedAt: now,
+    },
+    { transaction },
+  );
+  await PresetVersion.create(
+    { presetId: id, number: 1, document: text, note, authorId: owner.id, savedAt: now },
+    { transaction },
+  );
+  await replaceTags(dependencies, id, document.tags, transaction);
+  const { title } = document;
+  await audit(dependencies, transaction, owner, 'preset created', { id, title, labId: placed.labId });
+  return id;
+}
+
 export async function createPreset(
   dependencies: Dependencies,
   person: Person,
@@ -115,33 +155,9 @@ export async function createPreset(
 ): Promise<PresetAndVersion> {
   const placed = placement(person, visibility, labId);
   const text = checkDocument(document);
-  const id = makeId();
-  const now = new Date();
-  const { Preset, PresetVersion } = dependencies.database.models;
-  await dependencies.database.change(async (transaction) => {
-    await Preset.create(
-      {
-        id,
-        ownerId: person.id,
-        ...placed,
-        ...shownFields(document),
-        headNumber: 1,
-        createdAt: now,
-        changedAt: now,
-      },
-      { transaction },
-    );
-    await PresetVersion.create(
-      { presetId: id, number: 1, document: text, note, authorId: person.id, savedAt: now },
-      { transaction },
-    );
-    await replaceTags(dependencies, id, document.tags, transaction);
-    await audit(dependencies, transaction, person, 'preset created', {
-      id,
-      title: document.title,
-      labId: placed.labId,
-    });
-  });
+  const id = await dependencies.database.change((transaction) =>
+    insertPreset(dependencies, transaction, person, { document, text, note, placed }),
+  );
   return readBack(dependencies, id);
 }
 

@@ -30,7 +30,9 @@ export async function readPerson(
     name: user.name,
     email: user.email,
     demo: user.demo,
-    memberships: memberships.map(({ labId, lab, role }) => ({ labId, labName: lab?.name ?? '', role })),
+    memberships: memberships
+      .map(({ labId, lab, role }) => ({ labId, labName: lab?.name ?? '', role }))
+      .sort((a, b) => a.labName.localeCompare(b.labName)),
   };
 }
 

@@ -6,8 +6,15 @@ import type { Migration } from './migration';
 import { presetsAndLinks } from './002-presets-and-links';
 import { auditAndPurge } from './003-audit-and-purge';
 import { mailQueue } from './004-mail-queue';
+import { invitations } from './005-invitations';
 
-export const MIGRATIONS: readonly Migration[] = [accountsAndLabs, presetsAndLinks, auditAndPurge, mailQueue];
+export const MIGRATIONS: readonly Migration[] = [
+  accountsAndLabs,
+  presetsAndLinks,
+  auditAndPurge,
+  mailQueue,
+  invitations,
+];
 
 /** Steps the schema forward (`up`) and back (`down`); each step is a transaction of its own. */
 export function createMigrator(database: Database) {

@@ -2,6 +2,8 @@ import type { Sequelize, Transaction } from 'sequelize';
 
 import { defineAuditEntry } from './audit-entry';
 import { connectSqlite } from './connection';
+import { defineInvitation } from './invitation';
+import { defineInvitationToken } from './invitation-token';
 import { defineLab } from './lab';
 import { defineMailMessage } from './mail-message';
 import { defineMailSettings } from './mail-settings';
@@ -21,6 +23,8 @@ function defineModels(sequelize: Sequelize) {
     User: defineUser(sequelize),
     Lab: defineLab(sequelize),
     Membership: defineMembership(sequelize),
+    Invitation: defineInvitation(sequelize),
+    InvitationToken: defineInvitationToken(sequelize),
     PendingAccount: definePendingAccount(sequelize),
     PasswordReset: definePasswordReset(sequelize),
     SessionRecord: defineSessionRecord(sequelize),
@@ -34,6 +38,9 @@ function defineModels(sequelize: Sequelize) {
   };
   models.Membership.belongsTo(models.User, { as: 'user', foreignKey: 'userId' });
   models.Membership.belongsTo(models.Lab, { as: 'lab', foreignKey: 'labId' });
+  models.Invitation.belongsTo(models.Lab, { as: 'lab', foreignKey: 'labId' });
+  models.Invitation.belongsTo(models.User, { as: 'inviter', foreignKey: 'invitedById' });
+  models.InvitationToken.belongsTo(models.Invitation, { as: 'invitation', foreignKey: 'invitationId' });
   models.Preset.belongsTo(models.User, { as: 'owner', foreignKey: 'ownerId' });
   models.Preset.belongsTo(models.Lab, { as: 'lab', foreignKey: 'labId' });
   models.PresetVersion.belongsTo(models.User, { as: 'author', foreignKey: 'authorId' });

@@ -1,5 +1,6 @@
 import {
   DataTypes,
+  type CreationOptional,
   type InferAttributes,
   type InferCreationAttributes,
   type Model,
@@ -15,6 +16,8 @@ export interface Membership extends Model<InferAttributes<Membership>, InferCrea
   userId: string;
   labId: string;
   role: Role;
+  /** Null for members of before it was kept. */
+  joinedAt: CreationOptional<Date | null>;
   user?: NonAttribute<User>;
   lab?: NonAttribute<Lab>;
 }
@@ -26,6 +29,7 @@ export function defineMembership(sequelize: Sequelize) {
       userId: { type: DataTypes.STRING, primaryKey: true },
       labId: { type: DataTypes.STRING, primaryKey: true },
       role: { type: DataTypes.STRING, allowNull: false, validate: { isIn: [[...ROLES]] } },
+      joinedAt: { type: DataTypes.DATE },
     },
     { tableName: 'memberships', timestamps: false },
   );

@@ -16,9 +16,14 @@ const BY_LAB: Partial<{ [R in PresetRight]: LabRight }> = {
   delete: 'delete lab presets',
 };
 
+/** What one opened to a lab stays with the lab when one goes. */
+function leftBehind(person: Person, { visibility, labId }: Record): boolean {
+  return visibility === 'lab' && !person.memberships.some((one) => one.labId === labId);
+}
+
 export function may(person: Person, right: PresetRight, preset: Record): boolean {
   if (preset.visibility === 'starter') return right === 'view' || right === 'duplicate';
-  if (preset.ownerId === person.id) return true;
+  if (preset.ownerId === person.id && !leftBehind(person, preset)) return true;
   const needed = BY_LAB[right];
   if (preset.visibility !== 'lab' || needed === undefined) return false;
   const role = person.memberships.find((one) => one.labId === preset.labId)?.role;

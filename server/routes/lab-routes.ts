@@ -1,32 +1,122 @@
-import { Router } from 'express';
+import { Router, type Request } from 'express';
 
-import type { LabBody } from '@/contract/account';
+import {
+  changeRoleSchema,
+  inviteSchema,
+  labNameBodySchema,
+  previewInvitationsSchema,
+  resendSchema,
+  type LabBody,
+} from '@/contract/labs';
 import { roleMay } from '@/contract/rights';
 
+import {
+  invite,
+  listInvitations,
+  resendInvitation,
+  withdrawInvitation,
+} from '../commands/invitation-commands';
+import { judgeInvitations } from '../commands/judge-invitations';
+import { createLab, renameLab } from '../commands/lab-commands';
+import { changeRole, describeDeparture, endMembership } from '../commands/member-commands';
 import type { Dependencies } from '../dependencies';
 import { refuseNotFound } from '../errors';
 import { requireSignedIn, signedIn } from '../middleware/current-user';
+import { parseBody } from '../middleware/parse';
+import { demandInLab } from '../policies/lab-policy';
+import { presentLab } from '../presenters/present-lab';
 
-export function labRoutes({ database }: Dependencies): Router {
+const labId = (request: Request) => String(request.params.labId);
+const userId = (request: Request) => String(request.params.userId);
+const invitationId = (request: Request) => String(request.params.invitationId);
+
+/** Labs, their members, and whom they invite. */
+export function labRoutes(dependencies: Dependencies): Router {
+  const { database } = dependencies;
+  const { Lab, Membership } = database.models;
   const router = Router();
-  router.get('/labs/:labId', requireSignedIn, async (request, response) => {
-    const mine = signedIn(request).memberships.find(({ labId }) => labId === request.params.labId);
-    if (mine === undefined || !roleMay(mine.role, 'view lab')) throw refuseNotFound();
-    const memberships = roleMay(mine.role, 'view members')
-      ? await database.models.Membership.findAll({
-          where: { labId: mine.labId },
-          include: [{ association: 'user' }],
-        })
-      : [];
-    const body: LabBody = {
-      id: mine.labId,
-      name: mine.labName,
-      role: mine.role,
-      members: memberships
-        .map(({ userId, role, user }) => ({ id: userId, name: user?.name ?? '', role }))
-        .sort((a, b) => a.name.localeCompare(b.name)),
-    };
-    response.json(body);
+  router.use('/labs', requireSignedIn);
+
+  /** The lab as it is now, for a person whose membership may just have changed. */
+  const readLab = async (personId: string, id: string): Promise<LabBody> => {
+    const memberships = await Membership.findAll({
+      where: { labId: id },
+      include: [{ association: 'user' }],
+    });
+    const lab = await Lab.findByPk(id);
+    const mine = memberships.find((one) => one.userId === personId);
+    if (lab === null || mine === undefined) throw refuseNotFound();
+    return presentLab(lab, mine.role, roleMay(mine.role, 'view members') ? memberships : []);
+  };
+
+  router.post('/labs', async (request, response) => {
+    const person = signedIn(request);
+    const id = await createLab(dependencies, person, parseBody(request, labNameBodySchema).name);
+    response.status(201).json(await readLab(person.id, id));
   });
+
+  router.get('/labs/:labId', async (request, response) => {
+    const person = signedIn(request);
+    demandInLab(person, 'view lab', labId(request));
+    response.json(await readLab(person.id, labId(request)));
+  });
+
+  router.patch('/labs/:labId', async (request, response) => {
+    const person = signedIn(request);
+    demandInLab(person, 'rename the lab', labId(request));
+    await renameLab(dependencies, person, labId(request), parseBody(request, labNameBodySchema).name);
+    response.json(await readLab(person.id, labId(request)));
+  });
+
+  router.patch('/labs/:labId/members/:userId', async (request, response) => {
+    const person = signedIn(request);
+    demandInLab(person, 'change roles', labId(request));
+    const { role } = parseBody(request, changeRoleSchema);
+    await changeRole(dependencies, person, labId(request), userId(request), role);
+    response.json(await readLab(person.id, labId(request)));
+  });
+
+  router.get('/labs/:labId/members/:userId/departure', async (request, response) => {
+    const person = signedIn(request);
+    const right = userId(request) === person.id ? 'leave the lab' : 'remove members';
+    demandInLab(person, right, labId(request));
+    response.json(await describeDeparture(dependencies, labId(request), userId(request)));
+  });
+
+  router.delete('/labs/:labId/members/:userId', async (request, response) => {
+    await endMembership(dependencies, signedIn(request), labId(request), userId(request));
+    response.status(204).end();
+  });
+
+  router.get('/labs/:labId/invitations', async (request, response) => {
+    response.json(await listInvitations(dependencies, signedIn(request), labId(request)));
+  });
+
+  router.post('/labs/:labId/invitations/preview', async (request, response) => {
+    demandInLab(signedIn(request), 'invite members', labId(request));
+    const { rows, role } = parseBody(request, previewInvitationsSchema);
+    response.json(await judgeInvitations(database, labId(request), rows, role));
+  });
+
+  router.post('/labs/:labId/invitations', async (request, response) => {
+    const person = signedIn(request);
+    demandInLab(person, 'invite members', labId(request));
+    await invite(dependencies, person, labId(request), parseBody(request, inviteSchema));
+    response.status(201).json(await listInvitations(dependencies, person, labId(request)));
+  });
+
+  router.post('/labs/:labId/invitations/:invitationId/resend', async (request, response) => {
+    const person = signedIn(request);
+    demandInLab(person, 'invite members', labId(request));
+    const { days } = parseBody(request, resendSchema);
+    await resendInvitation(dependencies, person, labId(request), invitationId(request), days);
+    response.json(await listInvitations(dependencies, person, labId(request)));
+  });
+
+  router.delete('/labs/:labId/invitations/:invitationId', async (request, response) => {
+    await withdrawInvitation(dependencies, signedIn(request), labId(request), invitationId(request));
+    response.status(204).end();
+  });
+
   return router;
 }

@@ -106,12 +106,3 @@ export const mailSchema = z.object({
   html: z.string(),
   unsubscribeUrl: z.string().nullable(),
 });
-
-/** GET /api/labs/:labId */
-export const labSchema = z.object({
-  id: z.string(),
-  name: z.string(),
-  role: z.enum(ROLES),
-  members: z.array(z.object({ id: z.string(), name: z.string(), role: z.enum(ROLES) })),
-});
-export type LabBody = z.infer<typeof labSchema>;

@@ -7,6 +7,11 @@ export const LAB_RIGHTS = {
   'view lab': ['supervisor', 'researcher', 'student', 'collaborator'],
   'view members': ['supervisor', 'researcher', 'student', 'collaborator'],
   'view lab history': ['supervisor'],
+  'invite members': ['supervisor'],
+  'change roles': ['supervisor'],
+  'remove members': ['supervisor'],
+  'rename the lab': ['supervisor'],
+  'leave the lab': ['supervisor', 'researcher', 'student', 'collaborator'],
   'view lab presets': ['supervisor', 'researcher', 'student', 'collaborator'],
   'create lab presets': ['supervisor', 'researcher', 'student'],
   'save lab presets': ['supervisor', 'researcher'],
@@ -26,6 +31,11 @@ export const PRESET_RIGHTS = [
 ] as const;
 export type PresetRight = (typeof PRESET_RIGHTS)[number];
 
+/** Roles that hold a right. */
+export function rolesThatMay(right: LabRight): readonly Role[] {
+  return LAB_RIGHTS[right];
+}
+
 export function roleMay(role: Role, right: LabRight): boolean {
-  return (LAB_RIGHTS[right] as readonly Role[]).includes(role);
+  return rolesThatMay(right).includes(role);
 }

@@ -73,6 +73,9 @@ const stopToken = () =>
     { address: 'someone@example.org', scope: 'all' },
     server.dependencies.settings.sessionSecret,
   );
+const inLab = (rest: string) => `/labs/${DEMO_LAB.id}${rest}`;
+/** For supervisors alone: others of the lab are refused, and for outsiders there is no such lab. */
+const supervised = (status: number) => ({ ...signedInOnly(403), supervisor: status, outsider: 404 });
 const save = () => ({ document: sampleDocument('Changed'), note: '', baseVersion: 999 });
 
 /** Every route that exists, with what each may get. Saves use a stale base, so that nothing changes: 409 means allowed. */
@@ -106,6 +109,77 @@ const rows = (): Row[] => [
   { method: 'delete', path: '/account/sessions/nothing', expect: signedInOnly(404) },
   { method: 'get', path: `/labs/${DEMO_LAB.id}`, expect: { ...signedInOnly(200), outsider: 404 } },
   { method: 'get', path: '/labs/none', expect: signedInOnly(404) },
+  { method: 'post', path: '/labs', body: () => ({ name: ' ' }), expect: signedInOnly(400) },
+  { method: 'post', path: '/labs', body: () => ({ name: 'A lab of one' }), expect: signedInOnly(201) },
+  { method: 'patch', path: inLab(''), body: () => ({ name: '' }), expect: supervised(400) },
+  { method: 'patch', path: inLab(''), body: () => ({ name: DEMO_LAB.name }), expect: supervised(200) },
+  {
+    method: 'patch',
+    path: inLab('/members/demo-student'),
+    body: () => ({ role: 'king' }),
+    expect: supervised(400),
+  },
+  {
+    method: 'patch',
+    path: inLab('/members/nobody'),
+    body: () => ({ role: 'student' }),
+    expect: supervised(404),
+  },
+  {
+    method: 'patch',
+    path: inLab('/members/demo-student'),
+    body: () => ({ role: 'student' }),
+    expect: supervised(200),
+  },
+  { method: 'get', path: inLab('/members/nobody/departure'), expect: supervised(404) },
+  {
+    method: 'get',
+    path: inLab('/members/demo-student/departure'),
+    expect: { ...supervised(200), student: 200 },
+  },
+  { method: 'delete', path: inLab('/members/nobody'), expect: supervised(404) },
+  { method: 'get', path: inLab('/invitations'), expect: supervised(200) },
+  { method: 'post', path: inLab('/invitations/preview'), body: () => ({}), expect: supervised(400) },
+  {
+    method: 'post',
+    path: inLab('/invitations/preview'),
+    body: () => ({ role: 'student', rows: [{ line: 1, email: 'x', role: '' }] }),
+    expect: supervised(200),
+  },
+  {
+    method: 'post',
+    path: inLab('/invitations'),
+    body: () => ({ invitations: [{ email: 'no address', role: 'student' }] }),
+    expect: supervised(400),
+  },
+  {
+    method: 'post',
+    path: inLab('/invitations'),
+    body: () => ({ invitations: [{ email: 'new@example.org', role: 'student' }] }),
+    expect: supervised(201),
+  },
+  {
+    method: 'post',
+    path: inLab('/invitations/none/resend'),
+    body: () => ({ days: 0 }),
+    expect: supervised(400),
+  },
+  { method: 'post', path: inLab('/invitations/none/resend'), body: () => ({}), expect: supervised(404) },
+  { method: 'delete', path: inLab('/invitations/none'), expect: supervised(404) },
+  { method: 'get', path: '/invitations/wrong', expect: all(404) },
+  { method: 'post', path: '/invitations/wrong/accept', expect: signedInOnly(404) },
+  { method: 'post', path: '/invitations/wrong/confirm-address', expect: signedInOnly(404) },
+  { method: 'post', path: '/invitations/wrong/decline', expect: all(404) },
+  { method: 'post', path: '/invitations/wrong/sign-up', body: () => ({}), expect: all(400) },
+  {
+    method: 'post',
+    path: '/invitations/wrong/sign-up',
+    body: () => ({ name: 'X', password: 'long enough here' }),
+    expect: all(404),
+  },
+  { method: 'get', path: '/account/invitations', expect: signedInOnly(200) },
+  { method: 'post', path: '/account/invitations/none/accept', expect: signedInOnly(404) },
+  { method: 'post', path: '/account/invitations/none/decline', expect: signedInOnly(404) },
   ...['audit', 'audit.csv'].flatMap((name): Row[] => [
     {
       method: 'get',
@@ -310,7 +384,11 @@ describe('every route with every role', () => {
         .replace(/\/presets\/none/, '/presets/:id')
         .replace(/\/versions\/\d+/, '/versions/:number')
         .replace(/\/links\/none/, '/links/:linkId')
-        .replace(/\/labs\/[^/]*/, '/labs/:labId')
+        .replace(/\/labs\/[^/]+/, '/labs/:labId')
+        .replace(/\/members\/[^/]+/, '/members/:userId')
+        .replace(/^\/invitations\/wrong/, '/invitations/:token')
+        .replace(/^(\/labs\/:labId\/invitations)\/none/, '$1/:invitationId')
+        .replace(/^\/account\/invitations\/none/, '/account/invitations/:id')
         .replace(/\?.*/, '')
         .replace(new RegExp(`/shared/(${token}|none)`), '/shared/:token')
         .replace(/\/sessions\/nothing/, '/sessions/:id')

@@ -1,7 +1,7 @@
 import { useQuery } from '@tanstack/react-query';
 
 import { ErrorState, LoadingState, PageState } from '@/components/states/page-state';
-import { labSchema } from '@/contract/account';
+import { labSchema } from '@/contract/labs';
 import { LAB_RIGHTS, roleMay, type LabRight } from '@/contract/rights';
 import { api } from '@/lib/api-client';
 import { useSession } from '@/lib/session';
