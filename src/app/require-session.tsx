@@ -17,6 +17,12 @@ export function RequireSession() {
       />
     );
   if (!session.data.user)
-    return <Navigate to="/sign-in" replace state={{ from: `${location.pathname}${location.search}` }} />;
+    return (
+      <Navigate
+        to="/sign-in"
+        replace
+        state={{ from: `${location.pathname}${location.search}${location.hash}` }}
+      />
+    );
   return <Outlet />;
 }

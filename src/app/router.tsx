@@ -12,6 +12,8 @@ const SignUpPage = lazy(() => import('@/features/account/sign-up-page'));
 const ConfirmPage = lazy(() => import('@/features/account/confirm-page'));
 const ForgottenPage = lazy(() => import('@/features/account/forgotten-page'));
 const ResetPage = lazy(() => import('@/features/account/reset-page'));
+const JoinPage = lazy(() => import('@/features/account/join-page'));
+const UnsubscribePage = lazy(() => import('@/features/account/unsubscribe-page'));
 const AccountPage = lazy(() => import('@/features/account/account-page'));
 const MailPage = lazy(() => import('@/features/account/mail-page'));
 const DeskPage = lazy(() => import('@/features/library/desk-page'));
@@ -50,6 +52,8 @@ export function createRouter() {
             { path: '/forgotten', element: <ForgottenPage /> },
             { path: '/reset', element: <ResetPage /> },
             { path: '/mail', element: <MailPage /> },
+            { path: '/join', element: <JoinPage /> },
+            { path: '/unsubscribe', element: <UnsubscribePage /> },
             {
               element: <RequireSession />,
               children: [

@@ -5,6 +5,7 @@ import { useRefreshSession, useSession } from '@/lib/session';
 
 import { changeName, changePassword } from './api/account-operations';
 import { AccountForm } from './components/account-form';
+import { MailSettings } from './components/mail-settings';
 import { SessionList } from './components/session-list';
 
 export default function AccountPage() {
@@ -66,6 +67,7 @@ export default function AccountPage() {
           ]}
         />
       </section>
+      <MailSettings />
       <SessionList />
     </div>
   );

@@ -2,6 +2,7 @@ import { useQuery } from '@tanstack/react-query';
 import { useState } from 'react';
 
 import { ErrorState, LoadingState, PageState } from '@/components/states/page-state';
+import { Button } from '@/components/ui/button';
 import { formatDayAndTime } from '@/lib/format';
 import { joinClasses } from '@/lib/join-classes';
 
@@ -26,8 +27,25 @@ function MailText({ text }: { readonly text: string }) {
   );
 }
 
+/**
+ * HTML as a mail program shows it: an origin of its own, no scripts, no forms, nothing fetched. Links may open a
+ * page beside this one.
+ */
+function MailFrame({ title, html }: { readonly title: string; readonly html: string }) {
+  return (
+    <iframe
+      title={`HTML of “${title}”`}
+      sandbox="allow-popups allow-popups-to-escape-sandbox"
+      referrerPolicy="no-referrer"
+      className="h-[32rem] w-full rounded-md border bg-white"
+      srcDoc={html}
+    />
+  );
+}
+
 function Message({ id }: { readonly id: string }) {
   const mail = useQuery({ queryKey: ['demo-mail', id], queryFn: () => fetchMail(id) });
+  const [view, setView] = useState<'text' | 'html'>('text');
   if (mail.isPending) return <LoadingState label="Opening the message…" />;
   if (mail.isError) return <ErrorState error={mail.error} />;
   return (
@@ -36,7 +54,27 @@ function Message({ id }: { readonly id: string }) {
       <p className="text-sm text-muted">
         from {mail.data.from} to {mail.data.to}, {formatDayAndTime(mail.data.receivedAt)}
       </p>
-      <MailText text={mail.data.text} />
+      <div role="group" aria-label="Show as" className="flex flex-wrap items-center gap-1.5">
+        {(['text', 'html'] as const).map((one) => (
+          <Button
+            key={one}
+            size="small"
+            aria-pressed={view === one}
+            look={view === one ? 'plain' : 'quiet'}
+            onClick={() => setView(one)}
+          >
+            {one === 'text' ? 'Plain text' : 'HTML'}
+          </Button>
+        ))}
+        {mail.data.unsubscribeUrl ? (
+          <span className="text-sm text-muted">with a one-click header to unsubscribe</span>
+        ) : null}
+      </div>
+      {view === 'text' ? (
+        <MailText text={mail.data.text} />
+      ) : (
+        <MailFrame title={mail.data.subject} html={mail.data.html} />
+      )}
     </article>
   );
 }

@@ -1,71 +1,96 @@
 import { useQuery } from '@tanstack/react-query';
+import { useState } from 'react';
+import { useNavigate } from 'react-router-dom';
 
 import { ErrorState, LoadingState, PageState } from '@/components/states/page-state';
-import { labSchema } from '@/contract/labs';
-import { LAB_RIGHTS, roleMay, type LabRight } from '@/contract/rights';
-import { api } from '@/lib/api-client';
-import { useSession } from '@/lib/session';
+import { Button } from '@/components/ui/button';
+import { roleMay } from '@/contract/rights';
+import { useRefreshSession, useSession } from '@/lib/session';
 
-function Lab({ id }: { readonly id: string }) {
-  const lab = useQuery({
-    queryKey: ['lab', id],
-    queryFn: () => api.get(`/labs/${encodeURIComponent(id)}`, labSchema),
-  });
+import { createLab, fetchLab, LAB_KEYS } from './api/lab-operations';
+import { DepartureDialog } from './components/departure-dialog';
+import { InvitationList } from './components/invitation-list';
+import { LabHeading } from './components/lab-heading';
+import { MemberList } from './components/member-list';
+import { NameDialog } from './components/name-dialog';
+import { OwnInvitations } from './components/own-invitations';
+import { RoleRights } from './components/role-rights';
+import { useCurrentLab } from './use-current-lab';
+
+function Lab({ id, onNew }: { readonly id: string; readonly onNew: () => void }) {
+  const me = useSession().data?.user?.id ?? '';
+  const refresh = useRefreshSession();
+  const navigate = useNavigate();
+  const [leaving, setLeaving] = useState(false);
+  const lab = useQuery({ queryKey: LAB_KEYS.lab(id), queryFn: () => fetchLab(id) });
   if (lab.isPending) return <LoadingState label="Reading the lab…" />;
   if (lab.isError) return <ErrorState error={lab.error} />;
-  const rights = (Object.keys(LAB_RIGHTS) as LabRight[]).map((right) => ({
-    right,
-    may: roleMay(lab.data.role, right),
-  }));
+  const mayInvite = roleMay(lab.data.role, 'invite members');
   return (
-    <section className="grid gap-6" aria-label={lab.data.name}>
-      <div>
-        <h2 className="text-2xl">{lab.data.name}</h2>
-        <p className="text-muted">You are a {lab.data.role} here.</p>
+    <>
+      <LabHeading lab={lab.data} onNew={onNew} onLeave={() => setLeaving(true)} />
+      <div className={mayInvite ? 'grid gap-8 lg:grid-cols-2' : 'grid max-w-3xl gap-8'}>
+        <MemberList lab={lab.data} />
+        {mayInvite ? <InvitationList labId={id} /> : null}
       </div>
-      <div className="grid gap-8 md:grid-cols-2">
-        <div className="grid content-start gap-2">
-          <h3 className="text-lg">Members</h3>
-          <ul className="divide-y rounded-lg border bg-raised">
-            {lab.data.members.map((member) => (
-              <li key={member.id} className="flex justify-between gap-3 px-4 py-2.5">
-                <span>{member.name}</span>
-                <span className="text-muted">{member.role}</span>
-              </li>
-            ))}
-          </ul>
-        </div>
-        <div className="grid content-start gap-2">
-          <h3 className="text-lg">What your role may do</h3>
-          <ul className="divide-y rounded-lg border bg-raised">
-            {rights.map(({ right, may }) => (
-              <li key={right} className="flex justify-between gap-3 px-4 py-2.5">
-                <span className={may ? '' : 'text-muted'}>{right}</span>
-                <span className={may ? 'text-accent' : 'text-muted'}>{may ? 'yes' : 'no'}</span>
-              </li>
-            ))}
-          </ul>
-        </div>
-      </div>
-    </section>
+      <RoleRights role={lab.data.role} />
+      {leaving ? (
+        <DepartureDialog
+          lab={lab.data}
+          userId={me}
+          leaving
+          onClose={() => setLeaving(false)}
+          onDone={() => {
+            setLeaving(false);
+            void navigate('/lab', { replace: true });
+            void refresh();
+          }}
+        />
+      ) : null}
+    </>
   );
 }
 
+/** One lab at a time, and the ways to others: switching, founding, joining. */
 export default function LabPage() {
-  const memberships = useSession().data?.user?.memberships ?? [];
-  if (memberships.length === 0) {
-    return (
-      <PageState title="You are in no lab">
-        Your presets are private to you, and you can share any of them by link.
-      </PageState>
-    );
-  }
+  const { current, choose } = useCurrentLab();
+  const refresh = useRefreshSession();
+  const [founding, setFounding] = useState(false);
+
+  const handleFound = async (name: string) => {
+    const made = await createLab(name);
+    await refresh();
+    choose(made.id);
+  };
+
   return (
-    <div className="mx-auto grid max-w-4xl gap-10 px-4 py-8">
-      <h1 className="sr-only">Lab</h1>
-      {memberships.map((membership) => (
-        <Lab key={membership.labId} id={membership.labId} />
-      ))}
+    <div className="mx-auto grid max-w-6xl gap-8 px-4 py-8">
+      <OwnInvitations onJoined={choose} />
+      {current ? (
+        <Lab key={current.labId} id={current.labId} onNew={() => setFounding(true)} />
+      ) : (
+        <PageState
+          title="You are in no lab"
+          actions={
+            <Button look="primary" onClick={() => setFounding(true)}>
+              New lab
+            </Button>
+          }
+        >
+          Your presets are private to you, and you can share any of them by link. Found a lab to work with
+          others, or ask a supervisor to invite you.
+        </PageState>
+      )}
+      {founding ? (
+        <NameDialog
+          title="New lab"
+          description="You supervise it, and invite others afterwards."
+          initial=""
+          submitLabel="Make the lab"
+          onSubmit={handleFound}
+          onClose={() => setFounding(false)}
+        />
+      ) : null}
     </div>
   );
 }
