@@ -1,6 +1,7 @@
 import type { PresetDocument } from '../engine/schema/preset';
 import { SPREAD_KEY, traitDialKey, traitEntrySymbol } from '../engine/schema/symbols';
-import type { Freedom, SweepRange } from './assigned-sweeps';
+import type { Freedom } from './assigned-sweeps';
+import type { SweepRange } from './kept-sweep';
 
 /** Every number of a model that a key names: parameters, trait values and dials. */
 function numbersOf(document: PresetDocument): Map<string, number> {
