@@ -1,24 +1,20 @@
-import { lazy } from 'react';
+import type { ComponentType } from 'react';
 import { createBrowserRouter, Outlet, ScrollRestoration } from 'react-router-dom';
 
 import { SiteLayout } from '@/components/layout/site-layout';
+import { LoadingState } from '@/components/states/page-state';
 
 import { RequireSession } from './require-session';
 import { NotFound, RouteError } from './route-error';
-import { WorkbenchRoute } from './workbench-route';
 
-const SignInPage = lazy(() => import('@/features/account/sign-in-page'));
-const SignUpPage = lazy(() => import('@/features/account/sign-up-page'));
-const ConfirmPage = lazy(() => import('@/features/account/confirm-page'));
-const ForgottenPage = lazy(() => import('@/features/account/forgotten-page'));
-const ResetPage = lazy(() => import('@/features/account/reset-page'));
-const JoinPage = lazy(() => import('@/features/account/join-page'));
-const UnsubscribePage = lazy(() => import('@/features/account/unsubscribe-page'));
-const AccountPage = lazy(() => import('@/features/account/account-page'));
-const MailPage = lazy(() => import('@/features/account/mail-page'));
-const DeskPage = lazy(() => import('@/features/library/desk-page'));
-const LibraryPage = lazy(() => import('@/features/library/library-page'));
-const LabPage = lazy(() => import('@/features/lab/lab-page'));
+/** A page in a chunk of its own. The router waits for it, so that no placeholder flashes. */
+const page = (load: () => Promise<{ readonly default: ComponentType }>) => async () => ({
+  Component: (await load()).default,
+});
+const workbench = (kind: 'new' | 'preset' | 'shared') => async () => {
+  const { WorkbenchRoute } = await import('./workbench-route');
+  return { element: <WorkbenchRoute kind={kind} /> };
+};
 
 function Root() {
   return (
@@ -34,33 +30,34 @@ export function createRouter() {
     {
       element: <Root />,
       errorElement: <RouteError />,
+      hydrateFallbackElement: <LoadingState label="Opening Moiety…" />,
       children: [
-        { path: '/s/:token', element: <WorkbenchRoute kind="shared" /> },
+        { path: '/s/:token', lazy: workbench('shared') },
         {
           element: <RequireSession />,
           children: [
-            { path: '/presets/new', element: <WorkbenchRoute kind="new" /> },
-            { path: '/presets/:id', element: <WorkbenchRoute kind="preset" /> },
+            { path: '/presets/new', lazy: workbench('new') },
+            { path: '/presets/:id', lazy: workbench('preset') },
           ],
         },
         {
           element: <SiteLayout />,
           children: [
-            { path: '/sign-in', element: <SignInPage /> },
-            { path: '/sign-up', element: <SignUpPage /> },
-            { path: '/confirm', element: <ConfirmPage /> },
-            { path: '/forgotten', element: <ForgottenPage /> },
-            { path: '/reset', element: <ResetPage /> },
-            { path: '/mail', element: <MailPage /> },
-            { path: '/join', element: <JoinPage /> },
-            { path: '/unsubscribe', element: <UnsubscribePage /> },
+            { path: '/sign-in', lazy: page(() => import('@/features/account/sign-in-page')) },
+            { path: '/sign-up', lazy: page(() => import('@/features/account/sign-up-page')) },
+            { path: '/confirm', lazy: page(() => import('@/features/account/confirm-page')) },
+            { path: '/forgotten', lazy: page(() => import('@/features/account/forgotten-page')) },
+            { path: '/reset', lazy: page(() => import('@/features/account/reset-page')) },
+            { path: '/mail', lazy: page(() => import('@/features/account/mail-page')) },
+            { path: '/join', lazy: page(() => import('@/features/account/join-page')) },
+            { path: '/unsubscribe', lazy: page(() => import('@/features/account/unsubscribe-page')) },
             {
               element: <RequireSession />,
               children: [
-                { path: '/', element: <DeskPage /> },
-                { path: '/presets', element: <LibraryPage /> },
-                { path: '/lab', element: <LabPage /> },
-                { path: '/account', element: <AccountPage /> },
+                { path: '/', lazy: page(() => import('@/features/library/desk-page')) },
+                { path: '/presets', lazy: page(() => import('@/features/library/library-page')) },
+                { path: '/lab', lazy: page(() => import('@/features/lab/lab-page')) },
+                { path: '/account', lazy: page(() => import('@/features/account/account-page')) },
               ],
             },
             { path: '*', element: <NotFound /> },

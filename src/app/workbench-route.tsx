@@ -1,17 +1,10 @@
-import { lazy, Suspense } from 'react';
 import { useParams } from 'react-router-dom';
 
-import { LoadingState } from '@/components/states/page-state';
-
-const WorkbenchPage = lazy(() => import('@/features/workbench/workbench-page'));
+import WorkbenchPage from '@/features/workbench/workbench-page';
 
 /** The workbench fills the window and has its own header; it is a chunk of its own. */
 export function WorkbenchRoute({ kind }: { readonly kind: 'new' | 'preset' | 'shared' }) {
   const { id = '', token = '' } = useParams();
   const source = kind === 'new' ? { kind } : kind === 'preset' ? { kind, id } : { kind, token };
-  return (
-    <Suspense fallback={<LoadingState label="Opening the workbench…" />}>
-      <WorkbenchPage key={`${kind}:${id}${token}`} source={source} />
-    </Suspense>
-  );
+  return <WorkbenchPage key={`${kind}:${id}${token}`} source={source} />;
 }

@@ -2,6 +2,8 @@ import type { z } from 'zod';
 
 import { errorBodySchema, type ErrorBody } from '@/contract/errors';
 
+import { takeEarly } from './early-requests';
+
 /** A refusal by the server, or no answer from it, in words that can be shown. */
 export class ApiError extends Error {
   readonly status: number;
@@ -52,13 +54,14 @@ async function send(method: Method, path: string, body?: unknown, signal?: Abort
   if (method !== 'GET') headers['x-csrf-token'] = csrfToken;
   let response: Response;
   try {
-    response = await fetch(`/api${path}`, {
-      method,
-      headers,
-      credentials: 'same-origin',
-      ...(body === undefined ? {} : { body: JSON.stringify(body) }),
-      ...(signal ? { signal } : {}),
-    });
+    response = await ((method === 'GET' && takeEarly(path)) ||
+      fetch(`/api${path}`, {
+        method,
+        headers,
+        credentials: 'same-origin',
+        ...(body === undefined ? {} : { body: JSON.stringify(body) }),
+        ...(signal ? { signal } : {}),
+      }));
   } catch (cause) {
     if (cause instanceof DOMException && cause.name === 'AbortError') throw cause;
     throw new ApiError(0, {

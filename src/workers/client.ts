@@ -3,6 +3,7 @@ import { proxy } from 'comlink';
 import type { AnalysisResultOf } from '../engine/analyses/contract';
 import type { Progress } from '../engine/continuation/contract';
 import type { AnalysisTask } from '../engine/schema/analysis-tasks';
+import { createEngineWorker } from './create-engine-worker';
 import { EngineWorkerHost, type WorkerLike } from './engine-worker-host';
 import { NewestWins } from './newest-wins';
 import type { EngineClient, ExploreRequest, ExploreResult } from './protocol';
@@ -10,27 +11,22 @@ import type { EngineClient, ExploreRequest, ExploreResult } from './protocol';
 export { EngineStopped } from './engine-worker-host';
 export type { EngineClient } from './protocol';
 
-function createEngineWorker(): WorkerLike {
-  return new Worker(new URL('./engine.worker.ts', import.meta.url), { type: 'module' });
-}
-
 /**
  * The engine in two workers of its own: one answers live requests, the newest first, and one runs the
- * long jobs, so that a sweep never holds up a slider. Both are given every model.
+ * long jobs, so that a sweep never holds up a slider. Both are given every model; the second starts with its first job.
  *
  * @param createWorker replaced in tests
  */
 export function createEngineClient(createWorker: () => WorkerLike = createEngineWorker): EngineClient {
   const live = new EngineWorkerHost(createWorker);
-  const jobs = new EngineWorkerHost(createWorker);
+  const jobs = new EngineWorkerHost(createWorker, 'call');
   const explore = new NewestWins<ExploreRequest, ExploreResult>((request) =>
     live.call((api) => api.explore(request)),
   );
   return {
     async setModel(document) {
       const report = live.call((api) => api.setModel(document));
-      const same = jobs.call((api) => api.setModel(document));
-      same.catch(() => undefined);
+      if (!jobs.isResting) jobs.call((api) => api.setModel(document)).catch(() => undefined);
       const answer = await report;
       if (answer.valid) {
         live.remember(document);
@@ -54,7 +50,7 @@ export function createEngineClient(createWorker: () => WorkerLike = createEngine
     },
     secondOpinion: (request) => jobs.call((api) => api.secondOpinion(request)),
     cancel(job) {
-      jobs.call((api) => api.cancel(job)).catch(() => undefined);
+      if (!jobs.isResting) jobs.call((api) => api.cancel(job)).catch(() => undefined);
     },
     dispose() {
       live.dispose();

@@ -26,14 +26,26 @@ export class EngineWorkerHost {
   private document: PresetDocument | null = null;
   private crashes = 0;
   private disposed = false;
+  private resting = false;
   private readonly owed = new Set<(reason: Error) => void>();
 
-  constructor(private readonly createWorker: () => WorkerLike) {
-    this.start();
+  /** @param startsAt `call` waits with the worker until it is first asked something. */
+  constructor(
+    private readonly createWorker: () => WorkerLike,
+    startsAt: 'once' | 'call' = 'once',
+  ) {
+    if (startsAt === 'once') this.start();
+    else this.resting = true;
+  }
+
+  /** Whether nothing has been asked of it yet. */
+  get isResting(): boolean {
+    return this.resting;
   }
 
   /** Calls the engine; rejected with `EngineStopped` if the worker dies before it answers. */
   call<Result>(ask: (api: Remote<EngineApi>) => Promise<Result>): Promise<Result> {
+    if (this.resting && !this.disposed) this.start();
     const { api } = this;
     if (!api) return Promise.reject(new EngineStopped(this.disposed ? CLOSED : BROKEN));
     return new Promise<Result>((resolve, reject) => {
@@ -58,6 +70,7 @@ export class EngineWorkerHost {
   }
 
   private start(): void {
+    this.resting = false;
     const worker = this.createWorker();
     this.worker = worker;
     worker.addEventListener('error', this.handleCrash);

@@ -1,7 +1,5 @@
-import { Suspense } from 'react';
 import { NavLink, Outlet } from 'react-router-dom';
 
-import { LoadingState } from '@/components/states/page-state';
 import { joinClasses } from '@/lib/join-classes';
 import { useSession } from '@/lib/session';
 
@@ -45,9 +43,7 @@ export function SiteLayout() {
         ) : null}
       </AppHeader>
       <main id="page" tabIndex={-1} className="flex-1 outline-none">
-        <Suspense fallback={<LoadingState label="Opening the page…" />}>
-          <Outlet />
-        </Suspense>
+        <Outlet />
       </main>
     </div>
   );

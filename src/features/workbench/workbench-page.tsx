@@ -14,9 +14,10 @@ import { originOf } from './dialogs/origin-of';
 import { draftKey } from './drafts/draft-key';
 import { DraftOffer } from './drafts/draft-offer';
 import { forgetDraft, readDraft } from './drafts/draft-storage';
+import { useEngineDriver } from './engine';
 import { handedOver, settleHandOver } from './state/hand-over';
 import { sameDocument } from './state/same-document';
-import { createWorkbenchStore, WorkbenchContext, type Origin } from './state/store';
+import { createWorkbenchStore, useWorkbench, WorkbenchContext, type Origin } from './state/store';
 import { Workbench } from './workbench';
 
 export type WorkbenchSource =
@@ -37,6 +38,13 @@ async function openSource(source: WorkbenchSource, signedIn: boolean, signal: Ab
   }
   const body = await fetchPreset(source.id, signal);
   return { document: body.document, origin: originOf(body) };
+}
+
+/** The engine begins with the first commit, and works while the bench is drawn in the second. */
+function RunningBench({ draftKey: key }: { readonly draftKey: string | null }) {
+  useEngineDriver();
+  const begun = useWorkbench((state) => state.engine !== null);
+  return begun ? <Workbench draftKey={key} /> : <LoadingState label="Opening the preset…" />;
 }
 
 /** The bench with what was opened on it; an earlier visit's draft is offered first. */
@@ -70,7 +78,7 @@ function OpenedBench({ opened, userId }: { readonly opened: Opened; readonly use
   };
   return (
     <WorkbenchContext.Provider value={store}>
-      <Workbench draftKey={draft ? null : key} />
+      <RunningBench draftKey={draft ? null : key} />
       {draft ? (
         <DraftOffer draft={draft} version={version} onRestore={handleRestore} onDiscard={handleDiscard} />
       ) : null}

@@ -3,7 +3,6 @@ import { useShortcuts } from './commands/use-shortcuts';
 import { BenchDialogs } from './dialogs/bench-dialogs';
 import { LeaveGuard } from './drafts/leave-guard';
 import { useKeepDraft } from './drafts/use-keep-draft';
-import { useEngineDriver } from './engine';
 import { Findings } from './findings';
 import { WorkbenchHeader } from './header/workbench-header';
 import { BenchLayout } from './layout/bench-layout';
@@ -22,7 +21,6 @@ export function Workbench({ draftKey }: { readonly draftKey: string | null }) {
   const context = useCommandContext();
   const readOnly = useMedia(PHONE);
   const unbegun = useWorkbench((state) => isUnbegun(state.document));
-  useEngineDriver();
   useShortcuts(context);
   useViewInUrl();
   useKeepDraft(draftKey);

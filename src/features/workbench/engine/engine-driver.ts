@@ -1,5 +1,5 @@
 import type { PresetDocument } from '@/engine/schema/preset';
-import type { EngineClient, ExploreRequest } from '@/workers/protocol';
+import type { EngineClient, ExploreRequest, ExploreResult } from '@/workers/protocol';
 
 import type { WorkbenchStore } from '../state/store';
 
@@ -22,6 +22,8 @@ export class EngineDriver {
   private readonly jobs: EngineJobs;
   private compiled: PresetDocument | null = null;
   private asked: Asked | null = null;
+  /** The first look, asked for before the model's report has come. */
+  private ahead: { readonly document: PresetDocument; readonly answer: Promise<ExploreResult> } | null = null;
   private mode: 'track' | 'search' = 'search';
   private running = false;
   private stopped = false;
@@ -44,7 +46,8 @@ export class EngineDriver {
       else if (state.planeRequest !== previous.planeRequest) this.schedule();
     });
     this.store.getState().set({ engine: this.jobs.actions });
-    this.schedule();
+    // At once, not with the next frame: the engine works while the page is drawn for the first time.
+    void this.pump();
   }
 
   stop(): void {
@@ -118,7 +121,11 @@ export class EngineDriver {
 
   private async compile(document: PresetDocument): Promise<void> {
     const restructured = !this.compiled || !sameStructure(this.compiled, document);
-    const report = await this.engine.setModel(document);
+    const compiling = this.engine.setModel(document);
+    // The first look is asked for in the same breath; of a model with mistakes nothing comes of it.
+    if (this.compiled === null) this.ahead = { document, answer: this.engine.explore(this.firstRequest()) };
+    this.ahead?.answer.catch(() => undefined);
+    const report = await compiling;
     if (this.stopped) return;
     this.compiled = document;
     if (restructured) this.asked = null;
@@ -150,14 +157,22 @@ export class EngineDriver {
     };
   }
 
+  private firstRequest(): ExploreRequest {
+    return { ...this.request(), equilibria: 'none' };
+  }
+
   private async explore(): Promise<void> {
     const { document, planeRequest } = this.store.getState();
     // The first picture does not wait for the search: trajectories at once, equilibria with the next look.
     const first = this.store.getState().result === null && this.mode === 'search';
-    const request = first ? { ...this.request(), equilibria: 'none' as const } : this.request();
+    const request = first ? this.firstRequest() : this.request();
     this.asked = first ? null : { document, plane: planeRequest };
     performance.mark('moiety:explore-asked');
-    const answer = await this.engine.explore(request);
+    const { ahead } = this;
+    this.ahead = null;
+    const answer = await (first && ahead?.document === document
+      ? ahead.answer
+      : this.engine.explore(request));
     if (this.stopped) return;
     performance.measure('moiety:explore', 'moiety:explore-asked');
     const before = this.store.getState();

@@ -1,8 +1,9 @@
 import { Plus, X } from 'lucide-react';
-import { lazy, Suspense, useMemo } from 'react';
+import { useMemo } from 'react';
 
 import { Menu, MenuChoice } from '@/components/layout/menu';
 import { PANE_VIEWS, type PaneView, type Quantity } from '@/engine/schema/preset';
+import { part } from '@/lib/part';
 
 import { useWorkbench } from '../state/store';
 import { axisOptions } from './axes-of-view';
@@ -17,7 +18,7 @@ import { LongRunView } from '../long-run/long-run-view';
 import { TwoParametersView } from '../two-parameters/two-parameters-view';
 import { TrajectoriesView } from './views/trajectories-view';
 
-const SpacePane = lazy(() => import('./space/space-pane'));
+const SpacePane = part(() => import('./space/space-pane'));
 
 function PaneContent({ view, axes }: { readonly view: PaneView; readonly axes: readonly Quantity[] }) {
   switch (view) {
@@ -38,9 +39,12 @@ function PaneContent({ view, axes }: { readonly view: PaneView; readonly axes: r
     case 'space':
     case 'space-diagram':
       return (
-        <Suspense fallback={<p className="grid flex-1 place-items-center text-muted">Opening the space…</p>}>
-          <SpacePane key={view} view={view} axes={axes} />
-        </Suspense>
+        <SpacePane
+          key={view}
+          view={view}
+          axes={axes}
+          fallback={<p className="grid flex-1 place-items-center text-muted">Opening the space…</p>}
+        />
       );
   }
 }

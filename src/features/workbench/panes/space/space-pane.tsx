@@ -21,7 +21,7 @@ import { SceneLink } from './scene-link';
 import { SpaceScene } from './space-scene';
 import { spaceSpec, spaceTables, type SpaceSpec } from './space-spec';
 import { StartHandle } from './start-handle';
-import { hasWebgl } from './webgl';
+import { webglKind } from './webgl';
 
 interface SpacePaneProps {
   readonly view: 'space' | 'space-diagram';
@@ -58,6 +58,7 @@ export default function SpacePane({ view, axes }: SpacePaneProps) {
   const theme = useTheme((state) => state.theme);
   const palette = PALETTES[theme];
   const overlay = useRef<HTMLCanvasElement>(null);
+  const [flat, setFlat] = useState(() => webglKind() === 'none');
   const [link] = useState(() => new SceneLink());
   const [words, setWords] = useState<SpaceSpec | null>(null);
   const [dialog, setDialog] = useState<'export' | 'table' | null>(null);
@@ -85,20 +86,19 @@ export default function SpacePane({ view, axes }: SpacePaneProps) {
       }
       camera.updateMatrixWorld();
       context.setTransform(ratio, 0, 0, ratio, 0, 0);
-      drawFigure(
-        context,
-        projectSpace(spec, camera, { width, height }, palette, hasWebgl() ? 'signs' : 'all'),
-      );
+      drawFigure(context, projectSpace(spec, camera, { width, height }, palette, flat ? 'all' : 'signs'));
       placeStart.current?.();
     },
-    [palette],
+    [palette, flat],
   );
+
+  const handleMissing = useCallback(() => setFlat(true), []);
 
   useEffect(() => link.invalidate(), [build, link]);
 
   // Without WebGL the same space is drawn flat, seen obliquely.
   useEffect(() => {
-    if (hasWebgl() || !overlay.current) return;
+    if (!flat || !overlay.current) return;
     const canvas = overlay.current;
     const draw = () => {
       handleFrame(cameraFor(link.camera, canvas.clientWidth || 1, canvas.clientHeight || 1), build().spec);
@@ -112,7 +112,7 @@ export default function SpacePane({ view, axes }: SpacePaneProps) {
       observer.disconnect();
       unsubscribe();
     };
-  }, [build, handleFrame, link, store]);
+  }, [flat, build, handleFrame, link, store]);
 
   const getSource = useCallback((): ExportSource | null => {
     const spec = shown.current?.spec;
@@ -159,11 +159,17 @@ export default function SpacePane({ view, axes }: SpacePaneProps) {
         onKeyDown={handleKey}
         onDoubleClick={() => look('oblique')}
       >
-        {hasWebgl() ? (
+        {flat ? null : (
           <div className="absolute inset-0">
-            <SpaceScene build={build} watch={watch} link={link} onFrame={handleFrame} />
+            <SpaceScene
+              build={build}
+              watch={watch}
+              link={link}
+              onFrame={handleFrame}
+              onMissing={handleMissing}
+            />
           </div>
-        ) : null}
+        )}
         <canvas ref={overlay} aria-hidden className="pointer-events-none absolute inset-0 h-full w-full" />
         {words?.start ? <StartHandle shownRef={shown} placeRef={placeStart} /> : null}
         {words?.empty ? (
@@ -175,11 +181,11 @@ export default function SpacePane({ view, axes }: SpacePaneProps) {
       <div className="flex items-start justify-between gap-2 px-3 pb-2">
         <div className="grid min-w-0 gap-0.5">
           <PlotLegend items={words?.empty ? [] : (words?.legend ?? [])} />
-          {hasWebgl() ? null : (
+          {flat ? (
             <p className="text-xs text-muted">
               This browser offers no WebGL, so the space is drawn flat; the arrow keys still turn it.
             </p>
-          )}
+          ) : null}
           {words?.notes.map((note) => (
             <p key={note} className="text-xs text-muted">
               {note}

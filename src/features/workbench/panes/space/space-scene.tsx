@@ -1,7 +1,7 @@
 import { OrbitControls } from '@react-three/drei';
 import { Canvas, useFrame, useThree } from '@react-three/fiber';
-import { useEffect, useMemo } from 'react';
-import type { Camera } from 'three';
+import { useCallback, useEffect, useMemo, useState } from 'react';
+import type { Camera, WebGLRenderer, WebGLRendererParameters } from 'three';
 
 import type { Palette } from '@/graphics/palette';
 
@@ -9,7 +9,7 @@ import { CAMERA_PRESETS } from './camera-presets';
 import { SceneLines } from './scene-lines';
 import type { SceneLink } from './scene-link';
 import type { SpaceSpec } from './space-spec';
-import { webglKind } from './webgl';
+import { createRenderer, webglKind } from './webgl';
 
 interface SceneProps {
   readonly build: () => { readonly spec: SpaceSpec; readonly palette: Palette };
@@ -17,9 +17,11 @@ interface SceneProps {
   readonly link: SceneLink;
   /** Called after each frame, to draw what stands above the scene. */
   readonly onFrame: (camera: Camera, spec: SpaceSpec) => void;
+  /** Called where the browser turns out to offer no WebGL. */
+  readonly onMissing: () => void;
 }
 
-function Lines({ build, watch, link, onFrame }: SceneProps) {
+function Lines({ build, watch, link, onFrame }: Omit<SceneProps, 'onMissing'>) {
   const invalidate = useThree((state) => state.invalidate);
   const camera = useThree((state) => state.camera);
   const size = useThree((state) => state.size);
@@ -64,18 +66,29 @@ function Controls({ link }: { readonly link: SceneLink }) {
 }
 
 /** The live scene: drawn only when something changed. */
-export function SpaceScene(props: SceneProps) {
-  const software = webglKind() === 'software';
+export function SpaceScene({ onMissing, ...scene }: SceneProps) {
+  const [kind, setKind] = useState(webglKind);
+  const begin = useCallback(
+    async (defaults: WebGLRendererParameters): Promise<WebGLRenderer> => {
+      const renderer = createRenderer({ ...defaults, antialias: true, alpha: true });
+      setKind(webglKind());
+      if (renderer) return renderer;
+      onMissing();
+      // The scene is taken away; nothing may draw on it meanwhile.
+      return new Promise(() => undefined);
+    },
+    [onMissing],
+  );
   return (
     <Canvas
       frameloop="demand"
-      dpr={software ? 1 : [1, 2]}
-      gl={{ antialias: true, alpha: true }}
+      dpr={kind === 'hardware' ? [1, 2] : 1}
+      gl={begin}
       camera={{ position: [...CAMERA_PRESETS.oblique.position], fov: 38, near: 0.05, far: 60 }}
       aria-hidden
     >
-      <Controls link={props.link} />
-      <Lines {...props} />
+      <Controls link={scene.link} />
+      <Lines {...scene} />
     </Canvas>
   );
 }

@@ -1,19 +1,29 @@
 import { Plus } from 'lucide-react';
-import { Component, lazy, Suspense, type ReactNode } from 'react';
+import { Component, type ReactNode } from 'react';
 
 import { Button } from '@/components/ui/button';
 import { LIMITS } from '@/engine/schema/limits';
+import { part } from '@/lib/part';
 
 import { useWorkbench } from '../../state/store';
 import { RailSection } from '../rail-section';
 import { addParameter } from './parameter-edits';
 import { ParameterRow } from './parameter-row';
 
-const LevaParameters = lazy(() => import('./leva-parameters'));
+const LevaParameters = part(() => import('./leva-parameters'));
 
 function PlainParameters() {
   const count = useWorkbench((state) => state.document.parameters.length);
   return Array.from({ length: count }, (_, index) => <ParameterRow key={index} index={index} />);
+}
+
+/** Rows that are about to be replaced must not take a keystroke. */
+function AwaitedParameters() {
+  return (
+    <fieldset disabled>
+      <PlainParameters />
+    </fieldset>
+  );
 }
 
 /** The same rows without leva, should it fail to load or to run. */
@@ -30,6 +40,8 @@ class Fallback extends Component<{ readonly children: ReactNode }, { readonly fa
 export function ParameterSection() {
   const count = useWorkbench((state) => state.document.parameters.length);
   const edit = useWorkbench((state) => state.edit);
+  // The first picture goes before the sliders.
+  const pictured = useWorkbench((state) => state.result !== null || state.report?.valid === false);
   return (
     <RailSection
       name="parameters"
@@ -52,16 +64,7 @@ export function ParameterSection() {
         </p>
       ) : (
         <Fallback>
-          <Suspense
-            fallback={
-              // Rows that are about to be replaced must not take a keystroke.
-              <fieldset disabled>
-                <PlainParameters />
-              </fieldset>
-            }
-          >
-            <LevaParameters />
-          </Suspense>
+          {pictured ? <LevaParameters fallback={<AwaitedParameters />} /> : <AwaitedParameters />}
         </Fallback>
       )}
     </RailSection>
