@@ -15,9 +15,16 @@ import { draftKey } from './drafts/draft-key';
 import { DraftOffer } from './drafts/draft-offer';
 import { forgetDraft, readDraft } from './drafts/draft-storage';
 import { useEngineDriver } from './engine';
+import { beginPanes, defaultPanes } from './panes';
 import { handedOver, settleHandOver } from './state/hand-over';
 import { sameDocument } from './state/same-document';
-import { createWorkbenchStore, useWorkbench, WorkbenchContext, type Origin } from './state/store';
+import {
+  createWorkbenchStore,
+  useWorkbench,
+  useWorkbenchStore,
+  WorkbenchContext,
+  type Origin,
+} from './state/store';
 import { Workbench } from './workbench';
 
 export type WorkbenchSource =
@@ -40,9 +47,14 @@ async function openSource(source: WorkbenchSource, signedIn: boolean, signal: Ab
   return { document: body.document, origin: originOf(body) };
 }
 
-/** The engine begins with the first commit, and works while the bench is drawn in the second. */
+/** Engine and panes begin with the first commit, and go on while the bench is drawn in the second. */
 function RunningBench({ draftKey: key }: { readonly draftKey: string | null }) {
   useEngineDriver();
+  const store = useWorkbenchStore();
+  useEffect(() => {
+    const { document, arrangement } = store.getState();
+    beginPanes(defaultPanes(document, arrangement));
+  }, [store]);
   const begun = useWorkbench((state) => state.engine !== null);
   return begun ? <Workbench draftKey={key} /> : <LoadingState label="Opening the preset…" />;
 }

@@ -1,1 +1,3 @@
+export { beginPanes } from './pane';
+export { defaultPanes } from './pane-settings';
 export { Panes } from './panes';

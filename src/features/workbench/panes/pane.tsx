@@ -20,6 +20,12 @@ import { TrajectoriesView } from './views/trajectories-view';
 
 const SpacePane = part(() => import('./space/space-pane'));
 
+/** Lets the panes of an arrangement read their code before they are drawn. */
+export function beginPanes(panes: readonly PaneSettings[]): void {
+  // Its failure is told by the pane itself.
+  if (panes.some(({ view }) => view.startsWith('space'))) SpacePane.begin().catch(() => undefined);
+}
+
 function PaneContent({ view, axes }: { readonly view: PaneView; readonly axes: readonly Quantity[] }) {
   switch (view) {
     case 'trajectories':

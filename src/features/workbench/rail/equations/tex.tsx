@@ -1,16 +1,20 @@
 import type katexModule from 'katex';
 import { useEffect, useRef, useState } from 'react';
 
+import { whenIdle } from '@/lib/when-idle';
+
 type Katex = typeof katexModule;
 let loading: Promise<Katex> | null = null;
 let loaded: Katex | null = null;
 
-/** KaTeX with its fonts, fetched once and only where mathematics is shown. */
+/** KaTeX with its fonts, fetched once and only where mathematics is shown; its source stands there until then. */
 function loadKatex(): Promise<Katex> {
-  loading ??= Promise.all([import('katex'), import('katex/dist/katex.min.css')]).then(([module]) => {
-    loaded = module.default;
-    return loaded;
-  });
+  loading ??= whenIdle()
+    .then(() => Promise.all([import('katex'), import('katex/dist/katex.min.css')]))
+    .then(([module]) => {
+      loaded = module.default;
+      return loaded;
+    });
   return loading;
 }
 

@@ -4,13 +4,14 @@ import { Component, type ReactNode } from 'react';
 import { Button } from '@/components/ui/button';
 import { LIMITS } from '@/engine/schema/limits';
 import { part } from '@/lib/part';
+import { whenIdle } from '@/lib/when-idle';
 
 import { useWorkbench } from '../../state/store';
 import { RailSection } from '../rail-section';
 import { addParameter } from './parameter-edits';
 import { ParameterRow } from './parameter-row';
 
-const LevaParameters = part(() => import('./leva-parameters'));
+const LevaParameters = part(() => whenIdle().then(() => import('./leva-parameters')));
 
 function PlainParameters() {
   const count = useWorkbench((state) => state.document.parameters.length);
