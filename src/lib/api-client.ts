@@ -36,7 +36,7 @@ export function setCsrfToken(token: string): void {
   csrfToken = token;
 }
 
-type Method = 'GET' | 'POST' | 'PATCH' | 'DELETE';
+type Method = 'GET' | 'POST' | 'PUT' | 'PATCH' | 'DELETE';
 
 async function refusal(response: Response): Promise<ApiError> {
   const body: unknown = await response.json().catch(() => null);
@@ -91,6 +91,8 @@ export const api = {
     sendAndRead('GET', path, schema, undefined, signal),
   post: <S extends z.ZodType>(path: string, body: unknown, schema: S) =>
     sendAndRead('POST', path, schema, body),
+  put: <S extends z.ZodType>(path: string, body: unknown, schema: S) =>
+    sendAndRead('PUT', path, schema, body),
   patch: <S extends z.ZodType>(path: string, body: unknown, schema: S) =>
     sendAndRead('PATCH', path, schema, body),
   /** A change without an answer worth reading. */
