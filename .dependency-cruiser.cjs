@@ -53,6 +53,11 @@ module.exports = {
       '^src/(components|lib|contract)/',
       '^src/engine/schema/zod\\.ts$',
     ]),
+    only('assigned', '^src/features/assigned/', [
+      '^src/(components|lib|graphics|contract|workers)/',
+      '^src/engine/schema/',
+      '^src/engine/[a-z-]+/contract\\.ts$',
+    ]),
     only('lab', '^src/features/lab/', ['^src/(components|lib|contract)/']),
     only('graphics', '^src/graphics/', [
       '^src/lib/',

@@ -2,6 +2,7 @@ import type { ComponentType } from 'react';
 import { createBrowserRouter, Outlet, ScrollRestoration } from 'react-router-dom';
 
 import { SiteLayout } from '@/components/layout/site-layout';
+import type { WorkbenchSource } from '@/features/workbench/workbench-page';
 import { LoadingState } from '@/components/states/page-state';
 
 import { RequireSession } from './require-session';
@@ -11,7 +12,7 @@ import { NotFound, RouteError } from './route-error';
 const page = (load: () => Promise<{ readonly default: ComponentType }>) => async () => ({
   Component: (await load()).default,
 });
-const workbench = (kind: 'new' | 'preset' | 'shared') => async () => {
+const workbench = (kind: WorkbenchSource['kind']) => async () => {
   const { WorkbenchRoute } = await import('./workbench-route');
   return { element: <WorkbenchRoute kind={kind} /> };
 };
@@ -38,6 +39,7 @@ export function createRouter() {
           children: [
             { path: '/presets/new', lazy: workbench('new') },
             { path: '/presets/:id', lazy: workbench('preset') },
+            { path: '/assigned/:id/work', lazy: workbench('assigned') },
           ],
         },
         {
@@ -56,6 +58,7 @@ export function createRouter() {
               children: [
                 { path: '/', lazy: page(() => import('@/features/library/desk-page')) },
                 { path: '/presets', lazy: page(() => import('@/features/library/library-page')) },
+                { path: '/assigned/:id', lazy: page(() => import('@/features/assigned/task/task-page')) },
                 { path: '/lab', lazy: page(() => import('@/features/lab/lab-page')) },
                 { path: '/account', lazy: page(() => import('@/features/account/account-page')) },
               ],

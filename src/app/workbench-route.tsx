@@ -1,10 +1,11 @@
 import { useParams } from 'react-router-dom';
 
-import WorkbenchPage from '@/features/workbench/workbench-page';
+import WorkbenchPage, { type WorkbenchSource } from '@/features/workbench/workbench-page';
 
 /** The workbench fills the window and has its own header; it is a chunk of its own. */
-export function WorkbenchRoute({ kind }: { readonly kind: 'new' | 'preset' | 'shared' }) {
+export function WorkbenchRoute({ kind }: { readonly kind: WorkbenchSource['kind'] }) {
   const { id = '', token = '' } = useParams();
-  const source = kind === 'new' ? { kind } : kind === 'preset' ? { kind, id } : { kind, token };
+  const source: WorkbenchSource =
+    kind === 'new' ? { kind } : kind === 'shared' ? { kind, token } : { kind, id };
   return <WorkbenchPage key={`${kind}:${id}${token}`} source={source} />;
 }

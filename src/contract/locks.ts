@@ -49,23 +49,33 @@ export function structureChanged(set: PresetDocument, other: PresetDocument): bo
   return JSON.stringify(structureOf(set)) !== JSON.stringify(structureOf(other));
 }
 
-/** Whether a number may be moved under these locks. */
-export function mayChange(freedom: Freedom, key: string): boolean {
-  return freedom.model || freedom.parameters === 'all' || freedom.parameters.includes(key);
+/** What was set: the model, the sweep and what may be changed of them. */
+export interface SetWork {
+  readonly document: PresetDocument;
+  readonly range: SweepRange;
+  readonly freedom: Freedom;
+}
+
+/** Whether a number may be moved under these locks. The swept one always may: the sweep runs over all its values. */
+export function mayChange({ freedom, range }: Pick<SetWork, 'freedom' | 'range'>, key: string): boolean {
+  return (
+    freedom.model ||
+    freedom.parameters === 'all' ||
+    freedom.parameters.includes(key) ||
+    key === range.parameter
+  );
 }
 
 /** What was changed although it is locked, one sentence each; empty when the locks were kept. */
-export function lockBreaches(
-  set: { document: PresetDocument; range: SweepRange; freedom: Freedom },
-  other: { document: PresetDocument; range: SweepRange },
-): string[] {
+export function lockBreaches(set: SetWork, other: Pick<SetWork, 'document' | 'range'>): string[] {
   const { freedom, document, range } = set;
   const breaches: string[] = [];
   if (!freedom.model && structureChanged(document, other.document))
     breaches.push('The classes, processes or formulas of the model are locked.');
   else
     for (const key of changedNumbers(document, other.document))
-      if (!mayChange(freedom, key)) breaches.push(`${key} is locked.`);
+      if (!mayChange(set, key) && !(freedom.range && key === other.range.parameter))
+        breaches.push(`${key} is locked.`);
   if (
     !freedom.range &&
     (range.parameter !== other.range.parameter ||

@@ -1,5 +1,5 @@
 import { useQuery } from '@tanstack/react-query';
-import { useEffect, useMemo, useState } from 'react';
+import { useCallback, useEffect, useMemo, useState } from 'react';
 import { Link } from 'react-router-dom';
 
 import { ErrorState, LoadingState } from '@/components/states/page-state';
@@ -8,6 +8,8 @@ import { createEmptyPreset } from '@/engine/schema/create';
 import type { PresetDocument } from '@/engine/schema/preset';
 import { useSession } from '@/lib/session';
 
+import { AssignedBench } from './assigned/assigned-bench';
+import { openAssigned, type OpenedAssigned } from './assigned/open-assigned';
 import { fetchPreset } from './dialogs/api/fetch-preset';
 import { fetchShared } from './dialogs/api/fetch-shared';
 import { originOf } from './dialogs/origin-of';
@@ -30,19 +32,29 @@ import { Workbench } from './workbench';
 export type WorkbenchSource =
   | { readonly kind: 'new' }
   | { readonly kind: 'preset'; readonly id: string }
-  | { readonly kind: 'shared'; readonly token: string };
+  | { readonly kind: 'shared'; readonly token: string }
+  | { readonly kind: 'assigned'; readonly id: string };
 
 interface Opened {
   readonly document: PresetDocument;
   readonly origin: Origin;
+  readonly assigned?: OpenedAssigned;
 }
 
-async function openSource(source: WorkbenchSource, signedIn: boolean, signal: AbortSignal): Promise<Opened> {
+async function openSource(
+  source: WorkbenchSource,
+  userId: string | undefined,
+  signal: AbortSignal,
+): Promise<Opened> {
   if (source.kind === 'new') return { document: createEmptyPreset(), origin: { kind: 'new' } };
   if (source.kind === 'shared') {
     const shared = await fetchShared(source.token, signal);
-    return { document: shared.document, origin: { kind: 'shared', token: source.token, signedIn } };
+    return {
+      document: shared.document,
+      origin: { kind: 'shared', token: source.token, signedIn: userId !== undefined },
+    };
   }
+  if (source.kind === 'assigned') return openAssigned(source.id, userId ?? '', signal);
   const body = await fetchPreset(source.id, signal);
   return { document: body.document, origin: originOf(body) };
 }
@@ -60,12 +72,20 @@ function RunningBench({ draftKey: key }: { readonly draftKey: string | null }) {
 }
 
 /** The bench with what was opened on it; an earlier visit's draft is offered first. */
-function OpenedBench({ opened, userId }: { readonly opened: Opened; readonly userId: string | undefined }) {
+function OpenedBench({
+  opened,
+  userId,
+  onReload,
+}: {
+  readonly opened: Opened;
+  readonly userId: string | undefined;
+  readonly onReload: () => void;
+}) {
   const key = draftKey(opened.origin, userId);
   const store = useMemo(() => {
     const { document, origin } = opened;
     const kept = origin.kind === 'preset' ? handedOver(origin.id) : null;
-    return kept ?? createWorkbenchStore(document, origin);
+    return kept ?? createWorkbenchStore(document, origin, opened.assigned?.work ?? null);
   }, [opened]);
   useEffect(settleHandOver, [store]);
   const [draft, setDraft] = useState(() => {
@@ -90,7 +110,13 @@ function OpenedBench({ opened, userId }: { readonly opened: Opened; readonly use
   };
   return (
     <WorkbenchContext.Provider value={store}>
-      <RunningBench draftKey={draft ? null : key} />
+      {opened.assigned ? (
+        <AssignedBench place={opened.assigned.place} dirty={opened.assigned.dirty} onReload={onReload}>
+          <RunningBench draftKey={null} />
+        </AssignedBench>
+      ) : (
+        <RunningBench draftKey={draft ? null : key} />
+      )}
       {draft ? (
         <DraftOffer draft={draft} version={version} onRestore={handleRestore} onDiscard={handleDiscard} />
       ) : null}
@@ -103,7 +129,7 @@ export default function WorkbenchPage({ source }: { readonly source: WorkbenchSo
   const user = session.data?.user;
   const opened = useQuery({
     queryKey: ['bench', source, user?.id ?? ''],
-    queryFn: ({ signal }) => openSource(source, Boolean(user), signal),
+    queryFn: ({ signal }) => openSource(source, user?.id, signal),
     enabled: !session.isPending,
     // The bench keeps its own copy: a refetch must not replace what is being edited.
     staleTime: Infinity,
@@ -111,6 +137,8 @@ export default function WorkbenchPage({ source }: { readonly source: WorkbenchSo
     refetchOnWindowFocus: false,
     refetchOnReconnect: false,
   });
+  const { refetch } = opened;
+  const reload = useCallback(() => void refetch(), [refetch]);
   if (opened.isError) {
     return (
       <ErrorState
@@ -124,5 +152,5 @@ export default function WorkbenchPage({ source }: { readonly source: WorkbenchSo
     );
   }
   if (!opened.data) return <LoadingState label="Opening the preset…" />;
-  return <OpenedBench opened={opened.data} userId={user?.id} />;
+  return <OpenedBench key={opened.dataUpdatedAt} opened={opened.data} userId={user?.id} onReload={reload} />;
 }

@@ -8,6 +8,7 @@ import { exportModel } from './export-model';
 import { findEquilibria } from './find-equilibria';
 import { fullPicture } from './full-picture';
 import { importModel } from './import-model';
+import { handIn } from './hand-in';
 import { keepTraits } from './keep-traits';
 import { openPalette } from './open-palette';
 import { poolClasses } from './pool-classes';
@@ -35,6 +36,7 @@ export const COMMANDS: readonly Command[] = [
   typeEquations,
   saveVersion,
   saveCopy,
+  handIn,
   share,
   versionHistory,
   exportModel,

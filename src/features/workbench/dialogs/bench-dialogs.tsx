@@ -1,3 +1,4 @@
+import { HandInDialog } from '../assigned/hand-in-dialog';
 import type { CommandContext } from '../commands/command';
 import { CommandPalette } from '../commands/command-palette';
 import { useBenchUi } from '../layout/bench-ui';
@@ -26,6 +27,7 @@ export function BenchDialogs({ context }: { readonly context: () => CommandConte
       {dialog === 'import' ? <ImportDialog /> : null}
       {dialog === 'equations' ? <EquationsDialog /> : null}
       {dialog === 'picture' ? <PictureDialog /> : null}
+      {dialog === 'hand-in' ? <HandInDialog /> : null}
     </>
   );
 }

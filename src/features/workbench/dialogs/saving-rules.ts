@@ -13,6 +13,8 @@ export function refuseSave(
     return origin.signedIn || signedIn
       ? 'A shared preset is not saved over; save it as a copy of your own.'
       : 'Sign in to save a copy of your own.';
+  if (origin.kind === 'assigned')
+    return 'Work on an assigned sweep is kept by itself; hand it in when it is done.';
   if (origin.kind === 'new') return null;
   if (!origin.rights.includes('save'))
     return origin.starter
@@ -26,6 +28,7 @@ export function refuseShare(state: Pick<WorkbenchState, 'origin'>): string | nul
   const { origin } = state;
   if (origin.kind === 'new') return 'Save the preset first; then it can be shared.';
   if (origin.kind === 'shared') return 'This preset is shared already; pass on its address.';
+  if (origin.kind === 'assigned') return 'An assigned sweep is handed in, not shared.';
   const may = origin.rights.includes('share by link') || origin.rights.includes('change visibility');
   return may ? null : 'Only those who may share this preset can make links to it.';
 }

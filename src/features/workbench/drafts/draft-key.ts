@@ -2,9 +2,9 @@ import { useSession } from '@/lib/session';
 
 import { useWorkbench, type Origin } from '../state/store';
 
-/** Drafts belong to a person and a preset; visitors by link keep none. */
+/** Drafts belong to a person and a preset. Visitors by link keep none; assigned sweeps are kept by themselves. */
 export function draftKey(origin: Origin, userId: string | undefined): string | null {
-  if (!userId || origin.kind === 'shared') return null;
+  if (!userId || origin.kind === 'shared' || origin.kind === 'assigned') return null;
   return `${userId}.${origin.kind === 'preset' ? origin.id : 'new'}`;
 }
 

@@ -5,21 +5,22 @@ import { Button } from '@/components/ui/button';
 import { Dialog } from '@/components/ui/dialog';
 
 import { isDirty } from '../dialogs/saving-rules';
-import { useWorkbench, useWorkbenchStore } from '../state/store';
+import { useWorkbench, useWorkbenchStore, type WorkbenchState } from '../state/store';
 import { useDraftKey } from './draft-key';
 import { forgetDraft } from './draft-storage';
+
+/** A visitor by link saves nothing, and an assigned sweep is kept by itself: there is nothing to lose. */
+const mayBeLost = (state: WorkbenchState) =>
+  state.origin.kind !== 'shared' && state.origin.kind !== 'assigned' && isDirty(state);
 
 /** Leaving unsaved work asks, whether by a link or by closing the tab. */
 export function LeaveGuard() {
   const store = useWorkbenchStore();
   const key = useDraftKey();
-  // A visitor by link saves nothing, so there is nothing to lose.
-  const guarded = useWorkbench((state) => state.origin.kind !== 'shared' && isDirty(state));
+  const guarded = useWorkbench((state) => mayBeLost(state));
   const blocker = useBlocker(({ currentLocation, nextLocation }) => {
     const state = store.getState();
-    return (
-      state.origin.kind !== 'shared' && isDirty(state) && currentLocation.pathname !== nextLocation.pathname
-    );
+    return mayBeLost(state) && currentLocation.pathname !== nextLocation.pathname;
   });
   useEffect(() => {
     if (!guarded) return;

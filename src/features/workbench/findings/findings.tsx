@@ -1,4 +1,5 @@
 import { useWorkbench } from '../state/store';
+import { AssignedCard } from '../assigned/assigned-card';
 import { BranchesCard } from './branches-card';
 import { CyclesCard } from './cycles-card';
 import { DensityCard } from './density-card';
@@ -41,6 +42,7 @@ export function Findings() {
       <EngineTrouble />
       <InvalidNote />
       <JobCard />
+      <AssignedCard />
       <VerdictCard />
       <SpecialPointsCard />
       <CyclesCard />

@@ -1,3 +1,4 @@
+import { Pin } from 'lucide-react';
 import { useMemo, useState } from 'react';
 
 import { specialPointGlyph } from '@/graphics/glyphs';
@@ -5,6 +6,7 @@ import { formatNumber } from '@/graphics/numbers';
 import { parameterName } from '@/graphics/quantities';
 import { joinClasses } from '@/lib/join-classes';
 
+import { findingFor, pinFinding, type Candidate } from '../assigned/pin-finding';
 import { moveToPoint } from '../panes/move-to-point';
 import { GlyphSign } from '../panes/plot/plot-legend';
 import { useShownModel } from '../panes/use-shown-model';
@@ -59,12 +61,17 @@ function Row({
   withTwin,
   range,
   selected,
+  pinTo,
+  onPin,
   onChoose,
 }: {
   readonly row: SpecialPointRow;
   readonly withTwin: boolean;
   readonly range: number;
   readonly selected: boolean;
+  /** Label of the wanted finding that this point can be given for; null where none asks for it. */
+  readonly pinTo: string | null;
+  readonly onPin: () => void;
   readonly onChoose: () => void;
 }) {
   const value = (point: SpecialPointRow['split']) => (point ? formatNumber(point.parameter, 4) : 'none');
@@ -89,6 +96,15 @@ function Row({
               {point?.feasible ? null : <span className="text-muted">, not feasible</span>}
             </span>
           </button>
+          {pinTo === null ? null : (
+            <button
+              type="button"
+              className="flex items-center gap-1 rounded text-left text-xs text-accent hover:underline"
+              onClick={onPin}
+            >
+              <Pin size={12} aria-hidden /> Pin as “{pinTo}”
+            </button>
+          )}
         </th>
         <td className="figures py-1 pl-1 text-right text-xs whitespace-nowrap">{value(row.split)}</td>
         {withTwin ? (
@@ -113,6 +129,15 @@ function Row({
   );
 }
 
+/** The point of a row, as a finding takes it. */
+function pointOf(row: SpecialPointRow): Candidate {
+  return {
+    kind: row.kind,
+    of: row.split ? 'split' : 'twin',
+    parameter: (row.split ?? row.twin)?.parameter ?? NaN,
+  };
+}
+
 /** Special points of the sweep, split beside pooled; choosing one moves the model there. */
 export function SpecialPointsCard() {
   const store = useWorkbenchStore();
@@ -120,6 +145,7 @@ export function SpecialPointsCard() {
   const sweep = useWorkbench((state) => state.sweep);
   const cycles = useWorkbench((state) => state.cycles);
   const outdated = useWorkbench((state) => state.sweepOutdated);
+  const assigned = useWorkbench((state) => state.assigned);
   const selected = useWorkbench((state) => state.selectedPoint?.id ?? null);
   const [order, setOrder] = useState<SortOrder>({ key: 'split', descending: false });
   const rows = useMemo(
@@ -157,6 +183,11 @@ export function SpecialPointsCard() {
                 withTwin={sweep.twin !== null}
                 range={Math.abs(sweep.split.to - sweep.split.from)}
                 selected={row.split !== null && row.split.id === selected}
+                pinTo={findingFor(assigned, pointOf(row))?.label ?? null}
+                onPin={() => {
+                  const wanted = findingFor(assigned, pointOf(row));
+                  if (wanted) pinFinding(store, wanted.id, pointOf(row));
+                }}
                 onChoose={() => row.split && moveToPoint(store, row.split)}
               />
             ))}

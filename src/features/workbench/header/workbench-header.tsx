@@ -7,6 +7,7 @@ import { buttonClasses } from '@/components/ui/button';
 
 import { labelOf, type CommandContext } from '../commands/command';
 import { exportModel } from '../commands/export-model';
+import { handIn } from '../commands/hand-in';
 import { importModel } from '../commands/import-model';
 import { openPalette } from '../commands/open-palette';
 import { redo } from '../commands/redo';
@@ -27,16 +28,21 @@ function Breadcrumb({ readOnly }: { readonly readOnly: boolean }) {
   const place =
     origin.kind === 'shared'
       ? 'Shared preset'
-      : origin.kind === 'preset'
-        ? (origin.labName ?? (origin.starter ? 'Starter presets' : 'My presets'))
-        : 'New preset';
+      : origin.kind === 'assigned'
+        ? origin.labName
+        : origin.kind === 'preset'
+          ? (origin.labName ?? (origin.starter ? 'Starter presets' : 'My presets'))
+          : 'New preset';
   return (
     <nav aria-label="Breadcrumb" className="flex min-w-0 items-center gap-2">
       <span className="shrink-0 text-muted max-lg:hidden">
         {origin.kind === 'shared' ? (
           place
         ) : (
-          <Link to="/presets" className="hover:text-ink hover:underline">
+          <Link
+            to={origin.kind === 'assigned' ? `/assigned/${origin.id}` : '/presets'}
+            className="hover:text-ink hover:underline"
+          >
             {place}
           </Link>
         )}
@@ -89,7 +95,8 @@ export function WorkbenchHeader({
     saveVersion.isEnabled(context()) !== true &&
     state.origin.kind !== 'new' &&
     !(state.origin.kind === 'preset' && state.origin.rights.includes('save'));
-  const save = copies ? saveCopy : saveVersion;
+  const assigned = state.origin.kind === 'assigned';
+  const save = assigned ? handIn : copies ? saveCopy : saveVersion;
   return (
     <AppHeader
       actions={
@@ -113,7 +120,7 @@ export function WorkbenchHeader({
             Export
           </CommandButton>
           <CommandButton named command={save} context={context} look="primary" className="max-sm:hidden">
-            {copies ? 'Save a copy' : 'Save version'}
+            {assigned ? 'Hand in' : copies ? 'Save a copy' : 'Save version'}
           </CommandButton>
         </>
       }

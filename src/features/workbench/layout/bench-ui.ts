@@ -11,6 +11,7 @@ export const DIALOGS = [
   'import',
   'equations',
   'picture',
+  'hand-in',
 ] as const;
 export type DialogName = (typeof DIALOGS)[number];
 

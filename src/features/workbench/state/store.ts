@@ -5,6 +5,7 @@ import type { PictureResult, SplitAnd } from '@/engine/analyses/contract';
 import type { SpecialPoint } from '@/engine/continuation/contract';
 import type { CyclesResult, CycleSpecialPoint } from '@/engine/cycles/contract';
 import type { PresetDocument } from '@/engine/schema/preset';
+import { refuseByLocks, type AssignedWork } from './assigned';
 import { NO_LONG_RUN, type LongRun, type LongRunName } from './long-run';
 import { NO_TWO_PARAMETERS, type TwoParameters } from './two-parameters';
 import type { ModelReport } from '@/engine/system/contract';
@@ -23,7 +24,8 @@ export type Origin =
       readonly labName: string | null;
       readonly starter: boolean;
     }
-  | { readonly kind: 'shared'; readonly token: string; readonly signedIn: boolean };
+  | { readonly kind: 'shared'; readonly token: string; readonly signedIn: boolean }
+  | { readonly kind: 'assigned'; readonly id: string; readonly labName: string };
 
 /** One step of the history: the document as it was, and what the edit that left it is called. */
 export interface HistoryEntry {
@@ -107,6 +109,10 @@ export interface WorkbenchState {
   readonly arrangement: Arrangement;
   /** The slice that the phase plane on show wants; null while there is none. */
   readonly planeRequest: PlaneRequest | null;
+  /** The assigned sweep that is worked on; null on any other bench. */
+  readonly assigned: AssignedWork | null;
+  /** The last edit that the locks refused; a new object each time. */
+  readonly refused: { readonly message: string } | null;
 
   /** Applies an edit. Edits with the same `merge` key in a row (a drag, typing in one field) are one step of undo. */
   edit(label: string, change: (document: PresetDocument) => PresetDocument, merge?: string): void;
@@ -121,7 +127,7 @@ export interface WorkbenchState {
 }
 
 /** What opening another document starts anew; the driver and the arrangement stay. */
-type FreshData = Omit<WorkbenchData, 'engine' | 'arrangement'>;
+type FreshData = Omit<WorkbenchData, 'engine' | 'arrangement' | 'assigned' | 'refused'>;
 
 export type WorkbenchData = Omit<WorkbenchState, 'edit' | 'undo' | 'redo' | 'open' | 'markSaved' | 'set'>;
 
@@ -156,16 +162,24 @@ function initialData(document: PresetDocument, origin: Origin): FreshData {
   };
 }
 
-export function createWorkbenchStore(document: PresetDocument, origin: Origin) {
+export function createWorkbenchStore(
+  document: PresetDocument,
+  origin: Origin,
+  assigned: AssignedWork | null = null,
+) {
   let lastMerge: string | undefined;
   return createStore<WorkbenchState>()((set) => ({
     ...initialData(document, origin),
     engine: null,
     arrangement: 'explore',
+    assigned,
+    refused: null,
     edit: (label, change, merge) =>
       set((state) => {
         const next = change(state.document);
         if (next === state.document) return state;
+        const refusal = state.assigned && refuseByLocks(state.assigned, next, state.sweepSelection);
+        if (refusal) return { refused: { message: refusal } };
         const merged = merge !== undefined && merge === lastMerge && state.past.length > 0;
         lastMerge = merge;
         return {

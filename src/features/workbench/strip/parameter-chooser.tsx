@@ -5,6 +5,7 @@ import { useState } from 'react';
 import { parameterName } from '@/graphics/quantities';
 
 import { useShownModel } from '../panes/use-shown-model';
+import { isRangeLocked } from '../state/assigned';
 import { useWorkbench, useWorkbenchStore } from '../state/store';
 import { defaultRange } from './default-range';
 
@@ -20,8 +21,18 @@ export function ParameterChooser() {
   const model = useShownModel();
   const parameters = useWorkbench((state) => state.shownReport?.parameters ?? null);
   const selected = useWorkbench((state) => state.sweepSelection?.parameter ?? null);
+  const locked = useWorkbench((state) => isRangeLocked(state.assigned));
   const [open, setOpen] = useState(false);
   const named = selected ? parameterName(model, selected) : null;
+  if (locked)
+    return (
+      <span
+        className="max-w-full truncate px-1 font-heading text-lg font-semibold"
+        title="The sweep is part of what was set."
+      >
+        {named?.name}
+      </span>
+    );
   return (
     <Popover.Root open={open} onOpenChange={setOpen}>
       <Popover.Trigger

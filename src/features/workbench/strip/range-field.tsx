@@ -5,13 +5,15 @@ import { parseNumber, showNumber } from '@/lib/parse-number';
 interface RangeFieldProps {
   readonly label: string;
   readonly value: number;
+  /** Part of an assigned sweep that was set. */
+  readonly locked?: boolean;
   /** Says what is wrong with a number, or null. */
   readonly check: (value: number) => string | null;
   readonly onChange: (value: number) => void;
 }
 
 /** One end of the range: what was typed stays until it is a number that fits. */
-export function RangeField({ label, value, check, onChange }: RangeFieldProps) {
+export function RangeField({ label, value, locked = false, check, onChange }: RangeFieldProps) {
   const id = useId();
   const [typed, setTyped] = useState<string | null>(null);
   const parsed = typed === null ? null : parseNumber(typed);
@@ -28,7 +30,9 @@ export function RangeField({ label, value, check, onChange }: RangeFieldProps) {
       <input
         id={id}
         inputMode="decimal"
-        className="figures w-20 rounded border bg-raised px-1.5 py-0.5 text-ink aria-invalid:border-caution"
+        className="figures w-20 rounded border bg-raised px-1.5 py-0.5 text-ink read-only:border-dashed read-only:text-muted aria-invalid:border-caution"
+        readOnly={locked}
+        title={locked ? 'The range is part of what was set.' : undefined}
         value={typed ?? showNumber(value, 6)}
         aria-invalid={problem ? true : undefined}
         aria-describedby={problem ? `${id}-problem` : undefined}

@@ -1,3 +1,4 @@
+import { isRangeLocked } from '../state/assigned';
 import { useWorkbench, useWorkbenchStore } from '../state/store';
 import { ParameterChooser } from './parameter-chooser';
 import { RangeField } from './range-field';
@@ -21,6 +22,7 @@ function SweepFacts() {
 export function RangeStrip() {
   const store = useWorkbenchStore();
   const selection = useWorkbench((state) => state.sweepSelection);
+  const locked = useWorkbench((state) => isRangeLocked(state.assigned));
   const change = (patch: { from?: number; to?: number }) => {
     const { sweepSelection, set, engine } = store.getState();
     if (!sweepSelection) return;
@@ -40,6 +42,7 @@ export function RangeStrip() {
           </div>
           <div className="flex flex-wrap items-center gap-2 max-sm:hidden">
             <RangeField
+              locked={locked}
               key={`from:${selection.parameter}`}
               label="from"
               value={selection.from}
@@ -49,6 +52,7 @@ export function RangeStrip() {
               onChange={(from) => change({ from })}
             />
             <RangeField
+              locked={locked}
               key={`to:${selection.parameter}`}
               label="to"
               value={selection.to}

@@ -1,4 +1,4 @@
-import { SlidersHorizontal } from 'lucide-react';
+import { Lock, SlidersHorizontal } from 'lucide-react';
 import { useState } from 'react';
 
 import { NumberField } from '@/components/fields/number-field';
@@ -6,6 +6,7 @@ import { Slider } from '@/components/fields/slider';
 import { Popover } from '@/components/ui/popover';
 import { showNumber } from '@/lib/parse-number';
 
+import { isLocked } from '../../state/assigned';
 import { useWorkbench } from '../../state/store';
 import { DiagnosticLines } from '../diagnostic-lines';
 import { useDiagnostics } from '../use-diagnostics';
@@ -23,6 +24,9 @@ export function ParameterRow({ index, onSlide }: ParameterRowProps) {
   const parameter = useWorkbench((state) => state.document.parameters[index]);
   const edit = useWorkbench((state) => state.edit);
   const diagnostics = useDiagnostics(['parameters', index], true);
+  const locked = useWorkbench(
+    (state) => parameter !== undefined && isLocked(state.assigned, parameter.symbol),
+  );
   const [open, setOpen] = useState(false);
   if (!parameter) return null;
   const name = parameter.name || parameter.symbol;
@@ -37,18 +41,21 @@ export function ParameterRow({ index, onSlide }: ParameterRowProps) {
         >
           {name === parameter.symbol ? null : <span className="truncate">{name}</span>}
           <span className="figures shrink-0 text-muted italic">{parameter.symbol}</span>
+          {locked ? <Lock size={12} aria-label="locked" className="shrink-0 self-center text-muted" /> : null}
         </span>
         <Slider
           label={`${name}, slider`}
           value={parameter.value}
           min={parameter.min}
           max={parameter.max}
+          disabled={locked}
           valueText={`${showNumber(parameter.value, 5)} ${parameter.unit}`}
           onChange={(value) => (onSlide ? onSlide(value) : set(value, `slide:${parameter.symbol}`))}
         />
         <NumberField
           label={`${name}, value`}
           value={parameter.value}
+          disabled={locked}
           onCommit={(value) => set(value)}
           data-path={`parameters.${index}`}
         />
