@@ -14,8 +14,7 @@ export const SET_KEYS = {
 export const fetchAssigned = (id: string) => api.get(path(id), assignedSchema);
 export const createAssigned = (labId: string, preset: { presetId: string; version: number }) =>
   api.post(`${lab(labId)}/assigned`, preset, assignedSchema);
-export const changeAssigned = (id: string, body: ChangeAssigned) =>
-  api.patch(path(id), body, assignedSchema);
+export const changeAssigned = (id: string, body: ChangeAssigned) => api.patch(path(id), body, assignedSchema);
 export const openAssigned = (id: string, baseRevision: number) =>
   api.post(`${path(id)}/open`, { baseRevision }, assignedSchema);
 export const closeAssigned = (id: string, baseRevision: number) =>

@@ -86,8 +86,14 @@ export class RevisionKeeper<Body, Edits extends object> {
   readonly takeTheirs = (): void => {
     if (this.kept.saving.state !== 'conflict') return;
     const { theirs } = this.kept.saving;
-    this.put({ edits: {}, saving: { state: 'saved' } });
+    this.drop();
     this.adopt(theirs);
+  };
+
+  /** Gives up what is not saved. */
+  readonly drop = (): void => {
+    clearTimeout(this.timer);
+    this.put({ edits: {}, saving: { state: 'saved' } });
   };
 
   /** Tries again at once where the connection had failed. */

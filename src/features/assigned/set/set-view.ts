@@ -1,4 +1,9 @@
-import type { AssignedBody, ChangeAssigned, ReferenceFinding, WantedFinding } from '@/contract/assigned-sweeps';
+import type {
+  AssignedBody,
+  ChangeAssigned,
+  ReferenceFinding,
+  WantedFinding,
+} from '@/contract/assigned-sweeps';
 import type { KeptSweep } from '@/contract/kept-sweep';
 
 export type SetEdits = Omit<ChangeAssigned, 'baseRevision'>;

@@ -27,7 +27,8 @@ export function toWallTime(iso: string, timeZone: string): string {
 export function fromWallTime(wall: string, timeZone: string): string | null {
   const asUtc = Date.parse(`${wall}:00Z`);
   if (!Number.isFinite(asUtc)) return null;
-  const offsetAt = (instant: number) => Date.parse(`${toWallTime(new Date(instant).toISOString(), timeZone)}:00Z`) - instant;
+  const offsetAt = (instant: number) =>
+    Date.parse(`${toWallTime(new Date(instant).toISOString(), timeZone)}:00Z`) - instant;
   // A day on either side lies beyond any change of the clocks; the two offsets are the candidates.
   const [before, after] = [offsetAt(asUtc - 24 * 60 * MINUTE), offsetAt(asUtc + 24 * 60 * MINUTE)];
   const fits = [asUtc - before, asUtc - after].find((instant) => instant + offsetAt(instant) === asUtc);
