@@ -56,10 +56,12 @@ export function createRouter() {
             {
               element: <RequireSession />,
               children: [
-                { path: '/', lazy: page(() => import('@/features/library/desk-page')) },
-                { path: '/presets', lazy: page(() => import('@/features/library/library-page')) },
+                { path: '/', lazy: page(() => import('./routes/desk-route')) },
+                { path: '/presets', lazy: page(() => import('./routes/library-route')) },
                 { path: '/assigned/:id', lazy: page(() => import('@/features/assigned/task/task-page')) },
-                { path: '/lab', lazy: page(() => import('@/features/lab/lab-page')) },
+                { path: '/lab', lazy: page(() => import('./routes/lab-route')) },
+                { path: '/lab/sweeps', lazy: page(() => import('@/features/assigned/list/sweeps-page')) },
+                { path: '/assigned/:id/set', lazy: page(() => import('@/features/assigned/set/set-page')) },
                 { path: '/account', lazy: page(() => import('@/features/account/account-page')) },
               ],
             },

@@ -1,10 +1,10 @@
 import { useQuery } from '@tanstack/react-query';
-import { useState } from 'react';
+import { useState, type ReactNode } from 'react';
 import { useNavigate } from 'react-router-dom';
 
 import { ErrorState, LoadingState, PageState } from '@/components/states/page-state';
 import { Button } from '@/components/ui/button';
-import { roleMay } from '@/contract/rights';
+import { roleMay, type Role } from '@/contract/rights';
 import { useRefreshSession, useSession } from '@/lib/session';
 
 import { createLab, fetchLab, LAB_KEYS } from './api/lab-operations';
@@ -17,7 +17,12 @@ import { OwnInvitations } from './components/own-invitations';
 import { RoleRights } from './components/role-rights';
 import { useCurrentLab } from './use-current-lab';
 
-function Lab({ id, onNew }: { readonly id: string; readonly onNew: () => void }) {
+interface LabPageProps {
+  /** The assigned sweeps of a lab, as its members see them. */
+  readonly sweeps: (labId: string, role: Role) => ReactNode;
+}
+
+function Lab({ id, onNew, sweeps }: LabPageProps & { readonly id: string; readonly onNew: () => void }) {
   const me = useSession().data?.user?.id ?? '';
   const refresh = useRefreshSession();
   const navigate = useNavigate();
@@ -29,6 +34,7 @@ function Lab({ id, onNew }: { readonly id: string; readonly onNew: () => void })
   return (
     <>
       <LabHeading lab={lab.data} onNew={onNew} onLeave={() => setLeaving(true)} />
+      {sweeps(id, lab.data.role)}
       <div className={mayInvite ? 'grid gap-8 lg:grid-cols-2' : 'grid max-w-3xl gap-8'}>
         <MemberList lab={lab.data} />
         {mayInvite ? <InvitationList labId={id} /> : null}
@@ -52,7 +58,7 @@ function Lab({ id, onNew }: { readonly id: string; readonly onNew: () => void })
 }
 
 /** One lab at a time, and the ways to others: switching, founding, joining. */
-export default function LabPage() {
+export default function LabPage({ sweeps }: LabPageProps) {
   const { current, choose } = useCurrentLab();
   const refresh = useRefreshSession();
   const [founding, setFounding] = useState(false);
@@ -67,7 +73,7 @@ export default function LabPage() {
     <div className="mx-auto grid max-w-6xl gap-8 px-4 py-8">
       <OwnInvitations onJoined={choose} />
       {current ? (
-        <Lab key={current.labId} id={current.labId} onNew={() => setFounding(true)} />
+        <Lab key={current.labId} id={current.labId} onNew={() => setFounding(true)} sweeps={sweeps} />
       ) : (
         <PageState
           title="You are in no lab"

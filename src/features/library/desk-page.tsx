@@ -1,3 +1,4 @@
+import type { ReactNode } from 'react';
 import { Link } from 'react-router-dom';
 
 import { buttonClasses } from '@/components/ui/button';
@@ -62,7 +63,7 @@ function Shelf({
 }
 
 /** What is new, and where to begin. */
-export default function DeskPage() {
+export default function DeskPage({ assigned }: { readonly assigned: ReactNode }) {
   const user = useSession().data?.user;
   return (
     <div className="mx-auto grid max-w-6xl gap-8 px-4 py-8">
@@ -77,6 +78,7 @@ export default function DeskPage() {
           New preset
         </Link>
       </div>
+      {assigned}
       <div className="grid gap-8 lg:grid-cols-3">
         <Shelf
           title="Your presets"

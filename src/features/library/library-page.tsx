@@ -1,5 +1,5 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query';
-import { useState } from 'react';
+import { useState, type ReactNode } from 'react';
 import { Link, useNavigate } from 'react-router-dom';
 
 import { Button, buttonClasses } from '@/components/ui/button';
@@ -20,12 +20,18 @@ import { Pager } from './components/pager';
 import { PresetCard } from './components/preset-card';
 import { useLibraryQuery } from './query-state';
 
-export default function LibraryPage() {
+interface LibraryPageProps {
+  /** Asks where a preset is to be set as an assigned sweep; null for those who may not. */
+  readonly setSweep: ((preset: PresetSummary, onClose: () => void) => ReactNode) | null;
+}
+
+export default function LibraryPage({ setSweep }: LibraryPageProps) {
   const [query, changeQuery] = useLibraryQuery();
   const presets = usePresetList(query);
   const me = useSession().data?.user;
   const queries = useQueryClient();
   const navigate = useNavigate();
+  const [setting, setSetting] = useState<PresetSummary | null>(null);
   const [doomed, setDoomed] = useState<PresetSummary | null>(null);
   const refresh = () => queries.invalidateQueries({ queryKey: ['presets'] });
   const duplicate = useMutation({
@@ -99,6 +105,7 @@ export default function LibraryPage() {
             onTag={(tag) => changeQuery({ tag })}
             onDuplicate={(id) => duplicate.mutate(id)}
             onDelete={setDoomed}
+            onSetSweep={setSweep ? setSetting : null}
           />
         ))}
       </ul>
@@ -111,6 +118,7 @@ export default function LibraryPage() {
         />
       ) : null}
       {me ? <DeletedPresets /> : null}
+      {setting && setSweep ? setSweep(setting, () => setSetting(null)) : null}
       <DeleteDialog preset={doomed} onCancel={() => setDoomed(null)} onConfirm={(id) => remove.mutate(id)} />
     </div>
   );

@@ -13,6 +13,8 @@ interface PresetCardProps {
   readonly onTag: (tag: string) => void;
   readonly onDuplicate: (id: string) => void;
   readonly onDelete: (preset: PresetSummary) => void;
+  /** Null for those who set no sweeps. */
+  readonly onSetSweep: ((preset: PresetSummary) => void) | null;
 }
 
 function Whose({ preset, mine }: { readonly preset: PresetSummary; readonly mine: boolean }) {
@@ -27,7 +29,8 @@ function Whose({ preset, mine }: { readonly preset: PresetSummary; readonly mine
   );
 }
 
-export function PresetCard({ preset, mine, onTag, onDuplicate, onDelete }: PresetCardProps) {
+export function PresetCard(props: PresetCardProps) {
+  const { preset, mine, onTag, onDuplicate, onDelete, onSetSweep } = props;
   return (
     <li className="relative grid content-between gap-3 rounded-lg border bg-raised p-4 focus-within:border-accent hover:border-muted">
       <div className="grid gap-1.5">
@@ -49,6 +52,9 @@ export function PresetCard({ preset, mine, onTag, onDuplicate, onDelete }: Prese
             }
           >
             <MenuItem onSelect={() => onDuplicate(preset.id)}>Duplicate to my presets</MenuItem>
+            {onSetSweep ? (
+              <MenuItem onSelect={() => onSetSweep(preset)}>Set as an assigned sweep…</MenuItem>
+            ) : null}
             {mine ? <MenuItem onSelect={() => onDelete(preset)}>Delete…</MenuItem> : null}
           </Menu>
         </div>
