@@ -14,6 +14,7 @@ import { securityHeaders } from './middleware/security-headers';
 import { createSessions } from './middleware/sessions';
 import { refuseUnsound } from './middleware/sound-text';
 import { accountRoutes } from './routes/account-routes';
+import { assignedRoutes } from './routes/assigned-routes';
 import { auditRoutes } from './routes/audit-routes';
 import { demoRoutes } from './routes/demo-routes';
 import { healthRoutes } from './routes/health-routes';
@@ -24,6 +25,8 @@ import { presetRoutes } from './routes/preset-routes';
 import { sharedRoutes } from './routes/shared-routes';
 
 const LARGEST_BODY = '1mb';
+/** A hand-in holds a document and a kept sweep. */
+const LARGEST_HAND_IN = '2mb';
 const A_YEAR = 365 * 24 * 60 * 60_000;
 
 function apiRouter(dependencies: Dependencies): Router {
@@ -35,6 +38,7 @@ function apiRouter(dependencies: Dependencies): Router {
   });
   router.use(healthRoutes(dependencies), unsubscribeRoutes(dependencies));
   router.use(createSessions(database, settings), refuseForgeries(settings));
+  router.use('/assigned/:id/hand-ins', express.json({ limit: LARGEST_HAND_IN, strict: true }));
   router.use(express.json({ limit: LARGEST_BODY, strict: true }), refuseUnsound, findPerson(dependencies));
   router.use(
     accountRoutes(dependencies),
@@ -44,6 +48,7 @@ function apiRouter(dependencies: Dependencies): Router {
     mailSettingsRoutes(dependencies),
     presetRoutes(dependencies),
     sharedRoutes(dependencies),
+    assignedRoutes(dependencies),
   );
   if (settings.demo) router.use(demoRoutes(dependencies));
   router.use(refuseUnknownRoute);

@@ -4,6 +4,7 @@ import { AUDIT_SENTENCES, type AuditEntryBody, type AuditPage, type AuditQuery }
 
 import type { AuditEntry } from '../models/audit-entry';
 import type { Database } from '../models/database';
+import { csvLines, csvText } from '../presenters/csv';
 
 const PAGE = 50;
 const A_DAY = 24 * 60 * 60_000;
@@ -39,12 +40,6 @@ export async function listAudit({ models }: Database, labId: string, query: Audi
   return { items: rows.map(present), total: count, page: query.page, pageSize: PAGE };
 }
 
-/** A cell that no spreadsheet takes for a formula. */
-function cell(value: string): string {
-  const safe = /^[=+\-@\t\r]/.test(value) ? `'${value}` : value;
-  return `"${safe.replaceAll('"', '""')}"`;
-}
-
 /** The same as CSV, without pages. */
 export async function auditAsCsv({ models }: Database, labId: string, query: AuditQuery): Promise<string> {
   const rows = await models.AuditEntry.findAll({
@@ -53,7 +48,7 @@ export async function auditAsCsv({ models }: Database, labId: string, query: Aud
     limit: MOST_LINES,
   });
   const lines = rows.map(({ at, actorName, action, subject, details }) =>
-    [at.toISOString(), actorName, action, subject, JSON.stringify(details)].map(cell).join(','),
+    [at.toISOString(), actorName, action, subject, JSON.stringify(details)].map(csvText).join(','),
   );
-  return ['time,person,action,subject,details', ...lines, ''].join('\r\n');
+  return csvLines(['time,person,action,subject,details', ...lines]);
 }

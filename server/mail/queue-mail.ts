@@ -16,6 +16,8 @@ export interface NewMail {
   readonly key: string;
   readonly senderId?: string;
   readonly expiresAt?: Date;
+  /** Earliest time of sending. */
+  readonly notBefore?: Date;
 }
 
 /** So many within the stretch go out at once; what follows waits for its end and goes as one. */
@@ -31,20 +33,21 @@ export const BUNDLED_KINDS = MAIL_KIND_NAMES.filter((kind) => mailRule(kind).bun
 export async function queueMail(
   { database, mailer }: Pick<Dependencies, 'database' | 'mailer'>,
   transaction: Transaction,
-  { to, kind, content, key, senderId, expiresAt }: NewMail,
+  { to, kind, content, key, senderId, expiresAt, notBefore }: NewMail,
 ): Promise<void> {
   const { MailMessage } = database.models;
   if (await MailMessage.findOne({ where: { idempotencyKey: key }, attributes: ['id'], transaction })) return;
   const now = new Date();
-  let dueAt = now;
+  const earliest = notBefore && notBefore > now ? notBefore : now;
+  let dueAt = earliest;
   if (mailRule(kind).bundles) {
     const { timings, digestHour, timeZone } = await readMailSettings(database, to, transaction);
     const lately = await MailMessage.count({
       where: { address: to, kind: BUNDLED_KINDS, createdAt: { [Op.gt]: new Date(now.getTime() - STRETCH) } },
       transaction,
     });
-    if (timings[kind] === 'daily') dueAt = nextStrike(now, digestHour, timeZone);
-    else if (lately >= MANY) dueAt = new Date(now.getTime() + STRETCH);
+    if (timings[kind] === 'daily') dueAt = nextStrike(earliest, digestHour, timeZone);
+    else if (lately >= MANY && earliest === now) dueAt = new Date(now.getTime() + STRETCH);
   }
   await MailMessage.create(
     {
@@ -62,4 +65,23 @@ export async function queueMail(
     { transaction },
   );
   transaction.afterCommit(() => mailer.wake());
+}
+
+/** Takes back what waits and is not being sent, by the beginning of its name. */
+export async function withdrawMail(
+  { database }: Pick<Dependencies, 'database'>,
+  transaction: Transaction,
+  keyPrefix: string,
+): Promise<void> {
+  await database.models.MailMessage.update(
+    { state: 'withheld', content: null, settledAt: new Date() },
+    {
+      where: {
+        idempotencyKey: { [Op.gte]: keyPrefix, [Op.lt]: `${keyPrefix}\uffff` },
+        state: 'waiting',
+        claim: null,
+      },
+      transaction,
+    },
+  );
 }

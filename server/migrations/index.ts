@@ -7,6 +7,7 @@ import { presetsAndLinks } from './002-presets-and-links';
 import { auditAndPurge } from './003-audit-and-purge';
 import { mailQueue } from './004-mail-queue';
 import { invitations } from './005-invitations';
+import { assignedSweeps } from './006-assigned-sweeps';
 
 export const MIGRATIONS: readonly Migration[] = [
   accountsAndLabs,
@@ -14,6 +15,7 @@ export const MIGRATIONS: readonly Migration[] = [
   auditAndPurge,
   mailQueue,
   invitations,
+  assignedSweeps,
 ];
 
 /** Steps the schema forward (`up`) and back (`down`); each step is a transaction of its own. */

@@ -1,7 +1,11 @@
 import type { Sequelize, Transaction } from 'sequelize';
 
+import { defineAssignedPerson } from './assigned-person';
+import { defineAssignedSweep } from './assigned-sweep';
+import { defineAssignedWork } from './assigned-work';
 import { defineAuditEntry } from './audit-entry';
 import { connectSqlite } from './connection';
+import { defineHandIn } from './hand-in';
 import { defineInvitation } from './invitation';
 import { defineInvitationToken } from './invitation-token';
 import { defineLab } from './lab';
@@ -13,6 +17,7 @@ import { definePendingAccount } from './pending-account';
 import { definePreset } from './preset';
 import { definePresetTag } from './preset-tag';
 import { definePresetVersion } from './preset-version';
+import { defineReview } from './review';
 import { defineSessionRecord } from './session-record';
 import { defineShareLink } from './share-link';
 import { TransactionQueue } from './transaction-queue';
@@ -35,6 +40,11 @@ function defineModels(sequelize: Sequelize) {
     AuditEntry: defineAuditEntry(sequelize),
     MailMessage: defineMailMessage(sequelize),
     MailSettings: defineMailSettings(sequelize),
+    AssignedSweep: defineAssignedSweep(sequelize),
+    AssignedPerson: defineAssignedPerson(sequelize),
+    AssignedWork: defineAssignedWork(sequelize),
+    HandIn: defineHandIn(sequelize),
+    Review: defineReview(sequelize),
   };
   models.Membership.belongsTo(models.User, { as: 'user', foreignKey: 'userId' });
   models.Membership.belongsTo(models.Lab, { as: 'lab', foreignKey: 'labId' });
@@ -44,6 +54,9 @@ function defineModels(sequelize: Sequelize) {
   models.Preset.belongsTo(models.User, { as: 'owner', foreignKey: 'ownerId' });
   models.Preset.belongsTo(models.Lab, { as: 'lab', foreignKey: 'labId' });
   models.PresetVersion.belongsTo(models.User, { as: 'author', foreignKey: 'authorId' });
+  models.AssignedSweep.belongsTo(models.Lab, { as: 'lab', foreignKey: 'labId' });
+  models.AssignedPerson.belongsTo(models.AssignedSweep, { as: 'assigned', foreignKey: 'assignedId' });
+  models.HandIn.hasOne(models.Review, { as: 'review', foreignKey: 'handInId' });
   return models;
 }
 

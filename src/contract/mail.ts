@@ -39,6 +39,24 @@ export const MAIL_KINDS = {
     timings: ['daily', 'at once', 'off'],
     bundles: true,
   },
+  assigned: {
+    label: 'Sweeps set for you',
+    help: 'A sweep was opened for you, is due within a day, was reviewed or sent back.',
+    timings: ['at once', 'daily', 'off'],
+    bundles: true,
+  },
+  receipts: {
+    label: 'Receipts of what you hand in',
+    help: 'One message for each hand-in, with its receipt.',
+    timings: ['at once', 'off'],
+    bundles: false,
+  },
+  'hand-ins': {
+    label: 'Hand-ins to review',
+    help: 'Someone handed in a sweep in a lab that you supervise.',
+    timings: ['daily', 'at once', 'off'],
+    bundles: true,
+  },
 } as const satisfies Record<string, MailKindRule>;
 
 export type MailKind = keyof typeof MAIL_KINDS;

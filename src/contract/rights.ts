@@ -17,6 +17,9 @@ export const LAB_RIGHTS = {
   'save lab presets': ['supervisor', 'researcher'],
   'delete lab presets': ['supervisor'],
   'share lab presets by link': ['supervisor', 'researcher'],
+  'set sweeps': ['supervisor'],
+  'review hand-ins': ['supervisor'],
+  'do assigned sweeps': ['researcher', 'student', 'collaborator'],
 } as const satisfies Record<string, readonly Role[]>;
 export type LabRight = keyof typeof LAB_RIGHTS;
 

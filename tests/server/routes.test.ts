@@ -1,14 +1,16 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 
+import type { AssignedBody } from '@/contract/assigned-sweeps';
 import type { PresetBody } from '@/contract/presets';
 import type { Role } from '@/contract/rights';
 
 import { makeUnsubscribeToken } from '../../server/mail/unsubscribe-token';
 import { DEMO_LAB } from '../../server/seeds/demo';
+import { handInBody, openSweep, workBody } from '../support/assigned';
 import { sampleDocument, startTestServer, Visitor, type TestServer } from '../support/test-server';
 
 type Who = 'visitor' | Role | 'outsider';
-type Method = 'get' | 'post' | 'patch' | 'delete';
+type Method = 'get' | 'post' | 'patch' | 'delete' | 'put';
 interface Row {
   readonly method: Method;
   readonly path: string;
@@ -22,6 +24,9 @@ const people = new Map<Who, Visitor>();
 /** Presets of the researcher: one private, one open to the lab. */
 let own: PresetBody;
 let lab: PresetBody;
+/** For the student, and what they handed in. */
+let sweep: AssignedBody;
+let handInId = '';
 let token = '';
 let linkId = '';
 
@@ -65,6 +70,10 @@ beforeAll(async () => {
   const made = await researcher?.post(`/presets/${lab.preset.id}/links`, { label: 'for a reviewer' });
   token = (made?.body as { token: string }).token;
   linkId = (made?.body as { link: { id: string } }).link.id;
+  const supervisor = await server.person('supervisor');
+  sweep = await openSweep(supervisor, lab.preset.id, ['demo-student']);
+  const handed = await people.get('student')?.post(`/assigned/${sweep.id}/hand-ins`, handInBody());
+  handInId = (handed?.body as { id: string }).id;
 });
 afterAll(() => server.close());
 
@@ -76,6 +85,11 @@ const stopToken = () =>
 const inLab = (rest: string) => `/labs/${DEMO_LAB.id}${rest}`;
 /** For supervisors alone: others of the lab are refused, and for outsiders there is no such lab. */
 const supervised = (status: number) => ({ ...signedInOnly(403), supervisor: status, outsider: 404 });
+/** For the student whom the sweep is for; a supervisor hands nothing in, and for others it does not exist. */
+const assignee = (status: number) => by({ supervisor: 403, student: status });
+/** A hand-in does not exist for anyone but those who review. */
+const reviewer = (status: number) => by({ supervisor: status });
+const stale = () => ({ baseRevision: 999 });
 const save = () => ({ document: sampleDocument('Changed'), note: '', baseVersion: 999 });
 
 /** Every route that exists, with what each may get. Saves use a stale base, so that nothing changes: 409 means allowed. */
@@ -306,6 +320,55 @@ const rows = (): Row[] => [
       outsider: 404,
     },
   },
+  { method: 'get', path: inLab('/assigned'), expect: { ...signedInOnly(200), outsider: 404 } },
+  { method: 'get', path: inLab('/assigned?state=lost'), expect: { ...signedInOnly(400), outsider: 404 } },
+  { method: 'post', path: inLab('/assigned'), body: () => ({}), expect: supervised(400) },
+  {
+    method: 'post',
+    path: inLab('/assigned'),
+    body: () => ({ presetId: 'none', version: 1 }),
+    expect: supervised(404),
+  },
+  {
+    method: 'post',
+    path: inLab('/assigned'),
+    body: () => ({ presetId: lab.preset.id, version: 1 }),
+    expect: supervised(201),
+  },
+  { method: 'get', path: '/assigned', expect: signedInOnly(200) },
+  { method: 'get', path: '/assigned?page=0', expect: signedInOnly(400) },
+  { method: 'get', path: '/assigned/none', expect: signedInOnly(404) },
+  { method: 'get', path: `/assigned/${sweep.id}`, expect: supervised(200) },
+  { method: 'patch', path: `/assigned/${sweep.id}`, body: () => ({}), expect: supervised(400) },
+  { method: 'patch', path: `/assigned/${sweep.id}`, body: stale, expect: supervised(409) },
+  { method: 'delete', path: `/assigned/${sweep.id}`, expect: supervised(409) },
+  ...['open', 'close', 'again'].flatMap((step): Row[] => [
+    { method: 'post', path: `/assigned/${sweep.id}/${step}`, body: () => ({}), expect: supervised(400) },
+    { method: 'post', path: `/assigned/${sweep.id}/${step}`, body: stale, expect: supervised(409) },
+  ]),
+  { method: 'get', path: `/assigned/${sweep.id}/task`, expect: assignee(200) },
+  { method: 'put', path: `/assigned/${sweep.id}/work`, body: () => ({}), expect: assignee(400) },
+  { method: 'put', path: `/assigned/${sweep.id}/work`, body: () => workBody(999), expect: assignee(409) },
+  { method: 'post', path: `/assigned/${sweep.id}/hand-ins`, body: () => ({}), expect: assignee(400) },
+  { method: 'post', path: `/assigned/${sweep.id}/hand-ins`, body: () => handInBody(), expect: assignee(201) },
+  { method: 'get', path: `/assigned/${sweep.id}/table`, expect: supervised(200) },
+  { method: 'get', path: `/assigned/${sweep.id}/table.csv`, expect: supervised(200) },
+  { method: 'post', path: `/assigned/${sweep.id}/send-back`, body: () => ({}), expect: supervised(400) },
+  {
+    method: 'post',
+    path: `/assigned/${sweep.id}/send-back`,
+    body: () => ({ people: ['nobody'], note: 'Once more.' }),
+    expect: supervised(200),
+  },
+  { method: 'get', path: '/hand-ins/none', expect: signedInOnly(404) },
+  { method: 'get', path: `/hand-ins/${handInId}`, expect: reviewer(200) },
+  { method: 'put', path: `/hand-ins/${handInId}/review`, body: () => ({}), expect: reviewer(400) },
+  {
+    method: 'put',
+    path: `/hand-ins/${handInId}/review`,
+    body: () => ({ baseRevision: 9, judgements: {}, remarks: [], outcome: null, note: '' }),
+    expect: reviewer(409),
+  },
   { method: 'get', path: `/shared/${token}`, expect: all(200) },
   { method: 'get', path: '/shared/none', expect: all(404) },
   { method: 'post', path: `/shared/${token}/copy`, body: () => ({}), expect: signedInOnly(201) },
@@ -381,6 +444,9 @@ describe('every route with every role', () => {
       path
         .replace(own.preset.id, ':id')
         .replace(lab.preset.id, ':id')
+        .replace(sweep.id, ':id')
+        .replace(handInId, ':id')
+        .replace(/^\/(assigned|hand-ins)\/none/, '/$1/:id')
         .replace(/\/presets\/none/, '/presets/:id')
         .replace(/\/versions\/\d+/, '/versions/:number')
         .replace(/\/links\/none/, '/links/:linkId')

@@ -47,7 +47,7 @@ export class Visitor {
     return this.agent.get(`/api${path}`).then((answer) => answer);
   }
 
-  async send(method: 'post' | 'patch' | 'delete', path: string, body?: unknown): Promise<Response> {
+  async send(method: 'post' | 'patch' | 'delete' | 'put', path: string, body?: unknown): Promise<Response> {
     if (this.token === '') await this.session();
     const call = this.agent[method](`/api${path}`).set('x-csrf-token', this.token);
     const answer = await (body === undefined ? call : call.send(body as object));
