@@ -62,6 +62,14 @@ export function createRouter() {
                 { path: '/lab', lazy: page(() => import('./routes/lab-route')) },
                 { path: '/lab/sweeps', lazy: page(() => import('@/features/assigned/list/sweeps-page')) },
                 { path: '/assigned/:id/set', lazy: page(() => import('@/features/assigned/set/set-page')) },
+                {
+                  path: '/assigned/:id/review',
+                  lazy: page(() => import('@/features/assigned/review/review-page')),
+                },
+                {
+                  path: '/hand-ins/:id',
+                  lazy: page(() => import('@/features/assigned/review/hand-in-page')),
+                },
                 { path: '/account', lazy: page(() => import('@/features/account/account-page')) },
               ],
             },

@@ -96,6 +96,12 @@ export class RevisionKeeper<Body, Edits extends object> {
     this.put({ edits: {}, saving: { state: 'saved' } });
   };
 
+  /** Gives up one of the edits, and leaves what was said of saving. */
+  readonly forget = (key: keyof Edits): void => {
+    const { [key]: _given, ...rest } = this.kept.edits;
+    this.put({ edits: rest as Partial<Edits> });
+  };
+
   /** Tries again at once where the connection had failed. */
   readonly retry = (): void => {
     const { saving } = this.kept;

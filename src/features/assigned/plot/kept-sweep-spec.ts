@@ -12,7 +12,8 @@ export interface KeptLayer {
   /** Whose it is, e.g. `theirs`, `reference`. */
   readonly name: string;
   readonly model: KeptModel;
-  readonly grey: boolean;
+  /** `thin` lies over the others without hiding them. */
+  readonly tone: 'hue' | 'grey' | 'thin';
 }
 
 type Read = (series: Readonly<Record<string, readonly number[]>>, point: number) => number;
@@ -50,9 +51,12 @@ function runsOf({ attracts }: KeptBranch): readonly Run[] {
 
 const WORDS = ['repels', 'attracts', 'neutral or undecided'] as const;
 
-function style(attracts: number, grey: boolean): { width: number; dash?: readonly number[] } {
-  if (attracts === 1) return { width: grey ? 3.4 : 2.2 };
-  return { width: grey ? 2 : 1.4, dash: attracts === 0 ? [6, 4] : [1.5, 3.5] };
+const WIDTHS = { hue: [2.2, 1.4], grey: [4, 2.6], thin: [0.9, 0.9] } as const;
+
+function style(attracts: number, tone: KeptLayer['tone']): { width: number; dash?: readonly number[] } {
+  const [solid, broken] = WIDTHS[tone];
+  if (attracts === 1) return { width: solid };
+  return { width: broken, dash: attracts === 0 ? [6, 4] : [1.5, 3.5] };
 }
 
 interface Drawn {
@@ -99,14 +103,14 @@ function drawLayer(
       const at = Array.from({ length: run.to - run.from + 1 }, (_, k) => run.from + k);
       const x = Float64Array.from(at, (k) => branch.parameters[k] ?? NaN);
       const y = Float64Array.from(at, (k) => read(branch.values, k));
-      const { width, dash } = style(run.attracts, layer.grey);
+      const { width, dash } = style(run.attracts, layer.tone);
       const common = {
         id: `${layer.id}:${branch.of}:${index}:${order}`,
         label: `${layer.name}, ${branch.of === 'cycles' ? 'cycle' : 'branch'} ${index + 1}, ${WORDS[run.attracts] ?? ''}`,
         colour,
         ...(dash ? { dash } : {}),
         x,
-        twin: layer.grey,
+        twin: layer.tone === 'grey',
       };
       if (branch.of === 'equilibria') drawn.lines.push({ ...common, width, marker: null, y });
       else
@@ -114,7 +118,7 @@ function drawLayer(
           ...common,
           low: Float64Array.from(at, (k) => read(branch.lowest, k)),
           high: y,
-          opacity: layer.grey ? 0.1 : 0.16,
+          opacity: layer.tone === 'hue' ? 0.16 : layer.tone === 'grey' ? 0.1 : 0,
           edge: { width, opacity: 1 },
         });
     });
@@ -130,9 +134,9 @@ function drawLayer(
         y,
         glyph: point.kind,
         colour,
-        size: layer.grey ? 7 : 6,
-        named: true,
-        twin: layer.grey,
+        size: layer.tone === 'grey' ? 8 : 6,
+        named: layer.tone !== 'thin',
+        twin: layer.tone === 'grey',
       });
   });
   return drawn;
@@ -178,7 +182,8 @@ export function keptSweepSpec(
   const parameter = parameterName(document, range.parameter);
   const named = nameQuantity(document, classQuantity(symbol));
   const hue = classColours(document.populations, palette).get(symbol) ?? palette.ink;
-  const colourOf = (layer: KeptLayer) => (layer.grey ? palette.twin : hue);
+  const colours = { hue, grey: palette.twin, thin: palette.ink } as const;
+  const colourOf = (layer: KeptLayer) => colours[layer.tone];
   const drawn: Drawn = { lines: [], bands: [], points: [] };
   for (const layer of layers) {
     const one = drawLayer(layer, range.parameter, colourOf(layer), (symbols) =>

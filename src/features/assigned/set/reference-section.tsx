@@ -33,8 +33,10 @@ export function ReferenceSection({
     (): readonly KeptLayer[] =>
       sweep
         ? [
-            ...(sweep.twin ? [{ id: 'twin', name: 'pooled twin', model: sweep.twin, grey: true }] : []),
-            { id: 'split', name: 'split model', model: sweep.split, grey: false },
+            ...(sweep.twin
+              ? [{ id: 'twin', name: 'pooled twin', model: sweep.twin, tone: 'grey' as const }]
+              : []),
+            { id: 'split', name: 'split model', model: sweep.split, tone: 'hue' as const },
           ]
         : [],
     [sweep],
