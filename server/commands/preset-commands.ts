@@ -15,6 +15,7 @@ import type { PresetVersion } from '../models/preset-version';
 import type { ShareLink } from '../models/share-link';
 import { demand, mayPlaceIn } from '../policies/preset-policy';
 import { populationsOf } from '../presenters/present-preset';
+import { readDocument, withHiddenFacts } from './assigned/known-facts';
 import { checkDocument } from './check-document';
 
 export interface PresetAndVersion {
@@ -187,12 +188,12 @@ export async function saveVersion(
   save: Save,
 ): Promise<PresetAndVersion> {
   const { Preset, PresetVersion } = dependencies.database.models;
-  const text = checkDocument(save.document);
+  const given = checkDocument(save.document);
   await dependencies.database.change(async (transaction) => {
     const preset = await findPreset(dependencies, id, transaction);
     demand(person, save.restoredFrom === undefined ? 'save' : 'restore', preset);
+    const head = await findVersion(dependencies, id, preset.headNumber, transaction);
     if (preset.headNumber !== save.baseVersion) {
-      const head = await findVersion(dependencies, id, preset.headNumber, transaction);
       throw refuseStaleSave({
         number: head.number,
         author: head.author?.name ?? 'Someone',
@@ -200,6 +201,11 @@ export async function saveVersion(
         note: head.note,
       });
     }
+    const document =
+      save.restoredFrom === undefined
+        ? await withHiddenFacts(dependencies, transaction, person, preset, { head, next: save.document })
+        : save.document;
+    const text = document === save.document ? given : checkDocument(document);
     const number = preset.headNumber + 1;
     const now = new Date();
     await PresetVersion.create(
@@ -246,14 +252,14 @@ export async function restoreVersion(
   });
 }
 
-/** A copy of a version, private to the one who makes it. */
+/** A copy of a version, private to the one who makes it; what they may not read is not in it. */
 export async function copyDocument(
   dependencies: Dependencies,
   person: Person,
-  source: PresetVersion,
+  { preset, version: source }: PresetAndVersion,
   title: string,
 ): Promise<PresetAndVersion> {
-  const document = JSON.parse(source.document) as PresetDocument;
+  const document = await readDocument(dependencies, person, preset, source);
   const named = { ...document, title: (title || `${document.title}, copy`).slice(0, LIMITS.titleLength) };
   const note = `Copied from “${document.title}”, version ${source.number}`.slice(0, LIMITS.noteLength);
   return createPreset(dependencies, person, { document: named, note, visibility: 'private', labId: null });

@@ -42,11 +42,17 @@ export function presentVersion(version: PresetVersion): VersionSummary {
   };
 }
 
-export function presentPreset(person: Person, preset: Preset, version: PresetVersion): PresetBody {
+/** `document` is that of the version as this person may read it. */
+export function presentPreset(
+  person: Person,
+  preset: Preset,
+  version: PresetVersion,
+  document: PresetDocument,
+): PresetBody {
   return {
     preset: presentSummary(preset),
     version: presentVersion(version),
-    document: JSON.parse(version.document) as PresetDocument,
+    document,
     rights: rightsOn(person, preset),
   };
 }

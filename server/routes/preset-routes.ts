@@ -12,6 +12,7 @@ import {
   saveVersionSchema,
 } from '@/contract/presets';
 
+import { readDocument } from '../commands/assigned/known-facts';
 import { bringBack, listDeleted } from '../commands/deleted-presets';
 import { listPresets } from '../commands/list-presets';
 import {
@@ -48,8 +49,10 @@ export function presetRoutes(dependencies: Dependencies): Router {
   const { database, settings } = dependencies;
   const router = Router();
   router.use('/presets', requireSignedIn);
-  const present = (request: Request, { preset, version }: PresetAndVersion) =>
-    presentPreset(signedIn(request), preset, version);
+  const present = async (request: Request, { preset, version }: PresetAndVersion) => {
+    const person = signedIn(request);
+    return presentPreset(person, preset, version, await readDocument(dependencies, person, preset, version));
+  };
 
   router.get('/presets', async (request, response) => {
     response.json(await listPresets(dependencies, signedIn(request), parseQuery(request, presetQuerySchema)));
@@ -57,7 +60,7 @@ export function presetRoutes(dependencies: Dependencies): Router {
 
   router.post('/presets', async (request, response) => {
     const made = await createPreset(dependencies, signedIn(request), parseBody(request, createPresetSchema));
-    response.status(201).json(present(request, made));
+    response.status(201).json(await present(request, made));
   });
 
   router.get('/presets/deleted', async (request, response) => {
@@ -73,14 +76,17 @@ export function presetRoutes(dependencies: Dependencies): Router {
     const preset = await findPreset(dependencies, presetId(request));
     demand(signedIn(request), 'view', preset);
     const version = await findVersion(dependencies, preset.id, preset.headNumber);
-    response.json(present(request, { preset, version }));
+    response.json(await present(request, { preset, version }));
   });
 
   router.patch('/presets/:id', async (request, response) => {
     demand(signedIn(request), 'change visibility', await findPreset(dependencies, presetId(request)));
     const body = parseBody(request, changePresetSchema);
     response.json(
-      present(request, await changeVisibility(dependencies, signedIn(request), presetId(request), body)),
+      await present(
+        request,
+        await changeVisibility(dependencies, signedIn(request), presetId(request), body),
+      ),
     );
   });
 
@@ -96,7 +102,12 @@ export function presetRoutes(dependencies: Dependencies): Router {
     const source = await findVersion(dependencies, preset.id, version ?? preset.headNumber);
     response
       .status(201)
-      .json(present(request, await copyDocument(dependencies, signedIn(request), source, title)));
+      .json(
+        await present(
+          request,
+          await copyDocument(dependencies, signedIn(request), { preset, version: source }, title),
+        ),
+      );
   });
 
   router.get('/presets/:id/versions', async (request, response) => {
@@ -118,14 +129,14 @@ export function presetRoutes(dependencies: Dependencies): Router {
     demand(signedIn(request), 'save', await findPreset(dependencies, presetId(request)));
     const body = parseBody(request, saveVersionSchema);
     const saved = await saveVersion(dependencies, signedIn(request), presetId(request), body);
-    response.status(201).json(present(request, saved));
+    response.status(201).json(await present(request, saved));
   });
 
   router.get('/presets/:id/versions/:number', async (request, response) => {
     const preset = await findPreset(dependencies, presetId(request));
     demand(signedIn(request), 'view', preset);
     const version = await findVersion(dependencies, preset.id, versionNumber(request));
-    response.json(present(request, { preset, version }));
+    response.json(await present(request, { preset, version }));
   });
 
   router.post('/presets/:id/versions/:number/restore', async (request, response) => {
@@ -133,7 +144,7 @@ export function presetRoutes(dependencies: Dependencies): Router {
     const body = parseBody(request, restoreVersionSchema);
     const number = versionNumber(request);
     const restored = await restoreVersion(dependencies, signedIn(request), presetId(request), number, body);
-    response.status(201).json(present(request, restored));
+    response.status(201).json(await present(request, restored));
   });
 
   router.get('/presets/:id/links', async (request, response) => {

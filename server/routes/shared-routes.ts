@@ -1,8 +1,8 @@
 import { Router } from 'express';
 
 import { duplicatePresetSchema, type SharedBody } from '@/contract/presets';
-import type { PresetDocument } from '@/engine/schema/preset';
 
+import { readDocument } from '../commands/assigned/known-facts';
 import { copyDocument, countOpening, openLink } from '../commands/preset-commands';
 import type { Dependencies } from '../dependencies';
 import { requireSignedIn, signedIn, visitorOrPerson } from '../middleware/current-user';
@@ -20,17 +20,19 @@ export function sharedRoutes(dependencies: Dependencies): Router {
       title: preset.title,
       owner: preset.owner?.name ?? '',
       version: presentVersion(version),
-      document: JSON.parse(version.document) as PresetDocument,
+      document: await readDocument(dependencies, visitorOrPerson(request), preset, version),
     };
     response.json(body);
   });
 
   router.post('/shared/:token/copy', requireSignedIn, async (request, response) => {
-    const { version } = await openLink(dependencies, String(request.params.token));
+    const person = signedIn(request);
+    const opened = await openLink(dependencies, String(request.params.token));
     // A link shows the head, whatever version is asked for.
     const { title } = parseBody(request, duplicatePresetSchema);
-    const copy = await copyDocument(dependencies, signedIn(request), version, title);
-    response.status(201).json(presentPreset(signedIn(request), copy.preset, copy.version));
+    const { preset, version } = await copyDocument(dependencies, person, opened, title);
+    const document = await readDocument(dependencies, person, preset, version);
+    response.status(201).json(presentPreset(person, preset, version, document));
   });
 
   return router;
