@@ -6,7 +6,8 @@ import { SelectField } from '@/components/fields/select-field';
 import { Button } from '@/components/ui/button';
 import { Dialog } from '@/components/ui/dialog';
 
-import { createAssigned, SET_KEYS } from '../api/set-operations';
+import { changeAssigned, createAssigned, SET_KEYS } from '../api/set-operations';
+import { ownTimeZone } from '../set/zoned-time';
 import { useSettingLabs } from './use-setting-labs';
 
 interface SetSweepDialogProps {
@@ -21,7 +22,12 @@ export function SetSweepDialog({ preset, onClose }: SetSweepDialogProps) {
   const navigate = useNavigate();
   const queries = useQueryClient();
   const make = useMutation({
-    mutationFn: () => createAssigned(labId, { presetId: preset.id, version: preset.version }),
+    mutationFn: async () => {
+      const made = await createAssigned(labId, { presetId: preset.id, version: preset.version });
+      const timeZone = ownTimeZone();
+      if (made.timeZone === timeZone) return made;
+      return changeAssigned(made.id, { baseRevision: made.revision, timeZone });
+    },
     onSuccess: async (made) => {
       queries.setQueryData(SET_KEYS.assigned(made.id), made);
       void queries.invalidateQueries({ queryKey: ['assigned', 'lab'] });

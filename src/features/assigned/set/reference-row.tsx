@@ -10,14 +10,16 @@ import type { Candidate } from './set-view';
 interface ReferenceRowProps {
   readonly wanted: WantedFinding;
   readonly finding: ReferenceFinding;
-  readonly candidates: readonly Candidate[];
+  /** Null while there is no sweep to take them from. */
+  readonly candidates: readonly Candidate[] | null;
   readonly onChange: (finding: ReferenceFinding) => void;
 }
 
 /** What is expected for one finding; anything changed in it has to be confirmed anew. */
 export function ReferenceRow({ wanted, finding, candidates, onChange }: ReferenceRowProps) {
   const put = (patch: Partial<ReferenceFinding>) => onChange({ ...finding, confirmed: false, ...patch });
-  const chosen = candidates.findIndex((one) => one.parameter === finding.value);
+  const points = candidates ?? [];
+  const chosen = points.findIndex((one) => one.parameter === finding.value);
   const empty = finding.value === null && !finding.text.trim();
   return (
     <li className="grid gap-2 p-3 sm:grid-cols-[minmax(0,1fr)_auto]">
@@ -46,27 +48,32 @@ export function ReferenceRow({ wanted, finding, candidates, onChange }: Referenc
               {...(wanted.kind === 'number' ? { unit: wanted.unit } : {})}
             />
           )}
-          {candidates.length > 1 ? (
+          {points.length > 1 ? (
             <SelectField
               label={`Which ${wanted.kind === 'special point' ? wanted.point : 'point'} for ${wanted.label}`}
               visibleLabel={false}
               className="w-60 max-w-full"
               value={chosen < 0 ? '' : String(chosen)}
               choices={[
-                { value: '', label: `One of ${candidates.length}…` },
-                ...candidates.map((one, index) => ({
+                { value: '', label: `One of ${points.length}…` },
+                ...points.map((one, index) => ({
                   value: String(index),
                   label: `at ${formatNumber(one.parameter, 6)}`,
                 })),
               ]}
               onChange={(value) => {
-                const point = candidates[Number(value)];
+                const point = points[Number(value)];
                 if (value !== '' && point) put({ value: point.parameter });
               }}
             />
           ) : null}
         </div>
-        {chosen >= 0 ? <p className="text-sm text-muted">{candidates[chosen]?.meaning}</p> : null}
+        {wanted.kind === 'special point' && candidates?.length === 0 ? (
+          <p className="text-sm text-caution">
+            This sweep has no {wanted.point} of the {wanted.of === 'split' ? 'split model' : 'pooled twin'}.
+          </p>
+        ) : null}
+        {chosen >= 0 ? <p className="text-sm text-muted">{points[chosen]?.meaning}</p> : null}
       </div>
       <CheckField
         label="Confirmed"

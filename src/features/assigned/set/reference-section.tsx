@@ -100,7 +100,7 @@ export function ReferenceSection({
               key={wanted.id}
               wanted={wanted}
               finding={referenceFor(view.reference.findings, wanted.id)}
-              candidates={candidatesFor(sweep, wanted)}
+              candidates={sweep ? candidatesFor(sweep, wanted) : null}
               onChange={(finding) => onChange({ reference: withReference(latest(), finding) })}
             />
           ))}
