@@ -9,6 +9,7 @@ import { refuseNotFound } from '../errors';
 import { makeId } from '../ids';
 import { removedMessage, roleChangedMessage } from '../mail/lab-messages';
 import { queueMail } from '../mail/queue-mail';
+import { forgetRemindersIn } from '../mail/tell-assigned';
 import { tellSupervisors } from '../mail/tell-supervisors';
 import type { Person } from '../middleware/current-user';
 import type { Database } from '../models/database';
@@ -87,6 +88,7 @@ export async function endMembership(
     refuseObstacle(await obstacleToGivingUp(database, member, transaction));
     const copies = await keepCopies(dependencies, transaction, member.user, member.lab);
     await database.models.Membership.destroy({ where: { labId, userId }, transaction });
+    await forgetRemindersIn(dependencies, transaction, labId, userId);
     await recordAudit(database, transaction, {
       actor: person,
       action: leaving ? 'member left' : 'member removed',

@@ -43,7 +43,13 @@ export async function queueMail(
   if (mailRule(kind).bundles) {
     const { timings, digestHour, timeZone } = await readMailSettings(database, to, transaction);
     const lately = await MailMessage.count({
-      where: { address: to, kind: BUNDLED_KINDS, createdAt: { [Op.gt]: new Date(now.getTime() - STRETCH) } },
+      where: {
+        address: to,
+        kind: BUNDLED_KINDS,
+        createdAt: { [Op.gt]: new Date(now.getTime() - STRETCH) },
+        // Reminders that wait for their day are no news of now.
+        dueAt: { [Op.lte]: new Date(now.getTime() + STRETCH) },
+      },
       transaction,
     });
     if (timings[kind] === 'daily') dueAt = nextStrike(earliest, digestHour, timeZone);

@@ -3,6 +3,7 @@ import { Op, type Transaction } from 'sequelize';
 import { rolesThatMay } from '@/contract/rights';
 
 import type { Dependencies } from '../dependencies';
+import { makeId } from '../ids';
 import type { AssignedSweep } from '../models/assigned-sweep';
 import type { HandIn } from '../models/hand-in';
 import type { Outcome } from '../models/review';
@@ -58,7 +59,7 @@ export async function remind(
       to: user.email,
       kind: 'assigned',
       content: dueSoonMessage(user.name, about(assigned), dependencies.settings.publicUrl),
-      key: `${prefix}${assigned.revision} ${dueAt.getTime()}`,
+      key: `${prefix}${makeId()}`,
       notBefore: new Date(dueAt.getTime() - A_DAY),
       expiresAt: dueAt,
     });
@@ -74,6 +75,21 @@ export const forgetReminder = (
 
 export const forgetReminders = (dependencies: Dependencies, transaction: Transaction, assignedId: string) =>
   withdrawMail(dependencies, transaction, `due soon ${assignedId} `);
+
+/** For someone who leaves a lab: nothing there waits for them any more. */
+export async function forgetRemindersIn(
+  dependencies: Dependencies,
+  transaction: Transaction,
+  labId: string,
+  userId: string,
+): Promise<void> {
+  const places = await dependencies.database.models.AssignedPerson.findAll({
+    where: { userId },
+    include: [{ association: 'assigned', attributes: ['id'], where: { labId }, required: true }],
+    transaction,
+  });
+  for (const { assignedId } of places) await forgetReminder(dependencies, transaction, assignedId, userId);
+}
 
 /** Tells people that a sweep is for them, once each. */
 export async function tellSet(

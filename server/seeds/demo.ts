@@ -1,9 +1,10 @@
-import type { Role } from '@/contract/rights';
+import { roleMay, type Role } from '@/contract/rights';
 import { STARTER_PRESETS } from '@/presets';
 
 import { createPreset } from '../commands/preset-commands';
 import type { Dependencies } from '../dependencies';
 import { readPerson } from '../middleware/current-user';
+import { seedDemoSweeps } from './demo-sweeps';
 
 export interface DemoPerson {
   id: string;
@@ -50,10 +51,18 @@ export const DEMO_PEOPLE: readonly DemoPerson[] = [
 
 const OPEN_TO_LAB = ['saturating-two-sex-predator', 'allee-under-harvest'] as const;
 
-/** The demo lab, its people and two presets open to it; made once, kept afterwards. */
+/** The demo lab, its people, two presets open to it and a sweep to work on; made once, kept afterwards. */
 export async function seedDemo(dependencies: Dependencies): Promise<void> {
+  await seedPeople(dependencies);
+  await seedPresets(dependencies);
+  const supervisor = await readPerson(dependencies, 'demo-supervisor');
+  if (supervisor?.memberships.some(({ labId, role }) => labId === DEMO_LAB.id && roleMay(role, 'set sweeps')))
+    await seedDemoSweeps(dependencies, supervisor, DEMO_LAB.id, 'demo-student');
+}
+
+async function seedPeople(dependencies: Dependencies): Promise<void> {
   const { database, passwords } = dependencies;
-  const { User, Lab, Membership, Preset } = database.models;
+  const { User, Lab, Membership } = database.models;
   const now = new Date();
   const hashes = await Promise.all(DEMO_PEOPLE.map(({ password }) => passwords.hash(password)));
   await database.change(async (transaction) => {
@@ -68,6 +77,10 @@ export async function seedDemo(dependencies: Dependencies): Promise<void> {
       }
     }
   });
+}
+
+async function seedPresets(dependencies: Dependencies): Promise<void> {
+  const { Preset } = dependencies.database.models;
   if ((await Preset.count({ where: { labId: DEMO_LAB.id } })) > 0) return;
   const researcher = await readPerson(dependencies, 'demo-researcher');
   if (researcher === null) return;

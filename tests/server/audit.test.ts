@@ -42,7 +42,13 @@ it('shows supervisors what was done to a preset of the lab, in order', async () 
   const opened = (await supervisor.get(`${path}?action=link%20opened`)).body as AuditPage;
   expect(opened.total).toBe(1);
   const mine = (await supervisor.get(`${path}?person=demo-supervisor`)).body as AuditPage;
-  expect(mine.items.map(({ action }) => action)).toEqual(['preset deleted']);
+  // Below it, the sweeps of the demo.
+  expect(mine.items.map(({ action }) => action)).toEqual([
+    'preset deleted',
+    'sweep opened',
+    'sweep drafted',
+    'sweep drafted',
+  ]);
   expect(((await supervisor.get(`${path}?to=2001-01-01`)).body as AuditPage).total).toBe(0);
   const csv = await supervisor.get(`${path}.csv`);
   expect(csv.headers['content-type']).toContain('text/csv');

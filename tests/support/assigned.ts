@@ -21,6 +21,8 @@ export const documentWithAnswer = (title = 'Newts in a pond'): PresetDocument =>
   knownFacts: [
     {
       kind: 'special-point',
+      parameters: {},
+      of: 'split',
       sweep: { parameter: 'r', from: 0, to: 2 },
       point: 'fold',
       value: SECRET_VALUE,

@@ -5,7 +5,7 @@ import type { SaveReview } from '@/contract/assigned-sweeps';
 import { recordAudit } from '../../audit/record-audit';
 import type { Dependencies } from '../../dependencies';
 import { Refusal, refuseInvalid, refuseNotFound } from '../../errors';
-import { tellReviewed } from '../../mail/tell-assigned';
+import { forgetReminder, remind, tellReviewed } from '../../mail/tell-assigned';
 import type { Person } from '../../middleware/current-user';
 import type { AssignedSweep } from '../../models/assigned-sweep';
 import type { HandIn } from '../../models/hand-in';
@@ -43,16 +43,19 @@ export async function findHandIn(
 
 /** Where someone stands follows their newest hand-in alone. */
 async function followOutcome(
-  { database }: Dependencies,
+  dependencies: Dependencies,
   transaction: Transaction,
-  handIn: HandIn,
+  { handIn, assigned }: FoundHandIn,
   outcome: Outcome | null,
 ): Promise<void> {
-  const { HandIn, AssignedPerson } = database.models;
+  const { HandIn, AssignedPerson } = dependencies.database.models;
   const { assignedId, userId } = handIn;
   const newest = await HandIn.max<number, HandIn>('number', { where: { assignedId, userId }, transaction });
   if (newest !== handIn.number) return;
   await AssignedPerson.update({ state: outcome ?? 'sent' }, { where: { assignedId, userId }, transaction });
+  if (outcome === 'sent back' && assigned.state === 'open')
+    await remind(dependencies, transaction, assigned, [userId]);
+  else await forgetReminder(dependencies, transaction, assignedId, userId);
 }
 
 async function giveBack(
@@ -115,7 +118,7 @@ export async function saveReview(
       { handInId: id, revision, ...review, byId: person.id, byName: person.name, at: new Date() },
       { transaction },
     );
-    await followOutcome(dependencies, transaction, found.handIn, review.outcome);
+    await followOutcome(dependencies, transaction, found, review.outcome);
     const { outcome, note } = review;
     const told = outcome !== null && (outcome !== kept?.outcome || note !== kept.note);
     if (told) await giveBack(dependencies, transaction, person, found, { outcome, note, revision });
@@ -157,7 +160,7 @@ export async function sendBack(
         },
         { transaction },
       );
-      await followOutcome(dependencies, transaction, handIn, 'sent back');
+      await followOutcome(dependencies, transaction, { handIn, assigned }, 'sent back');
       await giveBack(
         dependencies,
         transaction,
