@@ -7,29 +7,26 @@ import { CountFigures } from './count-figures';
 import { DueWords } from './due-words';
 import { WorkStateChip } from './work-state-chip';
 
-/** Where a sweep is opened: those who set it see the work on it, or the draft; others their own task. */
-function placeOf({ id, counts, state }: AssignedSummary): string {
-  if (counts === null) return `/assigned/${id}`;
-  return state === 'draft' ? `/assigned/${id}/set` : `/assigned/${id}/review`;
-}
-
-/** One assigned sweep in a list. */
+/** One assigned sweep in a list: those who set it are led to its editor and the work on it, others to their task. */
 export function SweepRow({ sweep, withLab }: { readonly sweep: AssignedSummary; readonly withLab: boolean }) {
   const { title, lab, state, dueAt, timeZone, mine, counts } = sweep;
   return (
     <li className="grid gap-1.5 px-4 py-3">
       <div className="flex flex-wrap items-center justify-between gap-x-4 gap-y-1">
-        <Link to={placeOf(sweep)} className="min-w-0 font-medium break-words hover:underline">
+        <Link
+          to={counts ? `/assigned/${sweep.id}/set` : `/assigned/${sweep.id}`}
+          className="min-w-0 font-medium break-words hover:underline"
+        >
           {title}
         </Link>
         <span className="flex items-center gap-2">
-          {counts ? (
+          {counts && state !== 'draft' ? (
             <Link
-              to={`/assigned/${sweep.id}/set`}
-              aria-label={`Edit ${title}`}
+              to={`/assigned/${sweep.id}/review`}
+              aria-label={`Review ${title}`}
               className="text-sm text-accent underline underline-offset-2"
             >
-              edit
+              review
             </Link>
           ) : null}
           {mine ? <WorkStateChip state={mine} /> : null}

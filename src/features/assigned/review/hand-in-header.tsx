@@ -3,7 +3,7 @@ import { Link } from 'react-router-dom';
 
 import { buttonClasses } from '@/components/ui/button';
 import type { ReviewedHandIn } from '@/contract/assigned-sweeps';
-import { formatNumber } from '@/graphics/numbers';
+import { formatShort } from '@/graphics/numbers';
 import { formatDayAndTime } from '@/lib/format';
 
 import { fetchTable, REVIEW_KEYS } from '../api/review-operations';
@@ -88,8 +88,8 @@ export function HandInHeader({ handIn }: { readonly handIn: ReviewedHandIn }) {
       ) : null}
       <History handIn={handIn} />
       <p>
-        Swept <span className="figures">{range.parameter}</span> from {formatNumber(range.from, 5)} to{' '}
-        {formatNumber(range.to, 5)}.
+        Swept <span className="figures">{range.parameter}</span> from {formatShort(range.from)} to{' '}
+        {formatShort(range.to)}.
       </p>
       {changes.length > 0 ? (
         <div>

@@ -51,7 +51,9 @@ export function JudgedFinding({
               size="small"
               aria-pressed={judged === judgement}
               look={judged === judgement ? (judgement === 'agrees' ? 'primary' : 'caution') : 'plain'}
-              className={judged === judgement ? 'font-bold' : undefined}
+              className={
+                judged === judgement && judgement === 'differs' ? 'bg-caution! text-raised!' : undefined
+              }
               onClick={() => handleJudge(judgement)}
             >
               {judgement}

@@ -32,7 +32,7 @@ export function PeopleRows({ assigned, wanted, rows, chosen, onChoose }: PeopleR
       tabIndex={0}
       role="region"
       aria-label="People by findings"
-      className="overflow-x-auto rounded-lg border bg-raised"
+      className="relative overflow-x-auto rounded-lg border bg-raised"
     >
       <table className="w-full border-collapse">
         <thead className="bg-panel text-left align-top">

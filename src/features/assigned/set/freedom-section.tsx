@@ -84,7 +84,12 @@ export function FreedomSection({ view, fixed, onChange }: SetPart) {
               value={search}
               onCommit={setSearch}
             />
-            <div className="grid max-h-60 gap-1 overflow-y-auto sm:grid-cols-2">
+            <div
+              role="group"
+              aria-label="Numbers that may be changed"
+              tabIndex={0}
+              className="grid max-h-60 gap-1 overflow-y-auto sm:grid-cols-2"
+            >
               {keys.map(({ key, label }) => (
                 <CheckField
                   key={key}

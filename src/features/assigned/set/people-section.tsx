@@ -54,7 +54,11 @@ export function PeopleSection({
             <Button onClick={() => put([...view.people, ...members.map((one) => one.id)])}>All</Button>
             <Button onClick={() => put(view.people.filter(bound))}>None</Button>
           </div>
-          <ul className="grid max-h-72 gap-1 overflow-y-auto rounded-lg border bg-raised p-3 sm:grid-cols-2">
+          <ul
+            aria-label="People"
+            tabIndex={0}
+            className="grid max-h-72 gap-1 overflow-y-auto rounded-lg border bg-raised p-3 sm:grid-cols-2"
+          >
             {shown.map(({ id, name, note }) => (
               <li key={id} className="flex items-start justify-between gap-2">
                 <CheckField
