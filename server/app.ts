@@ -16,6 +16,7 @@ import { refuseUnsound } from './middleware/sound-text';
 import { accountRoutes } from './routes/account-routes';
 import { assignedRoutes } from './routes/assigned-routes';
 import { auditRoutes } from './routes/audit-routes';
+import { commentRoutes } from './routes/comment-routes';
 import { demoRoutes } from './routes/demo-routes';
 import { healthRoutes } from './routes/health-routes';
 import { invitationRoutes } from './routes/invitation-routes';
@@ -47,6 +48,7 @@ function apiRouter(dependencies: Dependencies): Router {
     invitationRoutes(dependencies),
     mailSettingsRoutes(dependencies),
     presetRoutes(dependencies),
+    commentRoutes(dependencies),
     sharedRoutes(dependencies),
     assignedRoutes(dependencies),
   );

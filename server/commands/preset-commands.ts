@@ -8,11 +8,10 @@ import type { AuditAction } from '@/contract/audit';
 import { recordAudit } from '../audit/record-audit';
 import type { Dependencies } from '../dependencies';
 import { Refusal, refuseNotAllowed, refuseNotFound, refuseStaleSave } from '../errors';
-import { hashToken, makeId, makeToken } from '../ids';
+import { makeId } from '../ids';
 import type { Person } from '../middleware/current-user';
 import type { Preset } from '../models/preset';
 import type { PresetVersion } from '../models/preset-version';
-import type { ShareLink } from '../models/share-link';
 import { demand, mayPlaceIn } from '../policies/preset-policy';
 import { populationsOf } from '../presenters/present-preset';
 import { readDocument, withHiddenFacts } from './assigned/known-facts';
@@ -55,7 +54,8 @@ export async function findVersion(
   return version;
 }
 
-async function readBack(dependencies: Dependencies, id: string): Promise<PresetAndVersion> {
+/** A preset with its head version. */
+export async function readBack(dependencies: Dependencies, id: string): Promise<PresetAndVersion> {
   const preset = await findPreset(dependencies, id);
   return { preset, version: await findVersion(dependencies, id, preset.headNumber) };
 }
@@ -86,7 +86,7 @@ async function replaceTags(
   }
 }
 
-const audit = (
+export const auditPreset = (
   { database }: Dependencies,
   transaction: Transaction,
   actor: { id: string; name: string } | null,
@@ -145,7 +145,7 @@ export async function insertPreset(
   );
   await replaceTags(dependencies, id, document.tags, transaction);
   const { title } = document;
-  await audit(dependencies, transaction, owner, 'preset created', { id, title, labId: placed.labId });
+  await auditPreset(dependencies, transaction, owner, 'preset created', { id, title, labId: placed.labId });
   return id;
 }
 
@@ -226,7 +226,7 @@ export async function saveVersion(
     );
     await replaceTags(dependencies, id, save.document.tags, transaction);
     const action = save.restoredFrom === undefined ? 'version saved' : 'version restored';
-    await audit(dependencies, transaction, person, action, preset, {
+    await auditPreset(dependencies, transaction, person, action, preset, {
       version: number,
       ...(save.restoredFrom === undefined ? {} : { restoredFrom: save.restoredFrom }),
     });
@@ -265,27 +265,37 @@ export async function copyDocument(
   return createPreset(dependencies, person, { document: named, note, visibility: 'private', labId: null });
 }
 
+interface VisibilityChange {
+  visibility: 'private' | 'lab';
+  labId: string | null;
+  from?: { visibility: 'private' | 'lab'; labId: string | null } | undefined;
+}
+
+/** Changes who sees a preset; refused when someone else changed that since the person looked. */
 export async function changeVisibility(
   dependencies: Dependencies,
   person: Person,
   id: string,
-  { visibility, labId }: { visibility: 'private' | 'lab'; labId: string | null },
+  { visibility, labId, from }: VisibilityChange,
 ): Promise<PresetAndVersion> {
-  const preset = await findPreset(dependencies, id);
-  demand(person, 'change visibility', preset);
-  const placed = placement(person, visibility, labId);
   await dependencies.database.change(async (transaction) => {
+    const preset = await findPreset(dependencies, id, transaction);
+    demand(person, 'change visibility', preset);
+    if (from !== undefined && (from.visibility !== preset.visibility || from.labId !== preset.labId)) {
+      throw new Refusal(
+        409,
+        'conflict',
+        'Who sees this preset was changed meanwhile, so nothing was changed now. Look at it as it is, then decide again.',
+      );
+    }
+    const placed = placement(person, visibility, labId);
     await dependencies.database.models.Preset.update(placed, { where: { id }, transaction });
     // A lab that loses the preset is told as well as one that gains it.
     for (const lab of new Set([preset.labId, placed.labId])) {
-      await audit(
-        dependencies,
-        transaction,
-        person,
-        'visibility changed',
-        { id, title: preset.title, labId: lab },
-        { to: placed.visibility },
-      );
+      const told = { id, title: preset.title, labId: lab };
+      await auditPreset(dependencies, transaction, person, 'visibility changed', told, {
+        to: placed.visibility,
+      });
     }
   });
   return readBack(dependencies, id);
@@ -298,80 +308,6 @@ export async function deletePreset(dependencies: Dependencies, person: Person, i
     demand(person, 'delete', preset);
     const { Preset } = dependencies.database.models;
     await Preset.update({ deletedAt: new Date() }, { where: { id }, transaction });
-    await audit(dependencies, transaction, person, 'preset deleted', preset);
-  });
-}
-
-export async function createLink(
-  dependencies: Dependencies,
-  person: Person,
-  presetId: string,
-  label: string,
-): Promise<{ link: ShareLink; token: string }> {
-  const preset = await findPreset(dependencies, presetId);
-  demand(person, 'share by link', preset);
-  const token = makeToken();
-  const { ShareLink } = dependencies.database.models;
-  const link = await dependencies.database.change(async (transaction) => {
-    await audit(dependencies, transaction, person, 'link created', preset, { label });
-    return ShareLink.create(
-      {
-        id: makeId(),
-        presetId,
-        tokenHash: hashToken(token),
-        label,
-        createdById: person.id,
-        createdAt: new Date(),
-      },
-      { transaction },
-    );
-  });
-  return { link, token };
-}
-
-export async function revokeLink(
-  dependencies: Dependencies,
-  person: Person,
-  presetId: string,
-  linkId: string,
-): Promise<void> {
-  const preset = await findPreset(dependencies, presetId);
-  demand(person, 'share by link', preset);
-  const { ShareLink } = dependencies.database.models;
-  const link = await ShareLink.findOne({ where: { id: linkId, presetId } });
-  if (link === null) throw refuseNotFound('This preset has no such link.');
-  if (link.revokedAt !== null) return;
-  await dependencies.database.change(async (transaction) => {
-    await ShareLink.update({ revokedAt: new Date() }, { where: { id: linkId }, transaction });
-    await audit(dependencies, transaction, person, 'link withdrawn', preset, { label: link.label });
-  });
-}
-
-/** What a link opens: the head version, as long as neither link nor preset is gone. */
-export async function openLink(
-  dependencies: Dependencies,
-  token: string,
-): Promise<PresetAndVersion & { link: ShareLink }> {
-  const gone = refuseNotFound('This link opens nothing: it was withdrawn, or its address is incomplete.');
-  const link = await dependencies.database.models.ShareLink.findOne({
-    where: { tokenHash: hashToken(token) },
-  });
-  if (link === null || link.revokedAt !== null) throw gone;
-  try {
-    return { link, ...(await readBack(dependencies, link.presetId)) };
-  } catch (error) {
-    throw error instanceof Refusal ? gone : error;
-  }
-}
-
-export async function countOpening(
-  dependencies: Dependencies,
-  person: Person | null,
-  { link, preset }: { link: ShareLink; preset: Preset },
-): Promise<void> {
-  const { database } = dependencies;
-  await database.change(async (transaction) => {
-    await database.models.ShareLink.increment('opened', { where: { id: link.id }, transaction });
-    await audit(dependencies, transaction, person, 'link opened', preset, { label: link.label });
+    await auditPreset(dependencies, transaction, person, 'preset deleted', preset);
   });
 }

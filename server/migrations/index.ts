@@ -8,6 +8,7 @@ import { auditAndPurge } from './003-audit-and-purge';
 import { mailQueue } from './004-mail-queue';
 import { invitations } from './005-invitations';
 import { assignedSweeps } from './006-assigned-sweeps';
+import { commentsAndLinks } from './007-comments-and-links';
 
 export const MIGRATIONS: readonly Migration[] = [
   accountsAndLabs,
@@ -16,6 +17,7 @@ export const MIGRATIONS: readonly Migration[] = [
   mailQueue,
   invitations,
   assignedSweeps,
+  commentsAndLinks,
 ];
 
 /** Steps the schema forward (`up`) and back (`down`); each step is a transaction of its own. */

@@ -4,6 +4,7 @@ import { defineAssignedPerson } from './assigned-person';
 import { defineAssignedSweep } from './assigned-sweep';
 import { defineAssignedWork } from './assigned-work';
 import { defineAuditEntry } from './audit-entry';
+import { defineComment } from './comment';
 import { connectSqlite } from './connection';
 import { defineHandIn } from './hand-in';
 import { defineInvitation } from './invitation';
@@ -45,6 +46,7 @@ function defineModels(sequelize: Sequelize) {
     AssignedWork: defineAssignedWork(sequelize),
     HandIn: defineHandIn(sequelize),
     Review: defineReview(sequelize),
+    Comment: defineComment(sequelize),
   };
   models.Membership.belongsTo(models.User, { as: 'user', foreignKey: 'userId' });
   models.Membership.belongsTo(models.Lab, { as: 'lab', foreignKey: 'labId' });

@@ -10,6 +10,7 @@ type Record = Pick<Preset, 'ownerId' | 'labId' | 'visibility'>;
 const BY_LAB: Partial<{ [R in PresetRight]: LabRight }> = {
   view: 'view lab presets',
   duplicate: 'view lab presets',
+  comment: 'view lab presets',
   save: 'save lab presets',
   restore: 'save lab presets',
   'share by link': 'share lab presets by link',

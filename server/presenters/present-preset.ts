@@ -64,6 +64,9 @@ export function presentLink(link: ShareLink): ShareLinkBody {
     createdAt: link.createdAt.toISOString(),
     revokedAt: link.revokedAt?.toISOString() ?? null,
     opened: link.opened,
+    lastOpenedAt: link.lastOpenedAt?.toISOString() ?? null,
+    expiresAt: link.expiresAt?.toISOString() ?? null,
+    access: link.access,
   };
 }
 

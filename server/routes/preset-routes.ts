@@ -14,17 +14,16 @@ import {
 
 import { readDocument } from '../commands/assigned/known-facts';
 import { bringBack, listDeleted } from '../commands/deleted-presets';
+import { createLink, revokeLink } from '../commands/link-commands';
 import { listPresets } from '../commands/list-presets';
 import {
   changeVisibility,
   copyDocument,
-  createLink,
   createPreset,
   deletePreset,
   findPreset,
   findVersion,
   restoreVersion,
-  revokeLink,
   saveVersion,
   type PresetAndVersion,
 } from '../commands/preset-commands';
@@ -160,8 +159,8 @@ export function presetRoutes(dependencies: Dependencies): Router {
 
   router.post('/presets/:id/links', async (request, response) => {
     demand(signedIn(request), 'share by link', await findPreset(dependencies, presetId(request)));
-    const { label } = parseBody(request, createLinkSchema);
-    const { link, token } = await createLink(dependencies, signedIn(request), presetId(request), label);
+    const body = parseBody(request, createLinkSchema);
+    const { link, token } = await createLink(dependencies, signedIn(request), presetId(request), body);
     response.status(201).json({ link: presentLink(link), token, url: `${settings.publicUrl}/s/${token}` });
   });
 

@@ -3,7 +3,8 @@ import { Router } from 'express';
 import { duplicatePresetSchema, type SharedBody } from '@/contract/presets';
 
 import { readDocument } from '../commands/assigned/known-facts';
-import { copyDocument, countOpening, openLink } from '../commands/preset-commands';
+import { countOpening, demandCopy, openLink } from '../commands/link-commands';
+import { copyDocument } from '../commands/preset-commands';
 import type { Dependencies } from '../dependencies';
 import { requireSignedIn, signedIn, visitorOrPerson } from '../middleware/current-user';
 import { parseBody } from '../middleware/parse';
@@ -18,6 +19,7 @@ export function sharedRoutes(dependencies: Dependencies): Router {
     await countOpening(dependencies, visitorOrPerson(request), { link, preset });
     const body: SharedBody = {
       title: preset.title,
+      mayCopy: link.access === 'copy',
       owner: preset.owner?.name ?? '',
       version: presentVersion(version),
       document: await readDocument(dependencies, visitorOrPerson(request), preset, version),
@@ -28,6 +30,7 @@ export function sharedRoutes(dependencies: Dependencies): Router {
   router.post('/shared/:token/copy', requireSignedIn, async (request, response) => {
     const person = signedIn(request);
     const opened = await openLink(dependencies, String(request.params.token));
+    demandCopy(opened.link);
     // A link shows the head, whatever version is asked for.
     const { title } = parseBody(request, duplicatePresetSchema);
     const { preset, version } = await copyDocument(dependencies, person, opened, title);

@@ -39,6 +39,12 @@ export const MAIL_KINDS = {
     timings: ['daily', 'at once', 'off'],
     bundles: true,
   },
+  comments: {
+    label: 'Comments',
+    help: 'Someone mentioned you in a comment, or replied in a thread that you wrote in.',
+    timings: ['at once', 'daily', 'off'],
+    bundles: true,
+  },
   assigned: {
     label: 'Sweeps set for you',
     help: 'A sweep was opened for you, is due within a day, was reviewed or sent back.',

@@ -4,6 +4,10 @@ import { LIMITS } from '../engine/schema/limits';
 import { presetSchema } from '../engine/schema/preset';
 import { PRESET_RIGHTS } from './rights';
 
+/** Whether one who opens a link may only look, or also make a copy. */
+export const LINK_ACCESS = ['view', 'copy'] as const;
+export type LinkAccess = (typeof LINK_ACCESS)[number];
+
 export const VISIBILITIES = ['private', 'lab'] as const;
 export const PRESET_SORTS = ['changed', 'created', 'title', 'owner'] as const;
 export const PAGE_SIZE = { default: 20, largest: 100 } as const;
@@ -33,8 +37,10 @@ export const createPresetSchema = z.object({
 });
 /** POST /api/presets/:id/versions -> 201 presetBody, or 409 `conflict` with `head` when `baseVersion` is not the head. */
 export const saveVersionSchema = z.object({ document: presetSchema, note, baseVersion: z.int().positive() });
-/** PATCH /api/presets/:id -> 200 presetBody; DELETE /api/presets/:id -> 204 */
+/** PATCH /api/presets/:id -> 200 presetBody, or 409 `conflict` when it is no longer as in `from`; DELETE /api/presets/:id -> 204 */
 export const changePresetSchema = z.object({
+  /** Who saw it when the change was decided on. */
+  from: z.object({ visibility: z.enum(VISIBILITIES), labId: z.string().max(64).nullable() }).optional(),
   visibility: z.enum(VISIBILITIES),
   labId: z.string().max(64).nullable().default(null),
 });
@@ -46,7 +52,13 @@ export const duplicatePresetSchema = z.object({
 /** POST /api/presets/:id/versions/:number/restore -> 201 presetBody; makes a new version equal to the old. */
 export const restoreVersionSchema = z.object({ note, baseVersion: z.int().positive() });
 /** POST /api/presets/:id/links -> 201 { link, token, url }: shown once here, kept hashed; url is `/s/<token>` on PUBLIC_URL. */
-export const createLinkSchema = z.object({ label: z.string().trim().max(LIMITS.nameLength).default('') });
+export const createLinkSchema = z.object({
+  label: z.string().trim().max(LIMITS.nameLength).default(''),
+  /** When it stops opening anything; null for never. */
+  expiresAt: z.iso.datetime().nullable().default(null),
+  access: z.enum(LINK_ACCESS).default('copy'),
+});
+export type NewLink = z.output<typeof createLinkSchema>;
 
 export const presetSummarySchema = z.object({
   id: z.string(),
@@ -109,15 +121,20 @@ export const shareLinkSchema = z.object({
   createdAt: z.string(),
   revokedAt: z.string().nullable(),
   opened: z.number(),
+  lastOpenedAt: z.string().nullable(),
+  expiresAt: z.string().nullable(),
+  access: z.enum(LINK_ACCESS),
 });
 export type ShareLink = z.infer<typeof shareLinkSchema>;
 /** GET /api/presets/:id/links; DELETE /api/presets/:id/links/:linkId -> 204 */
 export const linkListSchema = z.object({ links: z.array(shareLinkSchema) });
 export const createdLinkSchema = z.object({ link: shareLinkSchema, token: z.string(), url: z.string() });
 
-/** GET /api/shared/:token, no account needed; shows the head version; 404 when revoked or unknown. */
+/** GET /api/shared/:token, no account needed; shows the head version; 404 when revoked, expired or unknown. */
 export const sharedBodySchema = z.object({
   title: z.string(),
+  /** False for a link that only shows: POST /api/shared/:token/copy answers 403. */
+  mayCopy: z.boolean(),
   owner: z.string(),
   version: versionSummarySchema,
   document: presetSchema,

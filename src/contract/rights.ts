@@ -28,6 +28,7 @@ export const PRESET_RIGHTS = [
   'save',
   'restore',
   'duplicate',
+  'comment',
   'change visibility',
   'share by link',
   'delete',

@@ -29,6 +29,8 @@ let sweep: AssignedBody;
 let handInId = '';
 let token = '';
 let linkId = '';
+/** Of the supervisor, on the lab's preset. */
+let commentId = '';
 
 const all = (status: number, visitor = status): Record<Who, number> => ({
   visitor,
@@ -71,6 +73,8 @@ beforeAll(async () => {
   token = (made?.body as { token: string }).token;
   linkId = (made?.body as { link: { id: string } }).link.id;
   const supervisor = await server.person('supervisor');
+  const commented = await supervisor.post(`/presets/${lab.preset.id}/comments`, { text: 'A comment' });
+  commentId = (commented.body as { id: string }).id;
   sweep = await openSweep(supervisor, lab.preset.id, ['demo-student']);
   const handed = await people.get('student')?.post(`/assigned/${sweep.id}/hand-ins`, handInBody());
   handInId = (handed?.body as { id: string }).id;
@@ -82,6 +86,7 @@ const stopToken = () =>
     { address: 'someone@example.org', scope: 'all' },
     server.dependencies.settings.sessionSecret,
   );
+const onLab = (rest: string) => `/presets/${lab.preset.id}${rest}`;
 const inLab = (rest: string) => `/labs/${DEMO_LAB.id}${rest}`;
 /** For supervisors alone: others of the lab are refused, and for outsiders there is no such lab. */
 const supervised = (status: number) => ({ ...signedInOnly(403), supervisor: status, outsider: 404 });
@@ -320,6 +325,44 @@ const rows = (): Row[] => [
       outsider: 404,
     },
   },
+  { method: 'get', path: onLab('/activity'), expect: { ...signedInOnly(200), outsider: 404 } },
+  { method: 'get', path: `/presets/${own.preset.id}/activity`, expect: by({ researcher: 200 }) },
+  { method: 'get', path: onLab('/comments'), expect: { ...signedInOnly(200), outsider: 404 } },
+  { method: 'get', path: onLab('/comments?state=lost'), expect: { ...signedInOnly(400), outsider: 404 } },
+  { method: 'get', path: `/presets/${own.preset.id}/comments`, expect: by({ researcher: 200 }) },
+  { method: 'get', path: onLab('/comments/people'), expect: { ...signedInOnly(200), outsider: 404 } },
+  {
+    method: 'post',
+    path: onLab('/comments'),
+    body: () => ({}),
+    expect: { ...signedInOnly(400), outsider: 404 },
+  },
+  {
+    method: 'post',
+    path: onLab('/comments'),
+    body: () => ({ text: 'A reply', thread: commentId }),
+    // The student has an unjudged sweep from this preset.
+    expect: { ...signedInOnly(201), student: 403, outsider: 404 },
+  },
+  {
+    method: 'patch',
+    path: onLab(`/comments/${commentId}`),
+    body: () => ({ text: 'Changed', revision: 999 }),
+    expect: { ...signedInOnly(403), supervisor: 409, outsider: 404 },
+  },
+  {
+    method: 'patch',
+    path: onLab('/comments/none'),
+    body: () => ({ text: 'Changed', revision: 1 }),
+    expect: { ...signedInOnly(404), student: 403 },
+  },
+  { method: 'delete', path: onLab('/comments/none'), expect: { ...signedInOnly(404), student: 403 } },
+  {
+    method: 'put',
+    path: onLab(`/comments/${commentId}/resolved`),
+    body: () => ({ resolved: true }),
+    expect: { ...signedInOnly(403), supervisor: 200, researcher: 200, outsider: 404 },
+  },
   { method: 'get', path: inLab('/assigned'), expect: { ...signedInOnly(200), outsider: 404 } },
   { method: 'get', path: inLab('/assigned?state=lost'), expect: { ...signedInOnly(400), outsider: 404 } },
   { method: 'post', path: inLab('/assigned'), body: () => ({}), expect: supervised(400) },
@@ -450,6 +493,8 @@ describe('every route with every role', () => {
         .replace(/\/presets\/none/, '/presets/:id')
         .replace(/\/versions\/\d+/, '/versions/:number')
         .replace(/\/links\/none/, '/links/:linkId')
+        .replace(commentId, ':commentId')
+        .replace(/\/comments\/none/, '/comments/:commentId')
         .replace(/\/labs\/[^/]+/, '/labs/:labId')
         .replace(/\/members\/[^/]+/, '/members/:userId')
         .replace(/^\/invitations\/wrong/, '/invitations/:token')
