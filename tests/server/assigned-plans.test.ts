@@ -26,7 +26,8 @@ it('reads lists, tasks, tables and hand-ins by indices alone', async () => {
 
   const { sequelize } = server.database;
   const statements = new Set<string>();
-  sequelize.options.logging = (line) => statements.add(line.replace(/^Executing \(.*?\): /, ''));
+  const { options } = sequelize as unknown as { options: { logging: ((line: string) => void) | false } };
+  options.logging = (line) => statements.add(line.replace(/^Executing \(.*?\): /, ''));
   for (const [visitor, path] of [
     [student, '/assigned'],
     [student, `/labs/${DEMO_LAB.id}/assigned?state=open`],
@@ -39,7 +40,7 @@ it('reads lists, tasks, tables and hand-ins by indices alone', async () => {
     [supervisor, `/hand-ins/${receipt.id}`],
   ] as const)
     expect((await visitor.get(path)).status).toBe(200);
-  sequelize.options.logging = false;
+  options.logging = false;
 
   const ours = [...statements].filter((one) => one.startsWith('SELECT') && /assigned_|hand_ins/.test(one));
   expect(ours.length).toBeGreaterThan(10);
