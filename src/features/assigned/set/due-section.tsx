@@ -1,3 +1,5 @@
+import { useState } from 'react';
+
 import { SelectField } from '@/components/fields/select-field';
 import { FormField } from '@/components/ui/form-field';
 import { describeDue, isPast } from '@/lib/due';
@@ -10,8 +12,17 @@ import { fromWallTime, timeZones, toWallTime } from './zoned-time';
 export function DueSection({ view, onChange }: Pick<SetPart, 'view' | 'onChange'>) {
   const { dueAt, timeZone } = view;
   const wall = dueAt ? toWallTime(dueAt, timeZone) : '';
-  const handleWall = (value: string) =>
-    onChange({ dueAt: value ? fromWallTime(value, timeZone) : null, timeZone });
+  // Kept as it is typed: a field that is half filled holds no date, or one of the first century.
+  const [typed, setTyped] = useState<string | null>(null);
+  const handleWall = (value: string) => {
+    setTyped(value);
+    const instant = fromWallTime(value, timeZone);
+    if (instant) onChange({ dueAt: instant, timeZone });
+  };
+  const handleBlur = () => {
+    if (typed === '' && dueAt !== null) onChange({ dueAt: null });
+    setTyped(null);
+  };
   /** The clock stays where it was put; the instant moves with the zone. */
   const handleZone = (zone: string) =>
     onChange({ timeZone: zone, dueAt: wall ? fromWallTime(wall, zone) : null });
@@ -22,7 +33,8 @@ export function DueSection({ view, onChange }: Pick<SetPart, 'view' | 'onChange'
           label="Date and time"
           type="datetime-local"
           className="w-60"
-          value={wall}
+          value={typed ?? wall}
+          onBlur={handleBlur}
           onChange={(event) => handleWall(event.target.value)}
           help={dueAt ? `${describeDue(dueAt)}${isPast(dueAt) ? ': this is past' : ''}` : undefined}
         />

@@ -1,6 +1,8 @@
 /** Wall-clock time of a zone, as `2026-12-01T17:00`, and the instant that it means. */
 
 const MINUTE = 60_000;
+/** No time before is meant: it is a year that is still being typed. */
+const WALL_TIME = /^[2-9]\d{3}-\d\d-\d\dT\d\d:\d\d$/;
 
 function partsIn(timeZone: string, instant: Date): Record<string, string> {
   const format = new Intl.DateTimeFormat('en-GB', {
@@ -25,7 +27,7 @@ export function toWallTime(iso: string, timeZone: string): string {
  * comes twice in autumn it is the first. Null where it is no time.
  */
 export function fromWallTime(wall: string, timeZone: string): string | null {
-  const asUtc = Date.parse(`${wall}:00Z`);
+  const asUtc = WALL_TIME.test(wall) ? Date.parse(`${wall}:00Z`) : NaN;
   if (!Number.isFinite(asUtc)) return null;
   const offsetAt = (instant: number) =>
     Date.parse(`${toWallTime(new Date(instant).toISOString(), timeZone)}:00Z`) - instant;
