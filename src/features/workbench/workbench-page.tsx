@@ -51,7 +51,12 @@ async function openSource(
     const shared = await fetchShared(source.token, signal);
     return {
       document: shared.document,
-      origin: { kind: 'shared', token: source.token, signedIn: userId !== undefined },
+      origin: {
+        kind: 'shared',
+        token: source.token,
+        signedIn: userId !== undefined,
+        mayCopy: shared.mayCopy,
+      },
     };
   }
   if (source.kind === 'assigned') return openAssigned(source.id, userId ?? '', signal);

@@ -109,7 +109,7 @@ describe('commands', () => {
     };
     expect(attempt(preset(['view', 'save']))).toBeNull();
     expect(attempt(preset(['view']))).toMatch(/save a copy/);
-    expect(attempt({ kind: 'shared', token: 'x', signedIn: false }, false)).toMatch(/Sign in/);
+    expect(attempt({ kind: 'shared', token: 'x', signedIn: false, mayCopy: true }, false)).toMatch(/Sign in/);
     expect(opened).toEqual(['save']);
   });
 

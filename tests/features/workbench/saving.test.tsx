@@ -297,6 +297,9 @@ describe('history and links', () => {
       createdAt: '2030-05-01T10:00:00.000Z',
       revokedAt: null,
       opened: 0,
+      lastOpenedAt: null,
+      expiresAt: null,
+      access: 'copy',
     };
     const asked = answerWith(({ method, path }) => {
       if (method === 'DELETE') return { status: 204, body: null };

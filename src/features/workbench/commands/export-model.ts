@@ -1,3 +1,4 @@
+import { refuseCopy } from '../dialogs/saving-rules';
 import type { Command } from './command';
 
 export const exportModel: Command = {
@@ -5,6 +6,6 @@ export const exportModel: Command = {
   label: 'Export the preset or a study',
   group: 'Keep and share',
   shortcut: 'Mod+E',
-  isEnabled: () => true,
+  isEnabled: ({ state }) => refuseCopy(state) ?? true,
   perform: ({ openDialog }) => openDialog('export'),
 };

@@ -4,6 +4,7 @@ import { addPopulation } from './add-population';
 import { cancelRun } from './cancel-run';
 import { checkOtherMethod } from './check-other-method';
 import type { Command } from './command';
+import { comments } from './comments';
 import { exportModel } from './export-model';
 import { findEquilibria } from './find-equilibria';
 import { fullPicture } from './full-picture';
@@ -39,6 +40,7 @@ export const COMMANDS: readonly Command[] = [
   handIn,
   share,
   versionHistory,
+  comments,
   exportModel,
   importModel,
   runSweep,

@@ -1,3 +1,4 @@
+import { refuseCopy } from '../dialogs/saving-rules';
 import type { Command } from './command';
 
 export const saveCopy: Command = {
@@ -5,6 +6,7 @@ export const saveCopy: Command = {
   label: 'Save as a copy',
   group: 'Keep and share',
   shortcut: 'Mod+Shift+S',
-  isEnabled: ({ signedIn }) => signedIn || 'Sign in to keep presets of your own.',
+  isEnabled: ({ state, signedIn }) =>
+    refuseCopy(state) ?? (signedIn || 'Sign in to keep presets of your own.'),
   perform: ({ openDialog }) => openDialog('save-copy'),
 };

@@ -7,6 +7,7 @@ import { Dialog } from '@/components/ui/dialog';
 
 import { useBenchUi } from '../layout/bench-ui';
 import { useWorkbench } from '../state/store';
+import { ActivityList } from './activity-list';
 import { listVersions } from './api/list-versions';
 import { errorWords } from './error-words';
 import { VersionComparison } from './version-comparison';
@@ -77,6 +78,7 @@ export function HistoryDialog() {
           onBefore={setBefore}
         />
       ) : null}
+      <ActivityList id={id} />
     </Dialog>
   );
 }

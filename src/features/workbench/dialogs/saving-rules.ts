@@ -23,6 +23,13 @@ export function refuseSave(
   return isDirty(state) ? null : 'Nothing has changed since it was saved.';
 }
 
+/** Why no copy can be taken of what is on the bench; null where it can. */
+export function refuseCopy({ origin }: Pick<WorkbenchState, 'origin'>): string | null {
+  return origin.kind === 'shared' && !origin.mayCopy
+    ? 'Whoever shared this preset allows looking, not copying.'
+    : null;
+}
+
 /** Why there is nothing to share yet; null where there is. */
 export function refuseShare(state: Pick<WorkbenchState, 'origin'>): string | null {
   const { origin } = state;

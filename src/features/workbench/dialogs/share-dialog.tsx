@@ -21,7 +21,9 @@ function Visibility({ id, may }: { readonly id: string; readonly may: boolean })
   const key = ['share', id];
   const preset = useQuery({ queryKey: key, queryFn: () => fetchPreset(id) });
   const change = useMutation({
-    mutationFn: (placement: Placement) => changeVisibility(id, placement),
+    mutationFn: (body: Placement & { readonly from: Placement }) => changeVisibility(id, body),
+    // What was refused was decided on something else than is so now.
+    onError: () => queries.invalidateQueries({ queryKey: key }),
     onSuccess: (body) => {
       queries.setQueryData(key, body);
       const { origin } = store.getState();
@@ -34,12 +36,13 @@ function Visibility({ id, may }: { readonly id: string; readonly may: boolean })
   if (preset.isPending) return <p role="status">Reading who may see it…</p>;
   if (preset.isError) return <FieldMessage>{errorWords(preset.error)}</FieldMessage>;
   const { visibility, lab } = preset.data.preset;
+  const from: Placement = { visibility: visibility === 'lab' ? 'lab' : 'private', labId: lab?.id ?? null };
   return (
     <div className="grid gap-2">
       <VisibilityFields
-        value={{ visibility: visibility === 'lab' ? 'lab' : 'private', labId: lab?.id ?? null }}
+        value={from}
         disabled={!may || change.isPending}
-        onChange={(placement) => change.mutate(placement)}
+        onChange={(placement) => change.mutate({ ...placement, from })}
       />
       {may ? null : <p className="text-sm text-muted">Only its owner can change who may see it.</p>}
       {change.isError ? <FieldMessage>{errorWords(change.error)}</FieldMessage> : null}

@@ -1,5 +1,6 @@
 import { useWorkbench } from '../state/store';
 import { AssignedCard } from '../assigned/assigned-card';
+import { CommentsCard } from '../comments/comments-card';
 import { BranchesCard } from './branches-card';
 import { CyclesCard } from './cycles-card';
 import { DensityCard } from './density-card';
@@ -53,6 +54,7 @@ export function Findings() {
       <BranchesCard />
       <SecondOpinionCard />
       <NotesCard />
+      <CommentsCard />
     </div>
   );
 }

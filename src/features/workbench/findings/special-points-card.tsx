@@ -7,6 +7,7 @@ import { parameterName } from '@/graphics/quantities';
 import { joinClasses } from '@/lib/join-classes';
 
 import { findingFor, pinFinding, type Candidate } from '../assigned/pin-finding';
+import { CommentOnPoint } from '../comments/comment-on-point';
 import { moveToPoint } from '../panes/move-to-point';
 import { GlyphSign } from '../panes/plot/plot-legend';
 import { useShownModel } from '../panes/use-shown-model';
@@ -60,6 +61,7 @@ function Row({
   row,
   withTwin,
   range,
+  parameter,
   selected,
   pinTo,
   onPin,
@@ -68,6 +70,8 @@ function Row({
   readonly row: SpecialPointRow;
   readonly withTwin: boolean;
   readonly range: number;
+  /** Key of what is swept. */
+  readonly parameter: string;
   readonly selected: boolean;
   /** Label of the wanted finding that this point can be given for; null where none asks for it. */
   readonly pinTo: string | null;
@@ -105,6 +109,7 @@ function Row({
               <Pin size={12} aria-hidden /> Pin as “{pinTo}”
             </button>
           )}
+          {selected || !row.split ? <CommentOnPoint row={row} parameter={parameter} /> : null}
         </th>
         <td className="figures py-1 pl-1 text-right text-xs whitespace-nowrap">{value(row.split)}</td>
         {withTwin ? (
@@ -182,6 +187,7 @@ export function SpecialPointsCard() {
                 row={row}
                 withTwin={sweep.twin !== null}
                 range={Math.abs(sweep.split.to - sweep.split.from)}
+                parameter={sweep.split.parameterKey}
                 selected={row.split !== null && row.split.id === selected}
                 pinTo={findingFor(assigned, pointOf(row))?.label ?? null}
                 onPin={() => {

@@ -6,6 +6,7 @@ import { Menu, MenuItem } from '@/components/layout/menu';
 import { buttonClasses } from '@/components/ui/button';
 
 import { labelOf, type CommandContext } from '../commands/command';
+import { comments } from '../commands/comments';
 import { exportModel } from '../commands/export-model';
 import { handIn } from '../commands/hand-in';
 import { importModel } from '../commands/import-model';
@@ -18,10 +19,11 @@ import { undo } from '../commands/undo';
 import { versionHistory } from '../commands/version-history';
 import { useWorkbench } from '../state/store';
 import { CommandButton } from './command-button';
+import { CommentsButton } from './comments-button';
 import { TitleField } from './title-field';
 import { VersionChip } from './version-chip';
 
-const MORE = [versionHistory, saveCopy, importModel, share, exportModel] as const;
+const MORE = [comments, versionHistory, saveCopy, importModel, share, exportModel] as const;
 
 function Breadcrumb({ readOnly }: { readonly readOnly: boolean }) {
   const origin = useWorkbench((state) => state.origin);
@@ -112,6 +114,7 @@ export function WorkbenchHeader({
               <CommandIcon size={16} aria-hidden />
             </CommandButton>
           </span>
+          <CommentsButton context={context} />
           <MoreMenu context={context} />
           <CommandButton named command={share} context={context} className="max-lg:hidden">
             Share

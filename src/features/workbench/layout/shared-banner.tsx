@@ -8,7 +8,7 @@ import { useBenchUi } from './bench-ui';
 
 /** On a preset opened by link: what can be done with it, and how to keep it. */
 export function SharedBanner() {
-  const shared = useWorkbench((state) => state.origin.kind === 'shared');
+  const shared = useWorkbench(({ origin }) => (origin.kind === 'shared' ? origin : null));
   const signedIn = Boolean(useSession().data?.user);
   const location = useLocation();
   const set = useBenchUi((state) => state.set);
@@ -18,7 +18,9 @@ export function SharedBanner() {
       <p className="flex-1">
         <strong className="font-semibold">Shared preset.</strong> Explore freely; nothing is saved.
       </p>
-      {signedIn ? (
+      {!shared.mayCopy ? (
+        <p className="text-muted">For looking: no copy can be made here.</p>
+      ) : signedIn ? (
         <Button size="small" onClick={() => set({ dialog: 'save-copy' })}>
           Copy to my presets
         </Button>

@@ -24,7 +24,12 @@ export type Origin =
       readonly labName: string | null;
       readonly starter: boolean;
     }
-  | { readonly kind: 'shared'; readonly token: string; readonly signedIn: boolean }
+  | {
+      readonly kind: 'shared';
+      readonly token: string;
+      readonly signedIn: boolean;
+      readonly mayCopy: boolean;
+    }
   | { readonly kind: 'assigned'; readonly id: string; readonly labName: string };
 
 /** One step of the history: the document as it was, and what the edit that left it is called. */

@@ -1,6 +1,12 @@
 import { presetBodySchema } from '@/contract/presets';
 import { api } from '@/lib/api-client';
 
-export function changeVisibility(id: string, body: { visibility: 'private' | 'lab'; labId: string | null }) {
+interface Placement {
+  readonly visibility: 'private' | 'lab';
+  readonly labId: string | null;
+}
+
+/** `from` is who saw it when the change was decided on; the server refuses when that is no longer so. */
+export function changeVisibility(id: string, body: Placement & { readonly from: Placement }) {
   return api.patch(`/presets/${encodeURIComponent(id)}`, body, presetBodySchema);
 }

@@ -1,6 +1,6 @@
-import { createdLinkSchema } from '@/contract/presets';
+import { createdLinkSchema, type NewLink } from '@/contract/presets';
 import { api } from '@/lib/api-client';
 
-export function createLink(id: string, label: string) {
-  return api.post(`/presets/${encodeURIComponent(id)}/links`, { label }, createdLinkSchema);
+export function createLink(id: string, link: NewLink) {
+  return api.post(`/presets/${encodeURIComponent(id)}/links`, link, createdLinkSchema);
 }
