@@ -19,12 +19,19 @@ export function RunProgress({ label, running, problem, disabled, onRun, onCancel
         </Button>
         {running ? (
           <>
-            <progress
+            <span
+              role="progressbar"
               aria-label={label}
-              value={running.fraction}
-              max={1}
-              className="h-2 w-40 accent-[var(--accent)]"
-            />
+              aria-valuenow={Math.round(100 * running.fraction)}
+              aria-valuemin={0}
+              aria-valuemax={100}
+              className="h-1.5 w-40 overflow-hidden rounded-full bg-hairline"
+            >
+              <span
+                className="block h-full bg-accent"
+                style={{ width: `${Math.round(100 * running.fraction)}%` }}
+              />
+            </span>
             <span className="text-sm text-muted">{running.stage}</span>
             <Button size="small" look="quiet" onClick={onCancel}>
               Cancel

@@ -32,11 +32,13 @@ export function useSweepRun() {
     async (document: PresetDocument, range: SweepRange): Promise<ComputedSweep | null> => {
       engine.current ??= createEngineClient();
       const job = ++jobs.current;
+      // Told across a port, progress may still arrive after the result.
+      let ended = false;
       setProblem(null);
       setRunning({ job, stage: 'starting', fraction: 0 });
       try {
         const done = await computeSweep(engine.current, job, document, range, ({ stage, fraction }) => {
-          if (jobs.current === job) setRunning({ job, stage, fraction });
+          if (jobs.current === job && !ended) setRunning({ job, stage, fraction });
         });
         return jobs.current === job ? done : null;
       } catch (error) {
@@ -44,6 +46,7 @@ export function useSweepRun() {
           setProblem(error instanceof Error ? error.message : 'The engine stopped. Run the sweep again.');
         return null;
       } finally {
+        ended = true;
         if (jobs.current === job) setRunning(null);
       }
     },

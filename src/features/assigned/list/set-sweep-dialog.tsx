@@ -18,7 +18,8 @@ interface SetSweepDialogProps {
 /** Makes the draft of an assigned sweep from a preset, in one of one's labs. */
 export function SetSweepDialog({ preset, onClose }: SetSweepDialogProps) {
   const labs = useSettingLabs();
-  const [labId, setLabId] = useState(labs[0]?.labId ?? '');
+  const [chosen, setChosen] = useState<string | null>(null);
+  const labId = chosen ?? labs[0]?.labId ?? '';
   const navigate = useNavigate();
   const queries = useQueryClient();
   const make = useMutation({
@@ -49,7 +50,7 @@ export function SetSweepDialog({ preset, onClose }: SetSweepDialogProps) {
             label="For people of"
             value={labId}
             choices={labs.map((one) => ({ value: one.labId, label: one.labName }))}
-            onChange={setLabId}
+            onChange={setChosen}
           />
         ) : (
           <p>

@@ -84,7 +84,7 @@ export function KeptPlot({ spec, palette, height = 380, onPlace, over }: KeptPlo
           ref={canvas}
           role="img"
           aria-label={spec.description}
-          className={onPlace ? 'size-full cursor-crosshair' : 'size-full'}
+          className={onPlace ? 'size-full cursor-crosshair rounded-lg' : 'size-full rounded-lg'}
           onMouseMove={handleMove}
           onMouseLeave={() => setRead('')}
           onClick={handleClick}

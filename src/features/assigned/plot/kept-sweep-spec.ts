@@ -51,6 +51,7 @@ function runsOf({ attracts }: KeptBranch): readonly Run[] {
 
 const WORDS = ['repels', 'attracts', 'neutral or undecided'] as const;
 
+const SIZES = { hue: 6, grey: 8, thin: 3.5 } as const;
 const WIDTHS = { hue: [2.2, 1.4], grey: [4, 2.6], thin: [0.9, 0.9] } as const;
 
 function style(attracts: number, tone: KeptLayer['tone']): { width: number; dash?: readonly number[] } {
@@ -134,7 +135,7 @@ function drawLayer(
         y,
         glyph: point.kind,
         colour,
-        size: layer.tone === 'grey' ? 8 : 6,
+        size: SIZES[layer.tone],
         named: layer.tone !== 'thin',
         twin: layer.tone === 'grey',
       });

@@ -14,13 +14,20 @@ import { DueWords } from '../components/due-words';
 import { PeopleRows } from './people-rows';
 import { SendBackDialog } from './send-back-dialog';
 
+/** Work comes in while one looks: milliseconds between two readings of the table. */
+const REFRESH = 30_000;
+
 /** Everyone's newest hand-in of one sweep beside what is expected. */
 export default function ReviewPage() {
   const { id = '' } = useParams();
   const [search, setSearch] = useSearchParams();
   const shownState = WORK_STATES.find((one) => one === search.get('state'));
   const assigned = useQuery({ queryKey: SET_KEYS.assigned(id), queryFn: () => fetchAssigned(id) });
-  const table = useQuery({ queryKey: REVIEW_KEYS.table(id), queryFn: () => fetchTable(id) });
+  const table = useQuery({
+    queryKey: REVIEW_KEYS.table(id),
+    queryFn: () => fetchTable(id),
+    refetchInterval: REFRESH,
+  });
   const [chosen, setChosen] = useState<ReadonlySet<string>>(new Set());
   const [sending, setSending] = useState(false);
   const [said, setSaid] = useState('');

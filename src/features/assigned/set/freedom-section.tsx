@@ -43,7 +43,7 @@ export function FreedomSection({ view, fixed, onChange }: SetPart) {
           : 'Start values, views and the length of a trajectory are always free.'
       }
     >
-      <fieldset disabled={fixed} className="grid gap-3">
+      <fieldset className="grid gap-3">
         <legend className="sr-only">What may be changed</legend>
         <CheckField
           label="The swept parameter and its range"
@@ -67,6 +67,7 @@ export function FreedomSection({ view, fixed, onChange }: SetPart) {
                   name={name}
                   className="size-4 accent-[var(--accent)]"
                   checked={numbers === value}
+                  disabled={fixed}
                   onChange={() => handleNumbers(value)}
                 />
                 {label}
