@@ -1,3 +1,4 @@
+import type { PictureResult } from '@/engine/analyses/contract';
 import type { Progress } from '@/engine/continuation/contract';
 import type { PresetDocument } from '@/engine/schema/preset';
 import type { KeptSweep, SweepRange } from '@/contract/kept-sweep';
@@ -6,8 +7,7 @@ import type { EngineClient } from '@/workers/protocol';
 
 export interface ComputedSweep {
   readonly kept: KeptSweep;
-  /** False where it was cancelled or did not come to its end. */
-  readonly complete: boolean;
+  readonly status: PictureResult['status'];
   readonly message: string;
 }
 
@@ -34,7 +34,7 @@ export async function computeSweep(
   );
   return {
     kept: keepSweep(result.sweep, result.cycles),
-    complete: result.status === 'complete',
+    status: result.status,
     message: result.message,
   };
 }

@@ -16,6 +16,7 @@ interface Running {
 export function useSweepRun() {
   const engine = useRef<EngineClient | null>(null);
   const jobs = useRef(0);
+  const cancelled = useRef(0);
   const [running, setRunning] = useState<Running | null>(null);
   const [problem, setProblem] = useState<string | null>(null);
   useEffect(
@@ -38,6 +39,8 @@ export function useSweepRun() {
       setRunning({ job, stage: 'starting', fraction: 0 });
       try {
         const done = await computeSweep(engine.current, job, document, range, ({ stage, fraction }) => {
+          // One that was cancelled before its worker had begun is cancelled once it has.
+          if (cancelled.current === job) engine.current?.cancel(job);
           if (jobs.current === job && !ended) setRunning({ job, stage, fraction });
         });
         return jobs.current === job ? done : null;
@@ -52,6 +55,9 @@ export function useSweepRun() {
     },
     [],
   );
-  const cancel = useCallback(() => engine.current?.cancel(jobs.current), []);
+  const cancel = useCallback(() => {
+    cancelled.current = jobs.current;
+    engine.current?.cancel(jobs.current);
+  }, []);
   return { running, problem, run, cancel };
 }

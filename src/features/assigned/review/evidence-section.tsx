@@ -66,7 +66,8 @@ export function EvidenceSection({ handIn, review, onChange }: ReviewPart) {
     setSaid([]);
     const done = await run(document, range);
     if (!done) return;
-    if (!done.complete) return setSaid([`The replay did not come to its end: ${done.message}`]);
+    if (done.status === 'cancelled') return setSaid(['The replay was cancelled.']);
+    if (done.status === 'failed') return setSaid([`The replay did not come to its end. ${done.message}`]);
     setReplay(done.kept);
     setSaid(
       sweep

@@ -32,6 +32,7 @@ export function DueSection({ view, onChange }: Pick<SetPart, 'view' | 'onChange'
         <FormField
           label="Date and time"
           type="datetime-local"
+          max="2999-12-31T23:59"
           className="w-60"
           value={typed ?? wall}
           onBlur={handleBlur}

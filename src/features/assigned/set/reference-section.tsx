@@ -55,7 +55,8 @@ export function ReferenceSection({
     setNote('');
     const done = await run(view.document, view.range);
     if (!done) return;
-    if (!done.complete) setNote(`Nothing was taken over: ${done.message || 'the run was cancelled.'}`);
+    if (done.status === 'cancelled') setNote('The run was cancelled, and nothing was taken over.');
+    else if (done.status === 'failed') setNote(`Nothing was taken over. ${done.message}`);
     else onChange({ reference: fillReference(latest(), done.kept) });
   };
 
