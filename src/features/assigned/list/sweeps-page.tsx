@@ -69,7 +69,7 @@ export default function SweepsPage() {
             label="Shown"
             className="w-40"
             value={state ?? 'all'}
-            choices={STATES}
+            choices={STATES.filter(({ value }) => sets || value !== 'draft')}
             onChange={(value) => setSearch({ in: labId, ...(value === 'all' ? {} : { state: value }) })}
           />
           {sets ? (
