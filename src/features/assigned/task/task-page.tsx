@@ -5,16 +5,20 @@ import { Markdown } from '@/components/markdown/markdown';
 import { ErrorState, LoadingState } from '@/components/states/page-state';
 import { buttonClasses } from '@/components/ui/button';
 import type { Freedom, WantedFinding } from '@/contract/assigned-sweeps';
-import { formatNumber } from '@/graphics/numbers';
+import { parameterName } from '@/graphics/quantities';
 
 import { ASSIGNED_KEYS, fetchTask } from '../api/assigned-operations';
 import { DueWords } from '../components/due-words';
 import { WorkStateChip } from '../components/work-state-chip';
 import { HandInView } from './hand-in-view';
 
-function freedomWords({ model, parameters, range }: Freedom): string {
+function freedomWords({ model, parameters, range }: Freedom, nameOf: (key: string) => string): string {
   const numbers =
-    model || parameters === 'all' ? 'every number' : parameters.length === 0 ? null : parameters.join(', ');
+    model || parameters === 'all'
+      ? 'every number'
+      : parameters.length === 0
+        ? null
+        : parameters.map(nameOf).join(', ');
   const free = [model ? 'the model itself' : null, numbers, range ? 'the sweep' : null].filter(Boolean);
   return free.length === 0
     ? 'Model and sweep are locked; start values and views are yours.'
@@ -24,7 +28,7 @@ function freedomWords({ model, parameters, range }: Freedom): string {
 function wantedWords(wanted: WantedFinding): string {
   if (wanted.kind === 'special point')
     return `${wanted.point} of the ${wanted.of === 'split' ? 'split' : 'pooled'} model`;
-  return wanted.kind === 'number' ? (wanted.unit ? `a number in ${wanted.unit}` : 'a number') : 'in words';
+  return wanted.kind === 'number' ? (wanted.unit ? `a number (${wanted.unit})` : 'a number') : 'in words';
 }
 
 /** An assigned sweep as its assignee sees it: what is asked, when, and what became of what was handed in. */
@@ -37,6 +41,7 @@ export default function TaskPage() {
   if (task.isPending) return <LoadingState label="Opening the assigned sweep…" />;
   if (task.isError) return <ErrorState error={task.error} />;
   const { data } = task;
+  const nameOf = (key: string) => parameterName(data.document, key).name;
   const open = data.state === 'open';
   const begun = data.mine !== 'untouched';
   return (
@@ -60,8 +65,8 @@ export default function TaskPage() {
       <section aria-label="What is asked" className="grid gap-2">
         <h2 className="text-lg">What is asked</h2>
         <p>
-          Sweep <span className="figures">{data.range.parameter}</span> from{' '}
-          {formatNumber(data.range.from, 5)} to {formatNumber(data.range.to, 5)}. {freedomWords(data.freedom)}
+          Sweep {nameOf(data.range.parameter)} from {String(data.range.from)} to {String(data.range.to)}.{' '}
+          {freedomWords(data.freedom, nameOf)}
         </p>
         <ul className="divide-y rounded-lg border bg-raised">
           {data.wanted.map((one) => (

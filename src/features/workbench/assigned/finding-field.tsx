@@ -13,7 +13,7 @@ const MODEL = { split: 'split', twin: 'pooled' } as const;
 /** What is asked for, in a few words under its label. */
 export function wantedWords(wanted: WantedFinding): string {
   if (wanted.kind === 'special point') return `${wanted.point}, ${MODEL[wanted.of]} model`;
-  if (wanted.kind === 'number') return wanted.unit ? `a number, in ${wanted.unit}` : 'a number';
+  if (wanted.kind === 'number') return wanted.unit ? `a number (${wanted.unit})` : 'a number';
   return 'a reading in words';
 }
 

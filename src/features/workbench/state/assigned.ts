@@ -44,6 +44,15 @@ export function isModelLocked(assigned: AssignedWork | null): boolean {
   return assigned !== null && !assigned.task.freedom.model;
 }
 
+/** Whether no trait value and no dial may be moved. */
+export function areTraitsLocked(assigned: AssignedWork | null): boolean {
+  if (!isModelLocked(assigned) || !assigned) return false;
+  const { document, freedom, range } = assigned.task;
+  if (freedom.parameters === 'all') return false;
+  const plain = new Set(document.parameters.map(({ symbol }) => symbol));
+  return [...freedom.parameters, range.parameter].every((key) => plain.has(key));
+}
+
 export function isRangeLocked(assigned: AssignedWork | null): boolean {
   return assigned !== null && !assigned.task.freedom.range;
 }

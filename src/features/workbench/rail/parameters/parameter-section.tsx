@@ -6,6 +6,7 @@ import { LIMITS } from '@/engine/schema/limits';
 import { part } from '@/lib/part';
 import { whenIdle } from '@/lib/when-idle';
 
+import { isModelLocked } from '../../state/assigned';
 import { useWorkbench } from '../../state/store';
 import { RailSection } from '../rail-section';
 import { addParameter } from './parameter-edits';
@@ -41,6 +42,7 @@ class Fallback extends Component<{ readonly children: ReactNode }, { readonly fa
 export function ParameterSection() {
   const count = useWorkbench((state) => state.document.parameters.length);
   const edit = useWorkbench((state) => state.edit);
+  const locked = useWorkbench((state) => isModelLocked(state.assigned));
   // The first picture goes before the sliders.
   const pictured = useWorkbench((state) => state.result !== null || state.report?.valid === false);
   return (
@@ -52,7 +54,7 @@ export function ParameterSection() {
         <Button
           look="quiet"
           size="small"
-          disabled={count >= LIMITS.parameters}
+          disabled={count >= LIMITS.parameters || locked}
           onClick={() => edit('Add parameter', (document) => addParameter(document, 'p', ''))}
         >
           <Plus size={14} aria-hidden /> Parameter
