@@ -26,6 +26,4 @@ export interface Dependencies {
   passwords: Passwords;
   limits: RateLimits;
   logger: Logger;
-  /** False once the server is about to stop. */
-  isReady: () => boolean;
 }

@@ -3,6 +3,7 @@ import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 
 import type { Express } from 'express';
+import type { DestinationStream } from 'pino';
 import request, { type Response } from 'supertest';
 
 import type { SessionBody } from '@/contract/account';
@@ -85,10 +86,10 @@ export interface TestServer {
 }
 
 export async function startTestServer(
-  options: { limits?: RateLimitSettings; demo?: boolean } = {},
+  options: { limits?: RateLimitSettings; demo?: boolean; log?: DestinationStream } = {},
 ): Promise<TestServer> {
   const folder = mkdtempSync(join(tmpdir(), 'moiety-test-'));
-  const logger = createLogger('silent');
+  const logger = options.log ? createLogger('trace', options.log) : createLogger('silent');
   const database = new Database(join(folder, 'moiety.sqlite'));
   await createMigrator(database).up();
   await seedStarters(database);
@@ -117,7 +118,6 @@ export async function startTestServer(
     passwords: new Passwords(CHEAP),
     limits: createRateLimits(options.limits ?? MANY),
     logger,
-    isReady: () => true,
   };
   if (demo) await seedDemo(dependencies);
   const app = createApp(dependencies);
