@@ -40,6 +40,32 @@ for (const colorScheme of ['light', 'dark'] as const) {
       }
     });
 
+    test('pages of assigned sweeps, for who sets one and whom it is for', async ({ page, browser }) => {
+      await signInAs(page, 'Ada Fennimore');
+      await page.goto('/lab/sweeps?in=demo-lab');
+      const sweep = page.getByRole('link', { name: 'The effort that loses the sturgeon', exact: true });
+      await expect(sweep).toBeVisible();
+      expect(await seriousFindings(page), 'list').toEqual([]);
+      const id = /assigned\/([^/]+)/.exec((await sweep.getAttribute('href')) ?? '')?.[1] ?? '';
+      for (const place of [`/assigned/${id}/set`, `/assigned/${id}/review`]) {
+        await page.goto(place);
+        await expect(page.getByRole('heading', { name: /sturgeon/ }).first()).toBeVisible();
+        await page.waitForTimeout(800);
+        expect(await seriousFindings(page), place).toEqual([]);
+      }
+      const student = await (await browser.newContext({ colorScheme })).newPage();
+      await signInAs(student, 'Sanna Weldon');
+      await student.goto(`/assigned/${id}`);
+      await expect(student.locator('.katex').first()).toBeVisible();
+      expect(await seriousFindings(student), 'task').toEqual([]);
+      await student.getByRole('link', { name: /workbench/ }).click();
+      await expect(student.getByRole('button', { name: /^Pin as/ }).first()).toBeVisible({ timeout: 30_000 });
+      expect(await seriousFindings(student), 'work').toEqual([]);
+      await student.getByRole('button', { name: 'Hand in…' }).click();
+      await expect(student.getByRole('dialog')).toBeVisible();
+      expect(await seriousFindings(student), 'hand-in').toEqual([]);
+    });
+
     test('the workbench in each arrangement', async ({ page }) => {
       await signInAs(page, 'Rui Maddock');
       await openStarter(page, 'saturating-two-sex-predator');
