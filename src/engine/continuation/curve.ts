@@ -18,6 +18,8 @@ export class Curve {
   /** Jacobian of all n states at the last evaluation, row-major. */
   readonly jacobian: Float64Array;
   readonly parameters: Float64Array;
+  /** Changes sign at a branch point; of the last tangent. */
+  lastDeterminant = NaN;
   private readonly f: Float64Array;
   private readonly fp: Float64Array;
   private readonly matrix: Float64Array;
@@ -58,7 +60,8 @@ export class Curve {
 
   /** Loads w into u and the system's parameters. */
   load(w: Float64Array): void {
-    this.active.forEach((i, a) => (this.u[i] = w[a] * this.stateScale[i]));
+    const { m, u, active, stateScale } = this;
+    for (let a = 0; a < m; a += 1) u[active[a]] = w[a] * stateScale[active[a]];
     this.parameters[this.parameterIndex] = this.parameterAt(w);
     this.system.setParameters(this.parameters);
   }
@@ -69,11 +72,11 @@ export class Curve {
     this.system.rhs(0, this.u, this.f);
     this.system.jacobian(0, this.u, this.jacobian);
     this.system.parameterDerivative(0, this.u, this.parameterIndex, this.fp);
-    for (const i of this.active) {
-      if (!Number.isFinite(this.f[i]) || !Number.isFinite(this.fp[i])) return false;
-    }
-    for (let k = 0; k < this.jacobian.length; k += 1) if (!Number.isFinite(this.jacobian[k])) return false;
-    return true;
+    // A sum is finite only where every part of it is, overflow aside, which is no place to be either.
+    let sum = 0;
+    for (let a = 0; a < this.m; a += 1) sum += this.f[this.active[a]] + this.fp[this.active[a]];
+    for (let k = 0; k < this.jacobian.length; k += 1) sum += this.jacobian[k];
+    return Number.isFinite(sum);
   }
 
   private fill(constraint: Float64Array): void {
@@ -130,10 +133,16 @@ export class Curve {
     return before <= CORRECTOR_DEFAULTS.accepted ? iterations : -1;
   }
 
-  /** Unit tangent at the last evaluated point, turned along `reference`; false where it is not defined. */
+  /**
+   * Unit tangent at the last evaluated point, turned along `reference`; false where it is not defined.
+   * It also gives det [F_u S, F_p L; tangent'], in `lastDeterminant`: the determinant is linear in its last row and
+   * zero for every row that the others span, so with v the solution for `reference` (reference'v = 1) and t = v/|v|
+   * it is det [F_u S, F_p L; reference'] |v|.
+   */
   tangent(reference: Float64Array, out: Float64Array): boolean {
     const { m } = this;
-    this.factor(reference);
+    let product = this.factor(reference);
+    for (let b = 0; b <= m; b += 1) product *= this.matrix[b * (m + 1) + b];
     out.fill(0);
     out[m] = 1;
     luSolve(this.matrix, m + 1, this.pivots, out);
@@ -142,15 +151,8 @@ export class Curve {
     const length = Math.sqrt(squared);
     if (!(length > 0) || !Number.isFinite(length)) return false;
     for (let b = 0; b <= m; b += 1) out[b] /= length;
+    this.lastDeterminant = product * length;
     return true;
-  }
-
-  /** det [F_u S, F_p L; c'] at the last evaluated point: changes sign at a branch point when c is the tangent. */
-  determinant(constraint: Float64Array): number {
-    const sign = this.factor(constraint);
-    let product = sign;
-    for (let b = 0; b <= this.m; b += 1) product *= this.matrix[b * (this.m + 1) + b];
-    return product;
   }
 
   /** [F_u S, F_p L; c'] at w, unfactored, row-major; null where values are not finite. */

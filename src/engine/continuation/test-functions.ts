@@ -73,15 +73,16 @@ export class Monitor {
     const { curve, spectrum } = this;
     let lowest = Infinity;
     let lowestState = -1;
-    curve.active.forEach((i, a) => {
+    for (let a = 0; a < curve.m; a += 1) {
+      const i = curve.active[a];
       if (curve.system.nonnegative[i] && w[a] < lowest) {
         lowest = w[a];
         lowestState = i;
       }
-    });
+    }
     return {
       fold: tangent[curve.m],
-      branch: curve.determinant(tangent),
+      branch: curve.lastDeterminant,
       transversal: this.absent.map((_, g) => this.transversalDeterminant(g)),
       lowest,
       lowestState,
