@@ -21,9 +21,9 @@ export interface LoadPreset {
   readonly document: string;
 }
 
-function drawPreset(draw: Draw, owner: LoadPerson, k: number, versions: number) {
+function drawPreset(draw: Draw, owner: LoadPerson, k: number, turn: number, versions: number) {
   const id = `load-preset-${String(k).padStart(5, '0')}`;
-  const open = k % 5 < OPEN_OF_FIVE && roleMay(owner.role, 'create lab presets');
+  const open = turn % 5 < OPEN_OF_FIVE && roleMay(owner.role, 'create lab presets');
   const labId = open ? owner.labId : null;
   const createdAt = new Date(LOAD_DAY - (30 + draw() * 400) * A_DAY);
   let document = drawDocument(draw);
@@ -84,7 +84,9 @@ export async function writePresets(
     const drawn = Array.from({ length: Math.min(BATCH, presets - from) }, (_, k) => {
       const owner = people[(from + k) % people.length];
       if (owner === undefined) throw new Error('There is nobody to own a preset.');
-      return drawPreset(draw, owner, from + k, versions);
+      // Each owner has some of both kinds, whatever the number of people.
+      const turn = from + k + Math.floor((from + k) / people.length);
+      return drawPreset(draw, owner, from + k, turn, versions);
     });
     await database.change(async (transaction) => {
       const options = { transaction, validate: false };
