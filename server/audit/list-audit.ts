@@ -11,7 +11,7 @@ const A_DAY = 24 * 60 * 60_000;
 /** Lines of one CSV file; a longer history is taken in stretches of dates. */
 const MOST_LINES = 10_000;
 
-function conditions(labId: string, { person, action, from, to }: AuditQuery): WhereOptions {
+function conditions(labId: string | null, { person, action, from, to }: AuditQuery): WhereOptions {
   return {
     labId,
     ...(person === undefined ? {} : { actorId: person }),
@@ -29,8 +29,12 @@ function present({ id, at, actorId, actorName, action, subject, details }: Audit
   return { id, at: at.toISOString(), actor, action, sentence: AUDIT_SENTENCES[action], subject, details };
 }
 
-/** A page of the history of a lab, newest first. */
-export async function listAudit({ models }: Database, labId: string, query: AuditQuery): Promise<AuditPage> {
+/** A page of the history of a lab, newest first; without a lab, of what concerns accounts alone. */
+export async function listAudit(
+  { models }: Database,
+  labId: string | null,
+  query: AuditQuery,
+): Promise<AuditPage> {
   const { rows, count } = await models.AuditEntry.findAndCountAll({
     where: conditions(labId, query),
     order: [['id', 'DESC']],

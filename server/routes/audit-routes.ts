@@ -31,5 +31,9 @@ export function auditRoutes({ database }: Dependencies): Router {
       .type('text/csv')
       .send(await auditAsCsv(database, labId, parseQuery(request, auditQuerySchema)));
   });
+  router.get('/account/audit', requireSignedIn, async (request, response) => {
+    const { page } = parseQuery(request, auditQuerySchema.pick({ page: true }));
+    response.json(await listAudit(database, null, { person: signedIn(request).id, page }));
+  });
   return router;
 }

@@ -60,6 +60,7 @@ export function createRouter() {
                 { path: '/presets', lazy: page(() => import('./routes/library-route')) },
                 { path: '/assigned/:id', lazy: page(() => import('@/features/assigned/task/task-page')) },
                 { path: '/lab', lazy: page(() => import('./routes/lab-route')) },
+                { path: '/lab/history', lazy: page(() => import('@/features/lab/history-page')) },
                 { path: '/lab/sweeps', lazy: page(() => import('@/features/assigned/list/sweeps-page')) },
                 { path: '/assigned/:id/set', lazy: page(() => import('@/features/assigned/set/set-page')) },
                 {

@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import { z } from '../engine/schema/zod';
 
 /** What the history of a lab or an account records, each with its sentence after the person's name. */
 export const AUDIT_SENTENCES = {
@@ -51,19 +51,25 @@ export const auditQuerySchema = z.object({
 });
 export type AuditQuery = z.infer<typeof auditQuerySchema>;
 
-export interface AuditEntryBody {
-  id: number;
-  at: string;
-  actor: { id: string | null; name: string };
-  action: AuditAction;
-  sentence: string;
-  subject: string;
-  details: Record<string, string | number>;
-}
-
-export interface AuditPage {
-  items: AuditEntryBody[];
-  total: number;
-  page: number;
-  pageSize: number;
-}
+/**
+ * GET /api/labs/:labId/audit for those who may read its history, newest first; the same as CSV at /audit.csv.
+ * GET /api/account/audit: what concerns oneself and no lab.
+ */
+export const auditPageSchema = z.object({
+  items: z.array(
+    z.object({
+      id: z.number(),
+      at: z.string(),
+      actor: z.object({ id: z.string().nullable(), name: z.string() }),
+      action: z.enum(AUDIT_ACTIONS),
+      sentence: z.string(),
+      subject: z.string(),
+      details: z.record(z.string(), z.union([z.string(), z.number()])),
+    }),
+  ),
+  total: z.number(),
+  page: z.number(),
+  pageSize: z.number(),
+});
+export type AuditPage = z.infer<typeof auditPageSchema>;
+export type AuditEntryBody = AuditPage['items'][number];

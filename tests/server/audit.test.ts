@@ -72,3 +72,19 @@ it.each(["UPDATE audit_entries SET actorName = 'x'", 'DELETE FROM audit_entries'
     });
   },
 );
+
+it('shows everyone the events of their own account and nobody else’s', async () => {
+  const student = await server.person('student');
+  await new Visitor(server.app).signIn('student@demo.invalid', 'not the password');
+  const researcher = await server.person('researcher');
+  await researcher.post('/presets', { document: sampleDocument('Private newts') });
+  const own = (await student.get('/account/audit')).body as AuditPage;
+  const names = new Set(own.items.map(({ actor }) => actor.name));
+  expect([...names]).toEqual(['Sanna Weldon']);
+  const actions = own.items.map(({ action }) => action);
+  expect(actions).toContain('signed in');
+  expect(actions).toContain('sign-in refused');
+  const theirs = (await researcher.get('/account/audit')).body as AuditPage;
+  expect(theirs.items[0]).toMatchObject({ action: 'preset created', subject: 'Private newts' });
+  expect(JSON.stringify(own)).not.toContain('Private newts');
+});

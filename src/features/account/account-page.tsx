@@ -4,6 +4,7 @@ import { changeAccountSchema, changePasswordSchema } from '@/contract/account';
 import { useRefreshSession, useSession } from '@/lib/session';
 
 import { changeName, changePassword } from './api/account-operations';
+import { AccountEvents } from './components/account-events';
 import { AccountForm } from './components/account-form';
 import { MailSettings } from './components/mail-settings';
 import { SessionList } from './components/session-list';
@@ -69,6 +70,7 @@ export default function AccountPage() {
       </section>
       <MailSettings />
       <SessionList />
+      <AccountEvents />
     </div>
   );
 }

@@ -1,6 +1,7 @@
 import { z } from '@/engine/schema/zod';
 
 import { demoAccountsSchema, mailListSchema, mailSchema, sessionListSchema } from '@/contract/account';
+import { auditPageSchema } from '@/contract/audit';
 import { api } from '@/lib/api-client';
 
 /** The calls of the account pages, one each. */
@@ -15,6 +16,7 @@ export const changePassword = (body: { current: string; next: string }) =>
   api.postOnly('/password/change', body);
 export const changeName = (name: string) => api.patch('/account', { name }, z.unknown());
 export const fetchSessions = () => api.get('/account/sessions', sessionListSchema);
+export const fetchAccountEvents = (page: number) => api.get(`/account/audit?page=${page}`, auditPageSchema);
 export const endSession = (id: string) => api.delete(`/account/sessions/${encodeURIComponent(id)}`);
 export const endOtherSessions = () => api.delete('/account/sessions');
 export const fetchDemoAccounts = () => api.get('/demo/accounts', demoAccountsSchema);

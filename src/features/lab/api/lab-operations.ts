@@ -1,3 +1,4 @@
+import { auditPageSchema } from '@/contract/audit';
 import {
   departureSchema,
   invitationListSchema,
@@ -19,6 +20,7 @@ export const LAB_KEYS = {
   lab: (labId: string) => ['lab', labId],
   invitations: (labId: string) => ['lab', labId, 'invitations'],
   departure: (labId: string, userId: string) => ['lab', labId, 'departure', userId],
+  history: (labId: string, query: string) => ['lab', labId, 'history', query],
   own: ['own-invitations'],
 } as const;
 
@@ -42,6 +44,11 @@ export const invite = (
 export const resendInvitation = (labId: string, id: string) =>
   api.post(`${invitation(labId, id)}/resend`, {}, invitationListSchema);
 export const withdrawInvitation = (labId: string, id: string) => api.delete(invitation(labId, id));
+
+export const fetchHistory = (labId: string, query: string) =>
+  api.get(`${lab(labId)}/audit?${query}`, auditPageSchema);
+/** Where the same history is to be had as a file. */
+export const historyFile = (labId: string, query: string) => `/api${lab(labId)}/audit.csv?${query}`;
 
 export const fetchOwnInvitations = () => api.get('/account/invitations', ownInvitationsSchema);
 export const acceptOwnInvitation = (id: string) => api.post(`${mine(id)}/accept`, {}, joinedSchema);

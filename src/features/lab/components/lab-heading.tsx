@@ -1,8 +1,9 @@
 import { useQueryClient } from '@tanstack/react-query';
 import { useState } from 'react';
+import { Link } from 'react-router-dom';
 
 import { SelectField } from '@/components/fields/select-field';
-import { Button } from '@/components/ui/button';
+import { Button, buttonClasses } from '@/components/ui/button';
 import type { LabBody } from '@/contract/labs';
 import { roleMay } from '@/contract/rights';
 import { useRefreshSession } from '@/lib/session';
@@ -48,6 +49,11 @@ export function LabHeading({ lab, onNew, onLeave }: LabHeadingProps) {
         ) : null}
         {roleMay(lab.role, 'rename the lab') ? (
           <Button onClick={() => setRenaming(true)}>Rename</Button>
+        ) : null}
+        {roleMay(lab.role, 'view lab history') ? (
+          <Link to={`/lab/history?in=${encodeURIComponent(lab.id)}`} className={buttonClasses('plain')}>
+            History
+          </Link>
         ) : null}
         <Button onClick={onLeave}>Leave</Button>
         <Button onClick={onNew}>New lab</Button>
