@@ -63,3 +63,21 @@ export function passwordChangedMessage(name: string, publicUrl: string): MailCon
     ],
   };
 }
+
+/** To the former address of an account, after it was deleted. */
+export function accountDeletedMessage(name: string): MailContent {
+  return {
+    subject: 'Your Moiety account was deleted',
+    name,
+    passages: [
+      {
+        text:
+          'Your account and the presets that only you could see were deleted. What you opened to labs and handed in ' +
+          'there stays with them. Nobody can sign in by this address any more, and a new account can be made with it.',
+      },
+      {
+        text: 'If it was not you, tell whoever runs this server without delay: for 30 days the presets can still be found.',
+      },
+    ],
+  };
+}

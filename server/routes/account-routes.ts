@@ -9,6 +9,7 @@ import {
   signInSchema,
   signUpSchema,
 } from '@/contract/account';
+import { deleteAccountSchema } from '@/contract/account-deletion';
 
 import {
   changePassword,
@@ -18,6 +19,7 @@ import {
   requestReset,
   resetPassword,
 } from '../commands/account-commands';
+import { deleteAccount, describeDeletion } from '../commands/account-deletion';
 import type { Dependencies } from '../dependencies';
 import { refuseNotFound, refuseNotSignedIn } from '../errors';
 import { readPerson, requireSignedIn, signedIn, visitorOrPerson } from '../middleware/current-user';
@@ -113,6 +115,16 @@ export function accountRoutes(dependencies: Dependencies): Router {
       database.models.SessionRecord.destroy({ where: { userId: id, publicId: String(request.params.id) } }),
     );
     if (ended === 0) throw refuseNotFound('You have no such session; it may have ended already.');
+    response.status(204).end();
+  });
+
+  router.get('/account/deletion', requireSignedIn, async (request, response) => {
+    response.json(await describeDeletion(dependencies, signedIn(request)));
+  });
+
+  router.post('/account/deletion', requireSignedIn, limits.secrets, async (request, response) => {
+    await deleteAccount(dependencies, signedIn(request), parseBody(request, deleteAccountSchema));
+    response.clearCookie(SESSION_COOKIE, { path: '/' });
     response.status(204).end();
   });
 

@@ -38,6 +38,7 @@ export const AUDIT_SENTENCES = {
   'signed in': 'signed in',
   'sign-in refused': 'was refused a sign-in with a wrong password',
   'password changed': 'changed the password',
+  'account deleted': 'deleted their account',
 } as const;
 export type AuditAction = keyof typeof AUDIT_SENTENCES;
 export const AUDIT_ACTIONS = Object.keys(AUDIT_SENTENCES) as [AuditAction, ...AuditAction[]];

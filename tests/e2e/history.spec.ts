@@ -31,3 +31,36 @@ test('history of a lab and events of an account', async ({ page, browser }) => {
   await student.goto('/account');
   await expect(student.getByRole('region', { name: 'Events of your account' })).toContainText('signed in');
 });
+
+/** Promise: whoever deletes their account knows before what goes, and is signed out afterwards. */
+test('an account is deleted with its consequences told', async ({ page }) => {
+  await page.goto('/sign-up');
+  await page.getByLabel('Name').fill('Wren Alder');
+  await page.getByLabel('E-mail').fill('wren@example.org');
+  await page.getByLabel('Password').fill('catkins in spring');
+  await page.getByRole('button', { name: 'Sign up' }).click();
+  await expect(async () => {
+    await page.goto('/mail');
+    await page
+      .getByRole('button', { name: /Confirm your Moiety account/ })
+      .filter({ hasText: 'wren@example.org' })
+      .first()
+      .click({ timeout: 2_000 });
+  }).toPass({ timeout: 20_000 });
+  await page.getByRole('link', { name: /confirm\?token/ }).click();
+  await expect(page.getByRole('heading', { name: 'Desk of Wren Alder' })).toBeVisible();
+  await page.goto('/account');
+  await page.getByRole('button', { name: 'Delete the account…' }).click();
+  const dialog = page.getByRole('dialog');
+  await expect(dialog).toContainText('0 presets that only you see are deleted');
+  await dialog.getByLabel('Your password').fill('not the password');
+  await dialog.getByRole('button', { name: 'Delete the account' }).click();
+  await expect(dialog).toContainText('This is not your password.');
+  await dialog.getByLabel('Your password').fill('catkins in spring');
+  await dialog.getByRole('button', { name: 'Delete the account' }).click();
+  await expect(page).toHaveURL(/\/sign-in$/);
+  await page.getByLabel('E-mail').fill('wren@example.org');
+  await page.getByLabel('Password').fill('catkins in spring');
+  await page.getByRole('button', { name: 'Sign in', exact: true }).click();
+  await expect(page.getByText(/not right/)).toBeVisible();
+});

@@ -126,6 +126,13 @@ const rows = (): Row[] => [
   { method: 'patch', path: '/account', body: () => ({ name: '' }), expect: signedInOnly(400) },
   { method: 'get', path: '/account/sessions', expect: signedInOnly(200) },
   { method: 'delete', path: '/account/sessions/nothing', expect: signedInOnly(404) },
+  { method: 'get', path: '/account/deletion', expect: signedInOnly(200) },
+  {
+    method: 'post',
+    path: '/account/deletion',
+    body: () => ({ password: '' }),
+    expect: signedInOnly(400),
+  },
   { method: 'get', path: '/account/audit', expect: signedInOnly(200) },
   { method: 'get', path: '/account/audit?page=0', expect: signedInOnly(400) },
   { method: 'get', path: `/labs/${DEMO_LAB.id}`, expect: { ...signedInOnly(200), outsider: 404 } },

@@ -4,6 +4,7 @@ import { changeAccountSchema, changePasswordSchema } from '@/contract/account';
 import { useRefreshSession, useSession } from '@/lib/session';
 
 import { changeName, changePassword } from './api/account-operations';
+import { AccountDeletion } from './components/account-deletion';
 import { AccountEvents } from './components/account-events';
 import { AccountForm } from './components/account-form';
 import { MailSettings } from './components/mail-settings';
@@ -71,6 +72,7 @@ export default function AccountPage() {
       <MailSettings />
       <SessionList />
       <AccountEvents />
+      <AccountDeletion />
     </div>
   );
 }

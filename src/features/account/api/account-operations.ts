@@ -1,6 +1,7 @@
 import { z } from '@/engine/schema/zod';
 
 import { demoAccountsSchema, mailListSchema, mailSchema, sessionListSchema } from '@/contract/account';
+import { deletionSchema } from '@/contract/account-deletion';
 import { auditPageSchema } from '@/contract/audit';
 import { api } from '@/lib/api-client';
 
@@ -15,6 +16,9 @@ export const resetPassword = (body: { token: string; password: string }) =>
 export const changePassword = (body: { current: string; next: string }) =>
   api.postOnly('/password/change', body);
 export const changeName = (name: string) => api.patch('/account', { name }, z.unknown());
+export const fetchDeletion = () => api.get('/account/deletion', deletionSchema);
+export const deleteAccount = (body: { password: string; anonymous: boolean }) =>
+  api.postOnly('/account/deletion', body);
 export const fetchSessions = () => api.get('/account/sessions', sessionListSchema);
 export const fetchAccountEvents = (page: number) => api.get(`/account/audit?page=${page}`, auditPageSchema);
 export const endSession = (id: string) => api.delete(`/account/sessions/${encodeURIComponent(id)}`);
