@@ -5,15 +5,16 @@ import { roleMay } from '@/contract/rights';
 
 import type { Dependencies } from '../dependencies';
 import type { Person } from '../middleware/current-user';
-import { presentSummary } from '../presenters/present-preset';
 
-const ORDERS: Record<PresetQuery['sort'], { column: string; usual: 'ASC' | 'DESC' }> = {
-  changed: { column: 'p.changedAt', usual: 'DESC' },
-  created: { column: 'p.createdAt', usual: 'DESC' },
-  title: { column: 'p.title COLLATE NOCASE', usual: 'ASC' },
-  owner: { column: "COALESCE(u.name, '') COLLATE NOCASE", usual: 'ASC' },
+const ORDERS: Record<PresetQuery['sort'], { by: string; usual: 'ASC' | 'DESC'; owner?: true }> = {
+  changed: { by: 'f.changedAt', usual: 'DESC' },
+  created: { by: 'f.createdAt', usual: 'DESC' },
+  title: { by: 'f.title COLLATE NOCASE', usual: 'ASC' },
+  owner: { by: "COALESCE(o.name, '') COLLATE NOCASE", usual: 'ASC', owner: true },
 };
 const TAGS_SHOWN = 40;
+const OWNERS_SHOWN = 200;
+const MOST_WORDS = 12;
 
 /** Words as typed, each to be found at the beginning of a word; quoted, so that no operator is read into them. */
 function wordsToMatch(search: string): string | null {
@@ -21,79 +22,122 @@ function wordsToMatch(search: string): string | null {
   return words.length === 0
     ? null
     : words
-        .slice(0, 12)
+        .slice(0, MOST_WORDS)
         .map((word) => `"${word}"*`)
         .join(' ');
 }
 
-/** A page of the library as one person may see it. */
+/** The words within what the person may see, as the scope column of the search has it. */
+function matchFor(search: string, personId: string, labs: readonly string[]): string | null {
+  const words = wordsToMatch(search);
+  if (words === null) return null;
+  const scopes = ['starter', `own ${personId}`, ...labs.map((id) => `lab ${id}`)];
+  const scope = scopes.map((one) => `"${one.replaceAll('"', '""')}"`).join(' OR ');
+  return `scope : (${scope}) AND {title summary tags} : (${words})`;
+}
+
+const SEEN_FIELDS = 'id, ownerId, visibility, title, createdAt, changedAt';
+
+/** What the person may see, part by part, so that each is found by its own index. */
+const SEEN = `seen AS MATERIALIZED (
+  SELECT ${SEEN_FIELDS} FROM presets WHERE visibility = 'starter' AND deletedAt IS NULL
+  UNION ALL
+  SELECT ${SEEN_FIELDS} FROM presets WHERE ownerId = :me AND visibility = 'private' AND deletedAt IS NULL
+  UNION ALL
+  SELECT ${SEEN_FIELDS} FROM presets WHERE labId IN (:labs) AND visibility = 'lab' AND deletedAt IS NULL
+)`;
+
+const time = (column: string) => `strftime('%Y-%m-%dT%H:%M:%fZ', ${column})`;
+const named = (table: string) =>
+  `CASE WHEN ${table}.id IS NULL THEN NULL ELSE json_object('id', ${table}.id, 'name', ${table}.name) END`;
+
+/** CROSS JOIN keeps the order of reading: from the few that are found to what belongs to each. */
+const ITEMS = `json_object(
+  'id', p.id, 'title', p.title, 'summary', p.summary, 'tagLines', p.tagLines, 'visibility', p.visibility,
+  'owner', json(${named('u')}), 'lab', json(${named('l')}), 'version', p.headNumber,
+  'changedAt', ${time('p.changedAt')}, 'createdAt', ${time('p.createdAt')}, 'populations', json(p.populations)
+)`;
+const TAGS = `SELECT json_group_array(json_object('tag', tag, 'count', n) ORDER BY n DESC, tag) FROM (
+  SELECT t.tag AS tag, COUNT(*) AS n FROM seen CROSS JOIN preset_tags t ON t.presetId = seen.id
+  GROUP BY t.tag ORDER BY n DESC, t.tag LIMIT :tags
+)`;
+const OWNERS = `SELECT json_group_array(json_object('id', id, 'name', name) ORDER BY name) FROM (
+  SELECT u.id, u.name FROM (SELECT DISTINCT ownerId FROM seen WHERE ownerId <> :me) o
+  CROSS JOIN users u ON u.id = o.ownerId ORDER BY u.name LIMIT :owners
+)`;
+
+function conditionsOf(query: PresetQuery, match: string | null): string {
+  const conditions = ['1'];
+  // Words that hold no letter are found nowhere.
+  if (query.search !== '')
+    conditions.push(
+      match === null
+        ? '0'
+        : `s.id IN (SELECT r.presetId FROM preset_words w CROSS JOIN preset_word_rows r ON r.number = w.rowid
+           WHERE preset_words MATCH :match)`,
+    );
+  if (query.tag)
+    conditions.push('EXISTS (SELECT 1 FROM preset_tags t WHERE t.presetId = s.id AND t.tag = :tag)');
+  if (query.owner) conditions.push('s.ownerId = :owner');
+  if (query.kind === 'own') conditions.push('s.ownerId = :me');
+  if (query.kind === 'starter' || query.kind === 'lab') conditions.push('s.visibility = :kind');
+  return conditions.join(' AND ');
+}
+
+type Item = Omit<PresetPage['items'][number], 'tags' | 'starter'> & { readonly tagLines: string };
+
+/** A page of the library as one person may see it, in one statement. */
 export async function listPresets(
   { database }: Dependencies,
   person: Person,
   query: PresetQuery,
 ): Promise<PresetPage> {
-  const { sequelize, models } = database;
   const labs = person.memberships
     .filter(({ role }) => roleMay(role, 'view lab presets'))
     .map(({ labId }) => labId);
-  const visible = `p.deletedAt IS NULL AND (p.visibility = 'starter' OR (p.visibility = 'private' AND p.ownerId = :me) OR (p.visibility = 'lab' AND p.labId IN (:labs)))`;
-  const conditions = [visible];
-  const match = wordsToMatch(query.search);
-  if (query.search !== '') {
-    conditions.push(
-      match ? 'p.id IN (SELECT presetId FROM preset_words WHERE preset_words MATCH :match)' : '0',
-    );
-  }
-  if (query.tag) conditions.push('p.id IN (SELECT presetId FROM preset_tags WHERE tag = :tag)');
-  if (query.owner) conditions.push('p.ownerId = :owner');
-  if (query.kind === 'starter') conditions.push("p.visibility = 'starter'");
-  if (query.kind === 'own') conditions.push('p.ownerId = :me');
-  if (query.kind === 'lab') conditions.push("p.visibility = 'lab'");
-  const replacements = {
-    me: person.id,
-    labs: labs.length > 0 ? labs : [''],
-    match,
-    tag: query.tag,
-    owner: query.owner === 'me' ? person.id : query.owner,
-    limit: query.pageSize,
-    offset: (query.page - 1) * query.pageSize,
-    tags: TAGS_SHOWN,
-  };
-  const where = conditions.join(' AND ');
-  const order = ORDERS[query.sort];
-  const direction = query.order === undefined ? order.usual : query.order === 'ascending' ? 'ASC' : 'DESC';
-  const select = <Row extends object>(statement: string) =>
-    sequelize.query<Row>(statement, { replacements, type: QueryTypes.SELECT });
-
-  const [ids, counts, tags, owners] = await Promise.all([
-    select<{ id: string }>(
-      `SELECT p.id FROM presets p LEFT JOIN users u ON u.id = p.ownerId WHERE ${where}
-       ORDER BY ${order.column} ${direction}, p.id LIMIT :limit OFFSET :offset`,
-    ),
-    select<{ total: number }>(`SELECT COUNT(*) AS total FROM presets p WHERE ${where}`),
-    select<{ tag: string; count: number }>(
-      `SELECT t.tag AS tag, COUNT(*) AS count FROM preset_tags t JOIN presets p ON p.id = t.presetId WHERE ${visible}
-       GROUP BY t.tag ORDER BY count DESC, t.tag LIMIT :tags`,
-    ),
-    select<{ id: string; name: string }>(
-      `SELECT DISTINCT u.id, u.name FROM presets p JOIN users u ON u.id = p.ownerId WHERE ${visible} AND p.ownerId <> :me
-       ORDER BY u.name LIMIT 200`,
-    ),
-  ]);
-  const records = await models.Preset.findAll({
-    where: { id: ids.map(({ id }) => id) },
-    include: [{ association: 'owner' }, { association: 'lab' }],
-  });
-  const byId = new Map(records.map((record) => [record.id, record]));
+  const match = matchFor(query.search, person.id, labs);
+  const { by, usual, owner } = ORDERS[query.sort];
+  const direction = query.order === undefined ? usual : query.order === 'ascending' ? 'ASC' : 'DESC';
+  const [row] = await database.sequelize.query<
+    Record<'items' | 'tags' | 'owners', string> & { total: number }
+  >(
+    `WITH ${SEEN}, found AS MATERIALIZED (SELECT s.* FROM seen s WHERE ${conditionsOf(query, match)}),
+     page AS MATERIALIZED (
+       SELECT f.id, ROW_NUMBER() OVER (ORDER BY ${by} ${direction}, f.id) AS place
+       FROM found f ${owner ? 'LEFT JOIN users o ON o.id = f.ownerId' : ''}
+       ORDER BY place LIMIT :limit OFFSET :offset
+     )
+     SELECT (SELECT COUNT(*) FROM found) AS total, (${TAGS}) AS tags, (${OWNERS}) AS owners,
+       (SELECT json_group_array(${ITEMS} ORDER BY page.place) FROM page CROSS JOIN presets p ON p.id = page.id
+        LEFT JOIN users u ON u.id = p.ownerId LEFT JOIN labs l ON l.id = p.labId) AS items`,
+    {
+      replacements: {
+        me: person.id,
+        labs: labs.length > 0 ? labs : [''],
+        match,
+        tag: query.tag,
+        kind: query.kind,
+        owner: query.owner === 'me' ? person.id : query.owner,
+        limit: query.pageSize,
+        offset: (query.page - 1) * query.pageSize,
+        tags: TAGS_SHOWN,
+        owners: OWNERS_SHOWN,
+      },
+      type: QueryTypes.SELECT,
+    },
+  );
+  if (row === undefined) throw new Error('The database gave no page.');
+  const items = JSON.parse(row.items) as Item[];
   return {
-    items: ids.flatMap(({ id }) => {
-      const record = byId.get(id);
-      return record ? [presentSummary(record)] : [];
-    }),
-    total: counts[0]?.total ?? 0,
+    items: items.map(({ tagLines, ...item }) => ({
+      ...item,
+      tags: tagLines.split('\n').filter(Boolean),
+      starter: item.visibility === 'starter',
+    })),
+    total: row.total,
     page: query.page,
     pageSize: query.pageSize,
-    tags,
-    owners,
+    tags: JSON.parse(row.tags) as PresetPage['tags'],
+    owners: JSON.parse(row.owners) as PresetPage['owners'],
   };
 }

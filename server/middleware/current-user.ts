@@ -1,4 +1,5 @@
 import type { Request, RequestHandler } from 'express';
+import { QueryTypes } from 'sequelize';
 
 import type { Role } from '@/contract/rights';
 
@@ -16,22 +17,35 @@ export interface Person {
 
 const people = new WeakMap<Request, Person>();
 
+interface PersonRow {
+  name: string;
+  email: string;
+  demo: 0 | 1;
+  labId: string | null;
+  labName: string;
+  role: Role;
+}
+
+/** Read with every request, hence in one statement. */
 export async function readPerson(
   { database, settings }: Dependencies,
   userId: string,
 ): Promise<Person | null> {
-  const { User, Membership } = database.models;
-  const user = await User.findByPk(userId);
+  const rows = await database.sequelize.query<PersonRow>(
+    `SELECT u.name, u.email, u.demo, m.labId, m.role, l.name AS labName FROM users u
+     LEFT JOIN memberships m ON m.userId = u.id LEFT JOIN labs l ON l.id = m.labId WHERE u.id = :userId`,
+    { replacements: { userId }, type: QueryTypes.SELECT },
+  );
+  const [user] = rows;
   // People of the demo exist only while the demo does.
-  if (user === null || (user.demo && !settings.demo)) return null;
-  const memberships = await Membership.findAll({ where: { userId }, include: [{ association: 'lab' }] });
+  if (user === undefined || (user.demo === 1 && !settings.demo)) return null;
   return {
-    id: user.id,
+    id: userId,
     name: user.name,
     email: user.email,
-    demo: user.demo,
-    memberships: memberships
-      .map(({ labId, lab, role }) => ({ labId, labName: lab?.name ?? '', role }))
+    demo: user.demo === 1,
+    memberships: rows
+      .flatMap(({ labId, labName, role }) => (labId === null ? [] : [{ labId, labName, role }]))
       .sort((a, b) => a.labName.localeCompare(b.labName)),
   };
 }

@@ -9,6 +9,7 @@ import { mailQueue } from './004-mail-queue';
 import { invitations } from './005-invitations';
 import { assignedSweeps } from './006-assigned-sweeps';
 import { commentsAndLinks } from './007-comments-and-links';
+import { searchWithinScope } from './008-search-within-scope';
 
 export const MIGRATIONS: readonly Migration[] = [
   accountsAndLabs,
@@ -18,6 +19,7 @@ export const MIGRATIONS: readonly Migration[] = [
   invitations,
   assignedSweeps,
   commentsAndLinks,
+  searchWithinScope,
 ];
 
 /** Steps the schema forward (`up`) and back (`down`); each step is a transaction of its own. */
