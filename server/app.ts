@@ -18,6 +18,7 @@ import { assignedRoutes } from './routes/assigned-routes';
 import { auditRoutes } from './routes/audit-routes';
 import { commentRoutes } from './routes/comment-routes';
 import { demoRoutes } from './routes/demo-routes';
+import { exportRoutes } from './routes/export-routes';
 import { healthRoutes } from './routes/health-routes';
 import { invitationRoutes } from './routes/invitation-routes';
 import { labRoutes } from './routes/lab-routes';
@@ -45,6 +46,7 @@ function apiRouter(dependencies: Dependencies): Router {
     accountRoutes(dependencies),
     labRoutes(dependencies),
     auditRoutes(dependencies),
+    exportRoutes(dependencies),
     invitationRoutes(dependencies),
     mailSettingsRoutes(dependencies),
     presetRoutes(dependencies),

@@ -17,6 +17,7 @@ export const AUDIT_SENTENCES = {
   'comment deleted': 'deleted a comment',
   'lab created': 'founded the lab',
   'lab renamed': 'renamed the lab',
+  'lab exported': 'exported all that the lab has',
   'member invited': 'invited someone',
   'invitation sent again': 'sent an invitation again',
   'invitation withdrawn': 'withdrew an invitation',

@@ -7,6 +7,7 @@ export const LAB_RIGHTS = {
   'view lab': ['supervisor', 'researcher', 'student', 'collaborator'],
   'view members': ['supervisor', 'researcher', 'student', 'collaborator'],
   'view lab history': ['supervisor'],
+  'export the lab': ['supervisor'],
   'invite members': ['supervisor'],
   'change roles': ['supervisor'],
   'remove members': ['supervisor'],

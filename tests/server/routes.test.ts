@@ -126,6 +126,9 @@ const rows = (): Row[] => [
   { method: 'patch', path: '/account', body: () => ({ name: '' }), expect: signedInOnly(400) },
   { method: 'get', path: '/account/sessions', expect: signedInOnly(200) },
   { method: 'delete', path: '/account/sessions/nothing', expect: signedInOnly(404) },
+  { method: 'get', path: '/account/export.zip', expect: signedInOnly(200) },
+  { method: 'get', path: inLab('/export.zip'), expect: supervised(200) },
+  { method: 'get', path: '/labs/none/export.zip', expect: signedInOnly(404) },
   { method: 'get', path: '/account/deletion', expect: signedInOnly(200) },
   {
     method: 'post',

@@ -1,6 +1,7 @@
 import { useState } from 'react';
 
 import { changeAccountSchema, changePasswordSchema } from '@/contract/account';
+import { buttonClasses } from '@/components/ui/button';
 import { useRefreshSession, useSession } from '@/lib/session';
 
 import { changeName, changePassword } from './api/account-operations';
@@ -72,6 +73,18 @@ export default function AccountPage() {
       <MailSettings />
       <SessionList />
       <AccountEvents />
+      <section aria-labelledby="export" className="grid justify-items-start gap-3">
+        <h2 id="export" className="text-xl">
+          Everything of yours
+        </h2>
+        <p className="text-muted">
+          Presets with all their versions, what you worked on and handed in, and the events of your account,
+          as one zip file.
+        </p>
+        <a href="/api/account/export.zip" className={buttonClasses('plain')}>
+          Download it
+        </a>
+      </section>
       <AccountDeletion />
     </div>
   );

@@ -50,6 +50,9 @@ export const fetchHistory = (labId: string, query: string) =>
 /** Where the same history is to be had as a file. */
 export const historyFile = (labId: string, query: string) => `/api${lab(labId)}/audit.csv?${query}`;
 
+/** Where everything that the lab owns is to be had as one file. */
+export const labArchive = (labId: string) => `/api${lab(labId)}/export.zip`;
+
 export const fetchOwnInvitations = () => api.get('/account/invitations', ownInvitationsSchema);
 export const acceptOwnInvitation = (id: string) => api.post(`${mine(id)}/accept`, {}, joinedSchema);
 export const declineOwnInvitation = (id: string) => api.postOnly(`${mine(id)}/decline`, {});

@@ -8,7 +8,7 @@ import type { LabBody } from '@/contract/labs';
 import { roleMay } from '@/contract/rights';
 import { useRefreshSession } from '@/lib/session';
 
-import { LAB_KEYS, renameLab } from '../api/lab-operations';
+import { LAB_KEYS, labArchive, renameLab } from '../api/lab-operations';
 import { useCurrentLab } from '../use-current-lab';
 import { NameDialog } from './name-dialog';
 
@@ -54,6 +54,11 @@ export function LabHeading({ lab, onNew, onLeave }: LabHeadingProps) {
           <Link to={`/lab/history?in=${encodeURIComponent(lab.id)}`} className={buttonClasses('plain')}>
             History
           </Link>
+        ) : null}
+        {roleMay(lab.role, 'export the lab') ? (
+          <a href={labArchive(lab.id)} className={buttonClasses('plain')}>
+            Export
+          </a>
         ) : null}
         <Button onClick={onLeave}>Leave</Button>
         <Button onClick={onNew}>New lab</Button>
