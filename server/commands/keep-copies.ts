@@ -4,7 +4,8 @@ import { LIMITS } from '@/engine/schema/limits';
 import type { PresetDocument } from '@/engine/schema/preset';
 
 import type { Dependencies } from '../dependencies';
-import { findVersion, insertPreset } from './preset-commands';
+import { findVersion } from './find-preset';
+import { insertPreset } from './preset-commands';
 
 /** The presets of a person that a lab keeps when they go. */
 export const presetsToKeep = (labId: string, ownerId: string) => ({ labId, ownerId, deletedAt: null });

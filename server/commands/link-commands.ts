@@ -4,10 +4,10 @@ import type { Dependencies } from '../dependencies';
 import { Refusal, refuseInvalid, refuseNotAllowed, refuseNotFound } from '../errors';
 import { hashToken, makeId, makeToken } from '../ids';
 import type { Person } from '../middleware/current-user';
-import type { Preset } from '../models/preset';
 import type { ShareLink } from '../models/share-link';
 import { demand } from '../policies/preset-policy';
-import { auditPreset, findPreset, readBack, type PresetAndVersion } from './preset-commands';
+import { findPreset, type FoundPreset } from './find-preset';
+import { auditPreset, readBack, type PresetAndVersion } from './preset-commands';
 
 export async function createLink(
   dependencies: Dependencies,
@@ -81,7 +81,7 @@ export async function openLink(
 export async function countOpening(
   dependencies: Dependencies,
   person: Person | null,
-  { link, preset }: { link: ShareLink; preset: Preset },
+  { link, preset }: { link: ShareLink; preset: FoundPreset },
 ): Promise<void> {
   const { database } = dependencies;
   await database.change(async (transaction) => {

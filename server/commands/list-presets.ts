@@ -1,10 +1,9 @@
-import { QueryTypes } from 'sequelize';
-
 import type { PresetPage, PresetQuery } from '@/contract/presets';
 import { roleMay } from '@/contract/rights';
 
 import type { Dependencies } from '../dependencies';
 import type { Person } from '../middleware/current-user';
+import type { ReadValues } from '../models/reader';
 
 const ORDERS: Record<PresetQuery['sort'], { by: string; usual: 'ASC' | 'DESC'; owner?: true }> = {
   changed: { by: 'f.changedAt', usual: 'DESC' },
@@ -42,9 +41,9 @@ const SEEN_FIELDS = 'id, ownerId, visibility, title, createdAt, changedAt';
 const SEEN = `seen AS MATERIALIZED (
   SELECT ${SEEN_FIELDS} FROM presets WHERE visibility = 'starter' AND deletedAt IS NULL
   UNION ALL
-  SELECT ${SEEN_FIELDS} FROM presets WHERE ownerId = :me AND visibility = 'private' AND deletedAt IS NULL
+  SELECT ${SEEN_FIELDS} FROM presets WHERE ownerId = $me AND visibility = 'private' AND deletedAt IS NULL
   UNION ALL
-  SELECT ${SEEN_FIELDS} FROM presets WHERE labId IN (:labs) AND visibility = 'lab' AND deletedAt IS NULL
+  SELECT ${SEEN_FIELDS} FROM presets WHERE labId IN (SELECT value FROM json_each($labs)) AND visibility = 'lab' AND deletedAt IS NULL
 )`;
 
 const time = (column: string) => `strftime('%Y-%m-%dT%H:%M:%fZ', ${column})`;
@@ -59,32 +58,48 @@ const ITEMS = `json_object(
 )`;
 const TAGS = `SELECT json_group_array(json_object('tag', tag, 'count', n) ORDER BY n DESC, tag) FROM (
   SELECT t.tag AS tag, COUNT(*) AS n FROM seen CROSS JOIN preset_tags t ON t.presetId = seen.id
-  GROUP BY t.tag ORDER BY n DESC, t.tag LIMIT :tags
+  GROUP BY t.tag ORDER BY n DESC, t.tag LIMIT $tags
 )`;
 const OWNERS = `SELECT json_group_array(json_object('id', id, 'name', name) ORDER BY name) FROM (
-  SELECT u.id, u.name FROM (SELECT DISTINCT ownerId FROM seen WHERE ownerId <> :me) o
-  CROSS JOIN users u ON u.id = o.ownerId ORDER BY u.name LIMIT :owners
+  SELECT u.id, u.name FROM (SELECT DISTINCT ownerId FROM seen WHERE ownerId <> $me) o
+  CROSS JOIN users u ON u.id = o.ownerId ORDER BY u.name LIMIT $owners
 )`;
 
-function conditionsOf(query: PresetQuery, match: string | null): string {
-  const conditions = ['1'];
-  // Words that hold no letter are found nowhere.
+type Condition = { readonly text: string; readonly values?: ReadValues };
+
+/** What was asked for, each with the values that its text names. */
+function conditionsOf(query: PresetQuery, personId: string, match: string | null): Condition[] {
+  const conditions: Condition[] = [];
+  // A search without a letter or a digit finds nothing.
   if (query.search !== '')
     conditions.push(
       match === null
-        ? '0'
-        : `s.id IN (SELECT r.presetId FROM preset_words w CROSS JOIN preset_word_rows r ON r.number = w.rowid
-           WHERE preset_words MATCH :match)`,
+        ? { text: '0' }
+        : {
+            text: `s.id IN (SELECT r.presetId FROM preset_words w CROSS JOIN preset_word_rows r ON r.number = w.rowid
+              WHERE preset_words MATCH $match)`,
+            values: { match },
+          },
     );
   if (query.tag)
-    conditions.push('EXISTS (SELECT 1 FROM preset_tags t WHERE t.presetId = s.id AND t.tag = :tag)');
-  if (query.owner) conditions.push('s.ownerId = :owner');
-  if (query.kind === 'own') conditions.push('s.ownerId = :me');
-  if (query.kind === 'starter' || query.kind === 'lab') conditions.push('s.visibility = :kind');
-  return conditions.join(' AND ');
+    conditions.push({
+      text: 'EXISTS (SELECT 1 FROM preset_tags t WHERE t.presetId = s.id AND t.tag = $tag)',
+      values: { tag: query.tag },
+    });
+  if (query.owner)
+    conditions.push({
+      text: 's.ownerId = $owner',
+      values: { owner: query.owner === 'me' ? personId : query.owner },
+    });
+  if (query.kind === 'own') conditions.push({ text: 's.ownerId = $me' });
+  else if (query.kind !== 'all')
+    conditions.push({ text: 's.visibility = $kind', values: { kind: query.kind } });
+  return conditions;
 }
 
 type Item = Omit<PresetPage['items'][number], 'tags' | 'starter'> & { readonly tagLines: string };
+
+type Row = Record<'items' | 'tags' | 'owners', string> & { readonly total: number };
 
 /** A page of the library as one person may see it, in one statement. */
 export async function listPresets(
@@ -98,32 +113,26 @@ export async function listPresets(
   const match = matchFor(query.search, person.id, labs);
   const { by, usual, owner } = ORDERS[query.sort];
   const direction = query.order === undefined ? usual : query.order === 'ascending' ? 'ASC' : 'DESC';
-  const [row] = await database.sequelize.query<
-    Record<'items' | 'tags' | 'owners', string> & { total: number }
-  >(
-    `WITH ${SEEN}, found AS MATERIALIZED (SELECT s.* FROM seen s WHERE ${conditionsOf(query, match)}),
+  const conditions = conditionsOf(query, person.id, match);
+  const where = ['1', ...conditions.map(({ text }) => text)].join(' AND ');
+  const [row] = await database.read<Row>(
+    `WITH ${SEEN}, found AS MATERIALIZED (SELECT s.* FROM seen s WHERE ${where}),
      page AS MATERIALIZED (
        SELECT f.id, ROW_NUMBER() OVER (ORDER BY ${by} ${direction}, f.id) AS place
        FROM found f ${owner ? 'LEFT JOIN users o ON o.id = f.ownerId' : ''}
-       ORDER BY place LIMIT :limit OFFSET :offset
+       ORDER BY place LIMIT $limit OFFSET $offset
      )
      SELECT (SELECT COUNT(*) FROM found) AS total, (${TAGS}) AS tags, (${OWNERS}) AS owners,
        (SELECT json_group_array(${ITEMS} ORDER BY page.place) FROM page CROSS JOIN presets p ON p.id = page.id
         LEFT JOIN users u ON u.id = p.ownerId LEFT JOIN labs l ON l.id = p.labId) AS items`,
     {
-      replacements: {
-        me: person.id,
-        labs: labs.length > 0 ? labs : [''],
-        match,
-        tag: query.tag,
-        kind: query.kind,
-        owner: query.owner === 'me' ? person.id : query.owner,
-        limit: query.pageSize,
-        offset: (query.page - 1) * query.pageSize,
-        tags: TAGS_SHOWN,
-        owners: OWNERS_SHOWN,
-      },
-      type: QueryTypes.SELECT,
+      me: person.id,
+      labs: JSON.stringify(labs),
+      tags: TAGS_SHOWN,
+      owners: OWNERS_SHOWN,
+      limit: query.pageSize,
+      offset: (query.page - 1) * query.pageSize,
+      ...Object.assign({}, ...conditions.map(({ values }) => values)),
     },
   );
   if (row === undefined) throw new Error('The database gave no page.');

@@ -11,47 +11,15 @@ import { Refusal, refuseNotAllowed, refuseNotFound, refuseStaleSave } from '../e
 import { makeId } from '../ids';
 import type { Person } from '../middleware/current-user';
 import type { Preset } from '../models/preset';
-import type { PresetVersion } from '../models/preset-version';
 import { demand, mayPlaceIn } from '../policies/preset-policy';
 import { populationsOf } from '../presenters/present-preset';
 import { readDocument, withHiddenFacts } from './assigned/known-facts';
 import { checkDocument } from './check-document';
+import { findPreset, findVersion, type FoundPreset, type FoundVersion } from './find-preset';
 
 export interface PresetAndVersion {
-  preset: Preset;
-  version: PresetVersion;
-}
-
-const WITH_NAMES = [{ association: 'owner' }, { association: 'lab' }];
-
-/** A preset that the person may see, with names; refused as absent otherwise. */
-export async function findPreset(
-  { database }: Dependencies,
-  id: string,
-  transaction?: Transaction,
-): Promise<Preset> {
-  const preset = await database.models.Preset.findOne({
-    where: { id, deletedAt: null },
-    include: WITH_NAMES,
-    ...(transaction ? { transaction } : {}),
-  });
-  if (preset === null) throw refuseNotFound();
-  return preset;
-}
-
-export async function findVersion(
-  { database }: Dependencies,
-  presetId: string,
-  number: number,
-  transaction?: Transaction,
-): Promise<PresetVersion> {
-  const version = await database.models.PresetVersion.findOne({
-    where: { presetId, number },
-    include: [{ association: 'author' }],
-    ...(transaction ? { transaction } : {}),
-  });
-  if (version === null) throw refuseNotFound('This preset has no version of that number.');
-  return version;
+  preset: FoundPreset;
+  version: FoundVersion;
 }
 
 /** A preset with its head version. */

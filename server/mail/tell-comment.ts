@@ -6,7 +6,7 @@ import { commentersAmong, isHeldBack } from '../commands/comments/readers';
 import type { Dependencies } from '../dependencies';
 import type { Comment } from '../models/comment';
 import type { MailContent } from '../models/mail-message';
-import type { Preset } from '../models/preset';
+import type { FoundPreset } from '../commands/find-preset';
 import { queueMail, withdrawMail } from './queue-mail';
 
 const EXCERPT = 600;
@@ -48,7 +48,7 @@ async function inWords({ database }: Dependencies, transaction: Transaction, tex
 export async function tellComment(
   dependencies: Dependencies,
   transaction: Transaction,
-  preset: Preset,
+  preset: FoundPreset,
   comment: Comment,
 ): Promise<void> {
   const { database, settings } = dependencies;

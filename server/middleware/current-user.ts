@@ -1,5 +1,4 @@
 import type { Request, RequestHandler } from 'express';
-import { QueryTypes } from 'sequelize';
 
 import type { Role } from '@/contract/rights';
 
@@ -31,10 +30,10 @@ export async function readPerson(
   { database, settings }: Dependencies,
   userId: string,
 ): Promise<Person | null> {
-  const rows = await database.sequelize.query<PersonRow>(
+  const rows = await database.read<PersonRow>(
     `SELECT u.name, u.email, u.demo, m.labId, m.role, l.name AS labName FROM users u
-     LEFT JOIN memberships m ON m.userId = u.id LEFT JOIN labs l ON l.id = m.labId WHERE u.id = :userId`,
-    { replacements: { userId }, type: QueryTypes.SELECT },
+     LEFT JOIN memberships m ON m.userId = u.id LEFT JOIN labs l ON l.id = m.labId WHERE u.id = $userId`,
+    { userId },
   );
   const [user] = rows;
   // People of the demo exist only while the demo does.

@@ -1,11 +1,11 @@
 import connectSessionSequelize from 'connect-session-sequelize';
 import type { RequestHandler } from 'express';
 import session, { type SessionData } from 'express-session';
-import { Op } from 'sequelize';
 
 import type { Settings } from '../dependencies';
 import { hashToken, makeId } from '../ids';
 import type { Database } from '../models/database';
+import { asKept } from '../models/reader';
 import { SESSION_MODEL } from '../models/session-record';
 
 declare module 'express-session' {
@@ -49,12 +49,15 @@ class QueuedStore extends session.Store {
 
   override get(sid: string, done: (error: unknown, data?: SessionData | null) => void): void {
     // The column counts: it moves on with every visit, the end noted within the data does not.
-    this.database.models.SessionRecord.findOne({
-      where: { sid: hashToken(sid), expires: { [Op.gt]: new Date() } },
-    }).then(
-      (record) => done(null, record === null ? null : (JSON.parse(record.data) as SessionData)),
-      (error: unknown) => done(error),
-    );
+    this.database
+      .read<{ data: string }>('SELECT data FROM sessions WHERE sid = $sid AND expires > $now', {
+        sid: hashToken(sid),
+        now: asKept(new Date()),
+      })
+      .then(
+        ([record]) => done(null, record === undefined ? null : (JSON.parse(record.data) as SessionData)),
+        (error: unknown) => done(error),
+      );
   }
 
   override set(sid: string, data: SessionData, done?: Done): void {

@@ -10,6 +10,7 @@ import { invitations } from './005-invitations';
 import { assignedSweeps } from './006-assigned-sweeps';
 import { commentsAndLinks } from './007-comments-and-links';
 import { searchWithinScope } from './008-search-within-scope';
+import { mailByClaim } from './009-mail-by-claim';
 
 export const MIGRATIONS: readonly Migration[] = [
   accountsAndLabs,
@@ -20,6 +21,7 @@ export const MIGRATIONS: readonly Migration[] = [
   assignedSweeps,
   commentsAndLinks,
   searchWithinScope,
+  mailByClaim,
 ];
 
 /** Steps the schema forward (`up`) and back (`down`); each step is a transaction of its own. */

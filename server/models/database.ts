@@ -1,4 +1,4 @@
-import type { Sequelize, Transaction } from 'sequelize';
+import { QueryTypes, type Sequelize, type Transaction } from 'sequelize';
 
 import { defineAssignedPerson } from './assigned-person';
 import { defineAssignedSweep } from './assigned-sweep';
@@ -18,6 +18,7 @@ import { definePendingAccount } from './pending-account';
 import { definePreset } from './preset';
 import { definePresetTag } from './preset-tag';
 import { definePresetVersion } from './preset-version';
+import { Reader, type ReadValues } from './reader';
 import { defineReview } from './review';
 import { defineSessionRecord } from './session-record';
 import { defineShareLink } from './share-link';
@@ -67,10 +68,19 @@ export class Database {
   readonly sequelize: Sequelize;
   readonly models: ReturnType<typeof defineModels>;
   readonly queue = new TransactionQueue();
+  /** Its texts are what the test of query plans looks at. */
+  readonly reader: Reader;
 
   constructor(path: string) {
     this.sequelize = connectSqlite(path);
+    this.reader = new Reader(path);
     this.models = defineModels(this.sequelize);
+  }
+
+  /** Rows as they are, without models: within a change with its transaction, else beside all changes. */
+  read<Row extends object>(text: string, values: ReadValues, transaction?: Transaction): Promise<Row[]> {
+    if (transaction === undefined) return this.reader.all<Row>(text, values);
+    return this.sequelize.query<Row>(text, { bind: { ...values }, transaction, type: QueryTypes.SELECT });
   }
 
   /** Runs `work` in a transaction of its own: all of it happens, or none. Give the transaction to each query. */
@@ -85,6 +95,7 @@ export class Database {
 
   async close(): Promise<void> {
     await this.queue.idle();
+    await this.reader.close();
     await this.sequelize.close();
   }
 }

@@ -7,15 +7,14 @@ import type {
 } from '@/contract/presets';
 import type { PresetDocument } from '@/engine/schema/preset';
 
+import type { FoundPreset, FoundVersion } from '../commands/find-preset';
 import type { Person } from '../middleware/current-user';
-import type { Preset } from '../models/preset';
-import type { PresetVersion } from '../models/preset-version';
 import type { ShareLink } from '../models/share-link';
 import { rightsOn } from '../policies/preset-policy';
 
 const PRODUCT = 'Moiety';
 
-export function presentSummary(preset: Preset): PresetSummary {
+export function presentSummary(preset: FoundPreset): PresetSummary {
   return {
     id: preset.id,
     title: preset.title,
@@ -23,8 +22,8 @@ export function presentSummary(preset: Preset): PresetSummary {
     tags: preset.tagLines.split('\n').filter(Boolean),
     starter: preset.visibility === 'starter',
     visibility: preset.visibility,
-    owner: preset.owner ? { id: preset.owner.id, name: preset.owner.name } : null,
-    lab: preset.lab ? { id: preset.lab.id, name: preset.lab.name } : null,
+    owner: preset.owner,
+    lab: preset.lab,
     version: preset.headNumber,
     changedAt: preset.changedAt.toISOString(),
     createdAt: preset.createdAt.toISOString(),
@@ -32,7 +31,7 @@ export function presentSummary(preset: Preset): PresetSummary {
   };
 }
 
-export function presentVersion(version: PresetVersion): VersionSummary {
+export function presentVersion(version: Omit<FoundVersion, 'document'>): VersionSummary {
   return {
     number: version.number,
     author: version.author?.name ?? PRODUCT,
@@ -45,8 +44,8 @@ export function presentVersion(version: PresetVersion): VersionSummary {
 /** `document` is that of the version as this person may read it. */
 export function presentPreset(
   person: Person,
-  preset: Preset,
-  version: PresetVersion,
+  preset: FoundPreset,
+  version: FoundVersion,
   document: PresetDocument,
 ): PresetBody {
   return {

@@ -12,7 +12,7 @@ import { listActivity } from '../commands/comments/activity';
 import { listComments, readThread } from '../commands/comments/read';
 import { commentersOn } from '../commands/comments/readers';
 import { deleteComment, editComment, resolveThread, writeComment } from '../commands/comments/write';
-import { findPreset } from '../commands/preset-commands';
+import { findPreset } from '../commands/find-preset';
 import type { Dependencies } from '../dependencies';
 import { requireSignedIn, signedIn } from '../middleware/current-user';
 import { parseBody, parseQuery } from '../middleware/parse';

@@ -24,7 +24,7 @@ import { refuseNotFound } from '../errors';
 import { requireSignedIn, signedIn } from '../middleware/current-user';
 import { parseBody } from '../middleware/parse';
 import { demandInLab } from '../policies/lab-policy';
-import { presentLab } from '../presenters/present-lab';
+import { presentLab, type MemberRow } from '../presenters/present-lab';
 
 const labId = (request: Request) => String(request.params.labId);
 const userId = (request: Request) => String(request.params.userId);
@@ -33,20 +33,23 @@ const invitationId = (request: Request) => String(request.params.invitationId);
 /** Labs, their members, and whom they invite. */
 export function labRoutes(dependencies: Dependencies): Router {
   const { database } = dependencies;
-  const { Lab, Membership } = database.models;
   const router = Router();
   router.use('/labs', requireSignedIn);
 
   /** The lab as it is now, for a person whose membership may just have changed. */
   const readLab = async (personId: string, id: string): Promise<LabBody> => {
-    const memberships = await Membership.findAll({
-      where: { labId: id },
-      include: [{ association: 'user' }],
-    });
-    const lab = await Lab.findByPk(id);
-    const mine = memberships.find((one) => one.userId === personId);
-    if (lab === null || mine === undefined) throw refuseNotFound();
-    return presentLab(lab, mine.role, roleMay(mine.role, 'view members') ? memberships : []);
+    const [lab] = await database.read<{ id: string; name: string }>(
+      'SELECT id, name FROM labs WHERE id = $id',
+      { id },
+    );
+    const members = await database.read<MemberRow>(
+      `SELECT u.id, u.name, u.email, m.role, m.joinedAt FROM memberships m JOIN users u ON u.id = m.userId
+       WHERE m.labId = $id`,
+      { id },
+    );
+    const mine = members.find((one) => one.id === personId);
+    if (lab === undefined || mine === undefined) throw refuseNotFound();
+    return presentLab(lab, mine.role, roleMay(mine.role, 'view members') ? members : []);
   };
 
   router.post('/labs', async (request, response) => {

@@ -14,6 +14,7 @@ import {
 
 import { readDocument } from '../commands/assigned/known-facts';
 import { bringBack, listDeleted } from '../commands/deleted-presets';
+import { findPreset, findVersion, listVersions } from '../commands/find-preset';
 import { createLink, revokeLink } from '../commands/link-commands';
 import { listPresets } from '../commands/list-presets';
 import {
@@ -21,8 +22,6 @@ import {
   copyDocument,
   createPreset,
   deletePreset,
-  findPreset,
-  findVersion,
   restoreVersion,
   saveVersion,
   type PresetAndVersion,
@@ -113,15 +112,12 @@ export function presetRoutes(dependencies: Dependencies): Router {
     const preset = await findPreset(dependencies, presetId(request));
     demand(signedIn(request), 'view', preset);
     const { page } = parseQuery(request, pageSchema);
-    const { rows, count } = await database.models.PresetVersion.findAndCountAll({
-      where: { presetId: preset.id },
-      attributes: { exclude: ['document'] },
-      include: [{ association: 'author' }],
-      order: [['number', 'DESC']],
-      limit: PAGE_SIZE.default,
-      offset: (page - 1) * PAGE_SIZE.default,
+    const pageSize = PAGE_SIZE.default;
+    const { versions, total } = await listVersions(dependencies, preset.id, {
+      limit: pageSize,
+      offset: (page - 1) * pageSize,
     });
-    response.json({ items: rows.map(presentVersion), total: count, page, pageSize: PAGE_SIZE.default });
+    response.json({ items: versions.map(presentVersion), total, page, pageSize });
   });
 
   router.post('/presets/:id/versions', async (request, response) => {

@@ -10,7 +10,7 @@ import type { Person } from '../../middleware/current-user';
 import type { AssignedSweep } from '../../models/assigned-sweep';
 import { demandInLab } from '../../policies/lab-policy';
 import { demand } from '../../policies/preset-policy';
-import { findPreset, findVersion } from '../preset-commands';
+import { findPreset, findVersion } from '../find-preset';
 import { demandRevision, findForLab } from './find';
 
 /** The first sweep of the document, else its first parameter, else the spread. */

@@ -11,7 +11,7 @@ import type { PresetVersion } from '../../models/preset-version';
 type Fact = PresetDocument['knownFacts'][number];
 type Source = Pick<Preset, 'id' | 'ownerId'>;
 
-const JUDGED = ['agreed', 'differs'];
+const JUDGED = `'agreed', 'differs'`;
 const everyFact = () => true;
 
 /**
@@ -26,19 +26,15 @@ async function readableFacts(
   transaction?: Transaction,
 ): Promise<(fact: Fact) => boolean> {
   if (person === null || preset.ownerId === person.id) return everyFact;
-  const places = await database.models.AssignedPerson.findAll({
-    where: { userId: person.id },
-    attributes: ['state'],
-    include: [{ association: 'assigned', attributes: ['state', 'labId', 'presetId', 'document'] }],
-    ...(transaction ? { transaction } : {}),
-  });
+  const set = await database.read<{ labId: string; presetId: string; document: string }>(
+    `SELECT a.labId, a.presetId, a.document FROM assigned_people p CROSS JOIN assigned_sweeps a ON a.id = p.assignedId
+     WHERE p.userId = $me AND p.state NOT IN (${JUDGED}) AND a.state <> 'draft'`,
+    { me: person.id },
+    transaction,
+  );
   const sets = (labId: string) =>
     person.memberships.some((one) => one.labId === labId && roleMay(one.role, 'set sweeps'));
-  const unjudged = places.flatMap(({ state, assigned }) =>
-    assigned && assigned.state !== 'draft' && !JUDGED.includes(state) && !sets(assigned.labId)
-      ? [assigned]
-      : [],
-  );
+  const unjudged = set.filter(({ labId }) => !sets(labId));
   if (unjudged.length === 0) return everyFact;
   if (unjudged.some(({ presetId }) => presetId === preset.id)) return () => false;
   const hidden = new Set(

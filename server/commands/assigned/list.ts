@@ -1,5 +1,3 @@
-import { QueryTypes } from 'sequelize';
-
 import {
   WORK_STATES,
   type AssignedPage,
@@ -12,78 +10,69 @@ import { roleMay } from '@/contract/rights';
 
 import type { Dependencies } from '../../dependencies';
 import type { Person } from '../../middleware/current-user';
+import type { ReadValues } from '../../models/reader';
 import { demandInLab } from '../../policies/lab-policy';
 
 const UNFINISHED = `(a.state = 'open' AND p.state IN ('untouched', 'running', 'sent back'))`;
 
-type Counts = Record<WorkState, number>;
-const noCounts = (): Counts => Object.fromEntries(WORK_STATES.map((state) => [state, 0])) as Counts;
+const noCounts = Object.fromEntries(WORK_STATES.map((state) => [state, 0])) as Record<WorkState, number>;
 
-/** What a list shows of these sweeps, in their order; nothing that is expected is read. */
-async function summarise(
-  { database }: Dependencies,
-  person: Person,
-  ids: readonly string[],
-  countFor: (labId: string) => boolean,
-): Promise<AssignedSummary[]> {
-  const { AssignedSweep, AssignedPerson } = database.models;
-  const sweeps = await AssignedSweep.findAll({
-    where: { id: [...ids] },
-    attributes: ['id', 'title', 'labId', 'state', 'dueAt', 'timeZone'],
-    include: [{ association: 'lab' }],
-  });
-  const places = await AssignedPerson.findAll({
-    where: { assignedId: [...ids] },
-    attributes: ['assignedId', 'userId', 'state'],
-  });
-  const byId = new Map(sweeps.map((one) => [one.id, one]));
-  return ids.flatMap((id): AssignedSummary[] => {
-    const one = byId.get(id);
-    if (one === undefined) return [];
-    const { title, labId, lab, state, dueAt, timeZone } = one;
-    const here = places.filter(({ assignedId }) => assignedId === id);
-    const counts = noCounts();
-    for (const place of here) counts[place.state] += 1;
-    const mine = here.find(({ userId }) => userId === person.id)?.state ?? null;
-    const shown = { id, title, lab: { id: labId, name: lab?.name ?? '' }, state, timeZone };
-    return [
-      {
-        ...shown,
-        dueAt: dueAt?.toISOString() ?? null,
-        mine: countFor(labId) ? null : mine,
-        counts: countFor(labId) ? counts : null,
-      },
-    ];
-  });
+interface Row {
+  id: string;
+  title: string;
+  labId: string;
+  labName: string;
+  state: AssignedState;
+  dueAt: string | null;
+  timeZone: string;
+  mine: WorkState | null;
+  counts: string;
 }
 
-const counted = (person: Person) => (labId: string) =>
-  person.memberships.some((one) => one.labId === labId && roleMay(one.role, 'review hand-ins'));
+/** Of each sweep of the page: what a list shows, the reader's own state, and people by state; nothing that is expected. */
+const SHOWN = `shown.id, shown.title, shown.labId, l.name AS labName, shown.state, shown.dueAt, shown.timeZone,
+  (SELECT state FROM assigned_people WHERE assignedId = shown.id AND userId = $me) AS mine,
+  (SELECT json_group_object(state, n) FROM (
+    SELECT state, COUNT(*) AS n FROM assigned_people WHERE assignedId = shown.id GROUP BY state
+  )) AS counts`;
+
+const summarise =
+  (person: Person) =>
+  ({ labId, labName, dueAt, mine, counts, ...shown }: Row): AssignedSummary => {
+    const counted = person.memberships.some(
+      (one) => one.labId === labId && roleMay(one.role, 'review hand-ins'),
+    );
+    return {
+      ...shown,
+      lab: { id: labId, name: labName },
+      dueAt: dueAt === null ? null : new Date(dueAt).toISOString(),
+      mine: counted ? null : mine,
+      counts: counted ? { ...noCounts, ...(JSON.parse(counts) as Partial<typeof noCounts>) } : null,
+    };
+  };
 
 async function page(
-  dependencies: Dependencies,
+  { database }: Dependencies,
   person: Person,
-  { from, where, order }: { from: string; where: string; order: string },
-  replacements: Record<string, unknown>,
+  { from, where, order, values }: { from: string; where: string; order: string; values: ReadValues },
   number: number,
 ): Promise<AssignedPage> {
-  const { sequelize } = dependencies.database;
   const pageSize = PAGE_SIZE.default;
-  const select = <Row extends object>(statement: string) =>
-    sequelize.query<Row>(statement, {
-      replacements: { ...replacements, limit: pageSize, offset: (number - 1) * pageSize },
-      type: QueryTypes.SELECT,
-    });
-  const rows = await select<{ id: string }>(
-    `SELECT a.id FROM ${from} WHERE ${where} ORDER BY ${order} LIMIT :limit OFFSET :offset`,
+  const rows = await database.read<Row>(
+    `SELECT ${SHOWN} FROM (
+       SELECT a.id, a.title, a.labId, a.state, a.dueAt, a.timeZone, ROW_NUMBER() OVER (ORDER BY ${order}) AS place FROM ${from} WHERE ${where}
+       ORDER BY place LIMIT $limit OFFSET $offset
+     ) shown CROSS JOIN labs l ON l.id = shown.labId ORDER BY shown.place`,
+    { me: person.id, ...values, limit: pageSize, offset: (number - 1) * pageSize },
   );
-  const totals = await select<{ total: number }>(`SELECT COUNT(*) AS total FROM ${from} WHERE ${where}`);
-  const ids = rows.map(({ id }) => id);
-  const items = await summarise(dependencies, person, ids, counted(person));
-  return { items, total: totals[0]?.total ?? 0, page: number, pageSize };
+  const [count] = await database.read<{ total: number }>(
+    `SELECT COUNT(*) AS total FROM ${from} WHERE ${where}`,
+    values,
+  );
+  return { items: rows.map(summarise(person)), total: count?.total ?? 0, page: number, pageSize };
 }
 
-const MINE = 'assigned_people p JOIN assigned_sweeps a ON a.id = p.assignedId';
+const MINE = 'assigned_people p CROSS JOIN assigned_sweeps a ON a.id = p.assignedId';
 
 /** Sweeps of a lab, newest first: all of them for those who set sweeps, one's own for others. */
 export async function listInLab(
@@ -95,12 +84,17 @@ export async function listInLab(
   const role = demandInLab(person, 'view lab', labId);
   const all = roleMay(role, 'set sweeps');
   const where = [
-    'a.labId = :labId',
-    ...(state === undefined ? [] : ['a.state = :state']),
-    ...(all ? [] : ['p.userId = :me', `a.state <> 'draft'`]),
+    'a.labId = $labId',
+    ...(state === undefined ? [] : ['a.state = $state']),
+    ...(all ? [] : ['p.userId = $me', `a.state <> 'draft'`]),
   ].join(' AND ');
-  const query = { from: all ? 'assigned_sweeps a' : MINE, where, order: 'a.createdAt DESC, a.id' };
-  return page(dependencies, person, query, { labId, me: person.id, state }, number);
+  const values = {
+    labId,
+    ...(state === undefined ? {} : { state }),
+    ...(all ? {} : { me: person.id }),
+  };
+  const from = all ? 'assigned_sweeps a' : MINE;
+  return page(dependencies, person, { from, where, order: 'a.createdAt DESC, a.id', values }, number);
 }
 
 /** Sweeps of all labs that are for oneself, unfinished ones first, by due date. */
@@ -112,7 +106,8 @@ export async function listMine(
   const labs = person.memberships
     .filter(({ role }) => roleMay(role, 'do assigned sweeps'))
     .map(({ labId }) => labId);
-  const where = `p.userId = :me AND a.labId IN (:labs) AND a.state <> 'draft'`;
-  const query = { from: MINE, where, order: `${UNFINISHED} DESC, a.dueAt, a.id` };
-  return page(dependencies, person, query, { me: person.id, labs: labs.length > 0 ? labs : [''] }, number);
+  const where = `p.userId = $me AND a.labId IN (SELECT value FROM json_each($labs)) AND a.state <> 'draft'`;
+  const values = { me: person.id, labs: JSON.stringify(labs) };
+  const order = `${UNFINISHED} DESC, a.dueAt, a.id`;
+  return page(dependencies, person, { from: MINE, where, order, values }, number);
 }

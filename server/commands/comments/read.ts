@@ -13,7 +13,7 @@ import type { Dependencies } from '../../dependencies';
 import { refuseNotFound } from '../../errors';
 import type { Person } from '../../middleware/current-user';
 import type { Comment } from '../../models/comment';
-import type { Preset } from '../../models/preset';
+import type { FoundPreset } from '../find-preset';
 import { may } from '../../policies/preset-policy';
 import { presentThread } from '../../presenters/present-comment';
 import { isHeldBack } from './readers';
@@ -33,14 +33,14 @@ async function namesIn(
   return new Map(users.map(({ id, name }) => [id, { id, name }]));
 }
 
-export function mayResolve(person: Person, preset: Preset, first: Comment): boolean {
+export function mayResolve(person: Person, preset: FoundPreset, first: Comment): boolean {
   return may(person, 'comment', preset) && (first.authorId === person.id || may(person, 'save', preset));
 }
 
 async function presentThreads(
   dependencies: Dependencies,
   person: Person,
-  preset: Preset,
+  preset: FoundPreset,
   firsts: readonly Comment[],
 ): Promise<ThreadBody[]> {
   const replies = await dependencies.database.models.Comment.findAll({
@@ -62,7 +62,7 @@ async function presentThreads(
 export async function listComments(
   dependencies: Dependencies,
   person: Person,
-  preset: Preset,
+  preset: FoundPreset,
   { state, thread, page }: CommentQuery,
 ): Promise<CommentPage> {
   const { Comment } = dependencies.database.models;
@@ -105,7 +105,7 @@ export async function findComment(
 export async function readThread(
   dependencies: Dependencies,
   person: Person,
-  preset: Preset,
+  preset: FoundPreset,
   threadId: string,
 ): Promise<ThreadBody> {
   const first = await findComment(dependencies, preset.id, threadId);

@@ -4,7 +4,7 @@ import { roleMay } from '@/contract/rights';
 
 import type { Dependencies } from '../../dependencies';
 import type { Person } from '../../middleware/current-user';
-import type { Preset } from '../../models/preset';
+import type { FoundPreset } from '../find-preset';
 import { may } from '../../policies/preset-policy';
 
 const JUDGED = ['agreed', 'differs'];
@@ -13,7 +13,7 @@ const MOST_PEOPLE = 500;
 /** Those of these people who may comment on the preset as things stand now. */
 export async function commentersAmong(
   { database, settings }: Dependencies,
-  preset: Preset,
+  preset: FoundPreset,
   userIds: readonly string[],
   transaction?: Transaction,
 ): Promise<Person[]> {
@@ -41,7 +41,7 @@ export async function commentersAmong(
 }
 
 /** Everyone who may comment on the preset: its owner and the people of its lab. */
-export async function commentersOn(dependencies: Dependencies, preset: Preset): Promise<Person[]> {
+export async function commentersOn(dependencies: Dependencies, preset: FoundPreset): Promise<Person[]> {
   const members =
     preset.labId === null
       ? []
@@ -59,7 +59,7 @@ export async function commentersOn(dependencies: Dependencies, preset: Preset): 
 export async function isHeldBack(
   { database }: Dependencies,
   person: Person,
-  preset: Preset,
+  preset: FoundPreset,
   transaction?: Transaction,
 ): Promise<boolean> {
   if (preset.ownerId === person.id) return false;

@@ -9,9 +9,8 @@ import { Refusal, refuseInvalid, refuseNotAllowed } from '../../errors';
 import { makeId } from '../../ids';
 import { forgetComment, tellComment } from '../../mail/tell-comment';
 import type { Person } from '../../middleware/current-user';
-import type { Preset } from '../../models/preset';
 import { demand } from '../../policies/preset-policy';
-import { findPreset, findVersion } from '../preset-commands';
+import { findPreset, findVersion, type FoundPreset } from '../find-preset';
 import { findComment, mayResolve } from './read';
 import { commentersAmong, isHeldBack } from './readers';
 
@@ -21,7 +20,7 @@ async function commentable(
   transaction: Transaction,
   person: Person,
   presetId: string,
-): Promise<Preset> {
+): Promise<FoundPreset> {
   const preset = await findPreset(dependencies, presetId, transaction);
   demand(person, 'comment', preset);
   if (await isHeldBack(dependencies, person, preset, transaction))
@@ -35,7 +34,7 @@ async function commentable(
 async function demandMentions(
   dependencies: Dependencies,
   transaction: Transaction,
-  preset: Preset,
+  preset: FoundPreset,
   text: string,
   before = '',
 ): Promise<void> {
