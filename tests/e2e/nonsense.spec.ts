@@ -87,11 +87,11 @@ test('of two people who save over each other the second is told and keeps both',
   await signInAs(page, 'Rui Maddock');
   await page.goto('/presets?kind=lab');
   await page.getByRole('link', { name: /Sturgeon.*lab copy/ }).click();
-  await expect(page.getByText(/version 1/)).toBeVisible();
+  await expect(page.getByText(/version 1 ·/)).toBeVisible();
   const other = await (await browser.newContext()).newPage();
   await signInAs(other, 'Ada Fennimore');
   await other.goto(page.url());
-  await expect(other.getByText(/version 1/)).toBeVisible();
+  await expect(other.getByText(/version 1 ·/)).toBeVisible();
 
   const change = async (bench: Bench, value: string) => bench.setNumber('growth, value', value);
   await change(new Bench(other), '0.7');
@@ -105,6 +105,6 @@ test('of two people who save over each other the second is told and keeps both',
   await expect(page.getByText(/version 1 · saved/)).toBeVisible();
   await expect(page.getByRole('textbox', { name: 'growth, value' })).toHaveValue('0.8');
   await other.reload();
-  await expect(other.getByText(/version 2/)).toBeVisible();
+  await expect(other.getByText(/version 2 ·/)).toBeVisible();
   await expect(other.getByRole('textbox', { name: 'growth, value' })).toHaveValue('0.7');
 });
