@@ -14,7 +14,7 @@ presets/             a folder each: preset.json with versions and links, every v
 assigned-sweeps/     what was set, with its reference; where people stand; each hand-in with its review
 history.csv          who did what, newest first
 
-Addresses of members, and what opens links, are not in it. It holds other people's work: keep it as you keep the
+Addresses of members and of whom the lab invited, and what opens links, are not in it. It holds other people's work: keep it as you keep the
 lab itself.
 `;
 
@@ -77,5 +77,6 @@ export async function* labEntries(
       });
     }
   }
-  yield { name: 'history.csv', text: await auditAsCsv(database, labId, auditQuerySchema.parse({})) };
+  const history = await auditAsCsv(database, labId, auditQuerySchema.parse({}), { addresses: false });
+  yield { name: 'history.csv', text: history };
 }

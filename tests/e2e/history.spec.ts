@@ -38,7 +38,7 @@ test('an account is deleted with its consequences told', async ({ page }) => {
   await page.getByLabel('Name').fill('Wren Alder');
   await page.getByLabel('E-mail').fill('wren@example.org');
   await page.getByLabel('Password').fill('catkins in spring');
-  await page.getByRole('button', { name: 'Sign up' }).click();
+  await page.getByRole('button', { name: 'Make the account' }).click();
   await expect(async () => {
     await page.goto('/mail');
     await page
@@ -48,6 +48,7 @@ test('an account is deleted with its consequences told', async ({ page }) => {
       .click({ timeout: 2_000 });
   }).toPass({ timeout: 20_000 });
   await page.getByRole('link', { name: /confirm\?token/ }).click();
+  await page.getByRole('button', { name: 'Finish and sign in' }).click();
   await expect(page.getByRole('heading', { name: 'Desk of Wren Alder' })).toBeVisible();
   await page.goto('/account');
   await page.getByRole('button', { name: 'Delete the account…' }).click();

@@ -72,6 +72,9 @@ describe('an export', () => {
 
   it('of a lab holds presets, sweeps with reference and history, and is in the history itself', async () => {
     const supervisor = await server.person('supervisor');
+    await supervisor.post(`/labs/${DEMO_LAB.id}/invitations`, {
+      invitations: [{ email: 'outsider@elsewhere.example', role: 'student' }],
+    });
     const files = await archive(supervisor, `/labs/${DEMO_LAB.id}/export.zip`);
     const names = [...files.keys()];
     const lab = JSON.parse(files.get('lab.json') ?? '') as { members: { name: string }[] };
@@ -82,8 +85,10 @@ describe('an export', () => {
     const sweep = names.find((name) => name.startsWith('assigned-sweeps/')) ?? '';
     expect(files.get(sweep)).toContain('"reference"');
     expect(files.get('history.csv')).toContain('lab exported');
+    expect(files.get('history.csv')).toContain('member invited');
     const all = [...files.values()].join('\n');
-    for (const secret of ['@demo.invalid', 'tokenHash', '$argon2']) expect(all).not.toContain(secret);
+    for (const secret of ['@demo.invalid', '@elsewhere.example', 'tokenHash', '$argon2'])
+      expect(all).not.toContain(secret);
   });
 
   it.each([

@@ -18,7 +18,7 @@ export default function AccountPage() {
   const [formNumber, setFormNumber] = useState(0);
   if (!user) return null;
   return (
-    <div className="mx-auto grid max-w-2xl gap-10 px-4 py-10">
+    <div className="mx-auto grid max-w-2xl grid-cols-[minmax(0,1fr)] gap-10 px-4 py-10">
       <div>
         <h1 className="text-3xl">Account</h1>
         <p className="text-muted">{user.email}</p>

@@ -19,7 +19,7 @@ export function SessionList() {
   if (sessions.isError) return <ErrorState error={sessions.error} />;
   const list = sessions.data.sessions;
   return (
-    <section aria-labelledby="sessions" className="grid gap-3">
+    <section aria-labelledby="sessions" className="grid grid-cols-[minmax(0,1fr)] gap-3">
       <div className="flex flex-wrap items-center justify-between gap-2">
         <h2 id="sessions" className="text-xl">
           Sessions
