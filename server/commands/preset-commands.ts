@@ -160,8 +160,9 @@ export async function saveVersion(
   await dependencies.database.change(async (transaction) => {
     const preset = await findPreset(dependencies, id, transaction);
     demand(person, save.restoredFrom === undefined ? 'save' : 'restore', preset);
-    const head = await findVersion(dependencies, id, preset.headNumber, transaction);
+    const readHead = () => findVersion(dependencies, id, preset.headNumber, transaction);
     if (preset.headNumber !== save.baseVersion) {
+      const head = await readHead();
       throw refuseStaleSave({
         number: head.number,
         author: head.author?.name ?? 'Someone',
@@ -171,7 +172,7 @@ export async function saveVersion(
     }
     const document =
       save.restoredFrom === undefined
-        ? await withHiddenFacts(dependencies, transaction, person, preset, { head, next: save.document })
+        ? await withHiddenFacts(dependencies, transaction, person, preset, { readHead, next: save.document })
         : save.document;
     const text = document === save.document ? given : checkDocument(document);
     const number = preset.headNumber + 1;
@@ -188,11 +189,10 @@ export async function saveVersion(
       },
       { transaction },
     );
-    await Preset.update(
-      { ...shownFields(save.document), headNumber: number, changedAt: now },
-      { where: { id }, transaction },
-    );
-    await replaceTags(dependencies, id, save.document.tags, transaction);
+    const shown = shownFields(save.document);
+    await Preset.update({ ...shown, headNumber: number, changedAt: now }, { where: { id }, transaction });
+    if (shown.tagLines !== preset.tagLines)
+      await replaceTags(dependencies, id, save.document.tags, transaction);
     const action = save.restoredFrom === undefined ? 'version saved' : 'version restored';
     await auditPreset(dependencies, transaction, person, action, preset, {
       version: number,

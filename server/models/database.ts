@@ -5,7 +5,7 @@ import { defineAssignedSweep } from './assigned-sweep';
 import { defineAssignedWork } from './assigned-work';
 import { defineAuditEntry } from './audit-entry';
 import { defineComment } from './comment';
-import { connectSqlite } from './connection';
+import { connectSqlite, replaceWriter } from './connection';
 import { defineHandIn } from './hand-in';
 import { defineInvitation } from './invitation';
 import { defineInvitationToken } from './invitation-token';
@@ -85,7 +85,14 @@ export class Database {
 
   /** Runs `work` in a transaction of its own: all of it happens, or none. Give the transaction to each query. */
   change<Result>(work: (transaction: Transaction) => Promise<Result>): Promise<Result> {
-    return this.queue.run(() => this.sequelize.transaction((transaction) => work(transaction)));
+    return this.queue.run(async () => {
+      try {
+        return await this.sequelize.transaction((transaction) => work(transaction));
+      } catch (error) {
+        await replaceWriter(this.sequelize);
+        throw error;
+      }
+    });
   }
 
   /** Runs one statement that changes something, outside a transaction but never beside one. */

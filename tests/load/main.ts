@@ -4,7 +4,7 @@
  */
 import { spawn, spawnSync, type ChildProcess } from 'node:child_process';
 import { once } from 'node:events';
-import { existsSync, mkdtempSync, rmSync } from 'node:fs';
+import { existsSync, mkdtempSync, readFileSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 
@@ -48,6 +48,17 @@ async function startServer(folder: string, port: number): Promise<ChildProcess> 
   return server;
 }
 
+/** Ticks of a hundredth of a second in which Linux ran a process; null elsewhere. */
+function ticksOf({ pid }: ChildProcess): number | null {
+  try {
+    // Behind the name in parentheses: state, then eleven numbers, then user and system time.
+    const fields = readFileSync(`/proc/${pid}/stat`, 'utf8').split(') ')[1]?.split(' ') ?? [];
+    return Number(fields[11]) + Number(fields[12]);
+  } catch {
+    return null;
+  }
+}
+
 /** Every third is a supervisor; the others are anyone. */
 async function arrive(port: number, k: number): Promise<Visitor> {
   const client = new Client(port);
@@ -79,7 +90,10 @@ function chooseVisit(draw: Draw): Visit {
   throw new Error('There is no visit to choose.');
 }
 
-async function measure(visitors: readonly Visitor[]): Promise<Map<Visit, number[]>> {
+async function measure(
+  visitors: readonly Visitor[],
+): Promise<{ times: Map<Visit, number[]>; answers: number }> {
+  let answers = 0;
   const times = new Map<Visit, number[]>(VISITS.map((visit) => [visit, []]));
   const began = performance.now();
   await Promise.all(
@@ -89,11 +103,12 @@ async function measure(visitors: readonly Visitor[]): Promise<Map<Visit, number[
         const visit = chooseVisit(draw);
         const answer = await visit.go(visitor, draw);
         if (answer.status >= 400) throw new Error(`${visit.name}: ${answer.status} ${answer.body}`);
+        answers += 1;
         if (now > WARM_UP) times.get(visit)?.push(answer.milliseconds);
       }
     }),
   );
-  return times;
+  return { times, answers };
 }
 
 if (!existsSync('dist/server/main.js')) throw new Error('Build first: npm run build.');
@@ -103,10 +118,16 @@ const server = await startServer(folder, port);
 try {
   const visitors: Visitor[] = [];
   for (let k = 0; k < IN_FLIGHT; k += 1) visitors.push(await arrive(port, k));
-  const times = await measure(visitors);
+  const before = ticksOf(server);
+  const { times, answers } = await measure(visitors);
+  const after = ticksOf(server);
   const all = [...times.values()].reduce((sum, one) => sum + one.length, 0);
   console.log(hardwareLine());
   console.log(`${IN_FLIGHT} requests in flight, ${Math.round((all * 1000) / LASTS)} answers a second.`);
+  if (before !== null && after !== null)
+    console.log(
+      `The server used ${(((after - before) * 10) / answers).toFixed(2)} ms of a processor an answer.`,
+    );
   console.log(`  ${'route'.padEnd(34)}${'count'.padStart(6)}     median  99th percentile`);
   for (const [visit, taken] of times) console.log(reportLine(visit, taken));
 } finally {

@@ -64,11 +64,11 @@ export async function withHiddenFacts(
   transaction: Transaction,
   person: Person,
   preset: Source,
-  { head, next }: { head: Pick<PresetVersion, 'document'>; next: PresetDocument },
+  { readHead, next }: { readHead: () => Promise<Pick<PresetVersion, 'document'>>; next: PresetDocument },
 ): Promise<PresetDocument> {
-  const { knownFacts } = JSON.parse(head.document) as PresetDocument;
-  if (knownFacts.length === 0) return next;
   const readable = await readableFacts(dependencies, person, preset, transaction);
+  if (readable === everyFact) return next;
+  const { knownFacts } = JSON.parse((await readHead()).document) as PresetDocument;
   const given = new Set(next.knownFacts.map((fact) => JSON.stringify(fact)));
   const hidden = knownFacts.filter((fact) => !readable(fact) && !given.has(JSON.stringify(fact)));
   return hidden.length === 0 ? next : { ...next, knownFacts: [...next.knownFacts, ...hidden] };
