@@ -79,6 +79,8 @@ export function createApp(dependencies: Dependencies): Express {
   const { settings, logger } = dependencies;
   const app = express();
   app.disable('x-powered-by');
+  // Answers of the interface are never kept, so that nothing is gained by naming their state.
+  app.disable('etag');
   app.set('trust proxy', settings.trustProxy);
   app.set('query parser', 'simple');
   app.use(

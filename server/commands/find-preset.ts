@@ -44,30 +44,32 @@ type PresetRow = Omit<FoundPreset, 'populations' | 'createdAt' | 'changedAt' | '
 
 const named = (id: string | null, name: string | null) => (id === null ? null : { id, name: name ?? '' });
 
-/** A preset that the person may see, with names; refused as absent otherwise. */
+const PRESET_FIELDS = `p.id, p.ownerId, p.labId, p.visibility, p.title, p.summary, p.tagLines, p.populations,
+  p.headNumber, p.createdAt, p.changedAt, o.name AS ownerName, l.name AS labName`;
+const PRESETS = 'presets p LEFT JOIN users o ON o.id = p.ownerId LEFT JOIN labs l ON l.id = p.labId';
+
+const asPreset = ({ ownerName, labName, ...rest }: PresetRow): FoundPreset => ({
+  ...rest,
+  populations: JSON.parse(rest.populations) as FoundPreset['populations'],
+  createdAt: new Date(rest.createdAt),
+  changedAt: new Date(rest.changedAt),
+  owner: named(rest.ownerId, ownerName),
+  lab: named(rest.labId, labName),
+});
+
+/** A preset that has not been deleted, with names; refused as absent otherwise. */
 export async function findPreset(
   { database }: Dependencies,
   id: string,
   transaction?: Transaction,
 ): Promise<FoundPreset> {
   const [row] = await database.read<PresetRow>(
-    `SELECT p.id, p.ownerId, p.labId, p.visibility, p.title, p.summary, p.tagLines, p.populations, p.headNumber,
-       p.createdAt, p.changedAt, u.name AS ownerName, l.name AS labName
-     FROM presets p LEFT JOIN users u ON u.id = p.ownerId LEFT JOIN labs l ON l.id = p.labId
-     WHERE p.id = $id AND p.deletedAt IS NULL`,
+    `SELECT ${PRESET_FIELDS} FROM ${PRESETS} WHERE p.id = $id AND p.deletedAt IS NULL`,
     { id },
     transaction,
   );
   if (row === undefined) throw refuseNotFound();
-  const { ownerName, labName, ...rest } = row;
-  return {
-    ...rest,
-    populations: JSON.parse(row.populations) as FoundPreset['populations'],
-    createdAt: new Date(row.createdAt),
-    changedAt: new Date(row.changedAt),
-    owner: named(row.ownerId, ownerName),
-    lab: named(row.labId, labName),
-  };
+  return asPreset(row);
 }
 
 type VersionRow = Omit<FoundVersion, 'author' | 'savedAt'> & {
@@ -82,6 +84,23 @@ const VERSIONS = 'preset_versions v LEFT JOIN users u ON u.id = v.authorId';
 
 function asVersion<Row extends Omit<VersionRow, 'document'>>({ authorId, authorName, ...rest }: Row) {
   return { ...rest, author: named(authorId, authorName), savedAt: new Date(rest.savedAt) };
+}
+
+/** A preset with its head version, in one statement: what opening one reads. */
+export async function findPresetAndHead(
+  { database }: Dependencies,
+  id: string,
+): Promise<{ preset: FoundPreset; version: FoundVersion }> {
+  const [row] = await database.read<PresetRow & Omit<VersionRow, 'presetId'>>(
+    `SELECT ${PRESET_FIELDS}, v.number, v.note, v.authorId, u.name AS authorName, v.restoredFrom, v.savedAt, v.document
+     FROM ${PRESETS} CROSS JOIN preset_versions v ON v.presetId = p.id AND v.number = p.headNumber
+     LEFT JOIN users u ON u.id = v.authorId WHERE p.id = $id AND p.deletedAt IS NULL`,
+    { id },
+  );
+  if (row === undefined) throw refuseNotFound();
+  const { number, note, authorId, authorName, restoredFrom, savedAt, document, ...preset } = row;
+  const version = { presetId: id, number, note, authorId, authorName, restoredFrom, savedAt, document };
+  return { preset: asPreset(preset), version: asVersion(version) };
 }
 
 export async function findVersion(

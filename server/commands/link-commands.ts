@@ -6,8 +6,8 @@ import { hashToken, makeId, makeToken } from '../ids';
 import type { Person } from '../middleware/current-user';
 import type { ShareLink } from '../models/share-link';
 import { demand } from '../policies/preset-policy';
-import { findPreset, type FoundPreset } from './find-preset';
-import { auditPreset, readBack, type PresetAndVersion } from './preset-commands';
+import { findPreset, findPresetAndHead, type FoundPreset } from './find-preset';
+import { auditPreset, type PresetAndVersion } from './preset-commands';
 
 export async function createLink(
   dependencies: Dependencies,
@@ -72,7 +72,7 @@ export async function openLink(
   const ended = link?.expiresAt && link.expiresAt.getTime() <= Date.now();
   if (link === null || link.revokedAt !== null || ended) throw gone;
   try {
-    return { link, ...(await readBack(dependencies, link.presetId)) };
+    return { link, ...(await findPresetAndHead(dependencies, link.presetId)) };
   } catch (error) {
     throw error instanceof Refusal ? gone : error;
   }

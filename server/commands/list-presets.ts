@@ -1,4 +1,4 @@
-import type { PresetPage, PresetQuery } from '@/contract/presets';
+import type { PresetChoices, PresetPage, PresetQuery } from '@/contract/presets';
 import { roleMay } from '@/contract/rights';
 
 import type { Dependencies } from '../dependencies';
@@ -65,6 +65,9 @@ const OWNERS = `SELECT json_group_array(json_object('id', id, 'name', name) ORDE
   CROSS JOIN users u ON u.id = o.ownerId ORDER BY u.name LIMIT $owners
 )`;
 
+const labsSeenBy = (person: Person) =>
+  person.memberships.filter(({ role }) => roleMay(role, 'view lab presets')).map(({ labId }) => labId);
+
 type Condition = { readonly text: string; readonly values?: ReadValues };
 
 /** What was asked for, each with the values that its text names. */
@@ -99,7 +102,10 @@ function conditionsOf(query: PresetQuery, personId: string, match: string | null
 
 type Item = Omit<PresetPage['items'][number], 'tags' | 'starter'> & { readonly tagLines: string };
 
-type Row = Record<'items' | 'tags' | 'owners', string> & { readonly total: number };
+interface Row {
+  readonly items: string;
+  readonly total: number;
+}
 
 /** A page of the library as one person may see it, in one statement. */
 export async function listPresets(
@@ -107,9 +113,7 @@ export async function listPresets(
   person: Person,
   query: PresetQuery,
 ): Promise<PresetPage> {
-  const labs = person.memberships
-    .filter(({ role }) => roleMay(role, 'view lab presets'))
-    .map(({ labId }) => labId);
+  const labs = labsSeenBy(person);
   const match = matchFor(query.search, person.id, labs);
   const { by, usual, owner } = ORDERS[query.sort];
   const direction = query.order === undefined ? usual : query.order === 'ascending' ? 'ASC' : 'DESC';
@@ -122,14 +126,12 @@ export async function listPresets(
        FROM found f ${owner ? 'LEFT JOIN users o ON o.id = f.ownerId' : ''}
        ORDER BY place LIMIT $limit OFFSET $offset
      )
-     SELECT (SELECT COUNT(*) FROM found) AS total, (${TAGS}) AS tags, (${OWNERS}) AS owners,
+     SELECT (SELECT COUNT(*) FROM found) AS total,
        (SELECT json_group_array(${ITEMS} ORDER BY page.place) FROM page CROSS JOIN presets p ON p.id = page.id
         LEFT JOIN users u ON u.id = p.ownerId LEFT JOIN labs l ON l.id = p.labId) AS items`,
     {
       me: person.id,
       labs: JSON.stringify(labs),
-      tags: TAGS_SHOWN,
-      owners: OWNERS_SHOWN,
       limit: query.pageSize,
       offset: (query.page - 1) * query.pageSize,
       ...Object.assign({}, ...conditions.map(({ values }) => values)),
@@ -146,7 +148,23 @@ export async function listPresets(
     total: row.total,
     page: query.page,
     pageSize: query.pageSize,
-    tags: JSON.parse(row.tags) as PresetPage['tags'],
-    owners: JSON.parse(row.owners) as PresetPage['owners'],
+  };
+}
+
+/** What the library of one person can be narrowed by. */
+export async function listChoices({ database }: Dependencies, person: Person): Promise<PresetChoices> {
+  const [row] = await database.read<Record<'tags' | 'owners', string>>(
+    `WITH ${SEEN} SELECT (${TAGS}) AS tags, (${OWNERS}) AS owners`,
+    {
+      me: person.id,
+      labs: JSON.stringify(labsSeenBy(person)),
+      tags: TAGS_SHOWN,
+      owners: OWNERS_SHOWN,
+    },
+  );
+  if (row === undefined) throw new Error('The database gave no choices.');
+  return {
+    tags: JSON.parse(row.tags) as PresetChoices['tags'],
+    owners: JSON.parse(row.owners) as PresetChoices['owners'],
   };
 }

@@ -15,17 +15,17 @@ import { demand, mayPlaceIn } from '../policies/preset-policy';
 import { populationsOf } from '../presenters/present-preset';
 import { readDocument, withHiddenFacts } from './assigned/known-facts';
 import { checkDocument } from './check-document';
-import { findPreset, findVersion, type FoundPreset, type FoundVersion } from './find-preset';
+import {
+  findPreset,
+  findPresetAndHead,
+  findVersion,
+  type FoundPreset,
+  type FoundVersion,
+} from './find-preset';
 
 export interface PresetAndVersion {
   preset: FoundPreset;
   version: FoundVersion;
-}
-
-/** A preset with its head version. */
-export async function readBack(dependencies: Dependencies, id: string): Promise<PresetAndVersion> {
-  const preset = await findPreset(dependencies, id);
-  return { preset, version: await findVersion(dependencies, id, preset.headNumber) };
 }
 
 const onOneLine = (tag: string) => tag.replace(/\s+/g, ' ');
@@ -127,7 +127,7 @@ export async function createPreset(
   const id = await dependencies.database.change((transaction) =>
     insertPreset(dependencies, transaction, person, { document, text, note, placed }),
   );
-  return readBack(dependencies, id);
+  return findPresetAndHead(dependencies, id);
 }
 
 function placement(person: Person, visibility: 'private' | 'lab', labId: string | null) {
@@ -199,7 +199,7 @@ export async function saveVersion(
       ...(save.restoredFrom === undefined ? {} : { restoredFrom: save.restoredFrom }),
     });
   });
-  return readBack(dependencies, id);
+  return findPresetAndHead(dependencies, id);
 }
 
 /** A new version equal to an old one. */
@@ -266,7 +266,7 @@ export async function changeVisibility(
       });
     }
   });
-  return readBack(dependencies, id);
+  return findPresetAndHead(dependencies, id);
 }
 
 /** Takes a preset out of sight for 30 days, in which it can be brought back. Its links stop working meanwhile. */

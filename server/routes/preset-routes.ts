@@ -14,9 +14,9 @@ import {
 
 import { readDocument } from '../commands/assigned/known-facts';
 import { bringBack, listDeleted } from '../commands/deleted-presets';
-import { findPreset, findVersion, listVersions } from '../commands/find-preset';
+import { findPreset, findPresetAndHead, findVersion, listVersions } from '../commands/find-preset';
 import { createLink, revokeLink } from '../commands/link-commands';
-import { listPresets } from '../commands/list-presets';
+import { listChoices, listPresets } from '../commands/list-presets';
 import {
   changeVisibility,
   copyDocument,
@@ -61,6 +61,10 @@ export function presetRoutes(dependencies: Dependencies): Router {
     response.status(201).json(await present(request, made));
   });
 
+  router.get('/presets/choices', async (request, response) => {
+    response.json(await listChoices(dependencies, signedIn(request)));
+  });
+
   router.get('/presets/deleted', async (request, response) => {
     response.json(await listDeleted(dependencies, signedIn(request)));
   });
@@ -71,10 +75,9 @@ export function presetRoutes(dependencies: Dependencies): Router {
   });
 
   router.get('/presets/:id', async (request, response) => {
-    const preset = await findPreset(dependencies, presetId(request));
-    demand(signedIn(request), 'view', preset);
-    const version = await findVersion(dependencies, preset.id, preset.headNumber);
-    response.json(await present(request, { preset, version }));
+    const found = await findPresetAndHead(dependencies, presetId(request));
+    demand(signedIn(request), 'view', found.preset);
+    response.json(await present(request, found));
   });
 
   router.patch('/presets/:id', async (request, response) => {

@@ -82,11 +82,16 @@ export const presetPageSchema = z.object({
   total: z.number(),
   page: z.number(),
   pageSize: z.number(),
+});
+export type PresetPage = z.infer<typeof presetPageSchema>;
+
+/** GET /api/presets/choices: what the list can be narrowed by. */
+export const presetChoicesSchema = z.object({
   /** Tags with counts over what the reader may see, most used first, at most 40. */
   tags: z.array(z.object({ tag: z.string(), count: z.number() })),
   owners: z.array(z.object({ id: z.string(), name: z.string() })),
 });
-export type PresetPage = z.infer<typeof presetPageSchema>;
+export type PresetChoices = z.infer<typeof presetChoicesSchema>;
 
 export const versionSummarySchema = z.object({
   number: z.number(),

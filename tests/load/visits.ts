@@ -69,6 +69,7 @@ export const VISITS: readonly Visit[] = [
     target: LIST,
     go: read((_visitor, draw) => `/presets?kind=${pick(draw, ['own', 'lab', 'starter'])}`),
   },
+  { name: 'tags and owners to choose from', weight: 3, target: LIST, go: read(() => '/presets/choices') },
   {
     name: 'search',
     weight: 16,

@@ -1,7 +1,7 @@
 import { QueryTypes, type Transaction } from 'sequelize';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 
-import type { PresetBody, PresetPage, VersionPage } from '@/contract/presets';
+import type { PresetBody, PresetChoices, PresetPage, VersionPage } from '@/contract/presets';
 import { STARTER_PRESETS } from '@/presets';
 
 import { createMigrator } from '../../server/migrations';
@@ -125,6 +125,35 @@ describe('the library', () => {
     expect(second.items.map((one) => one.id)).not.toEqual(first.items.map((one) => one.id));
     expect((await page('tag=fold')).items.every((one) => one.tags.includes('fold'))).toBe(true);
     expect((await page('owner=me')).items.every((one) => one.owner?.name === 'Rui Maddock')).toBe(true);
+  });
+
+  it('offers tags with their counts and other owners, of what one may see alone', async () => {
+    const tagged = { ...sampleDocument('Rare'), tags: ['a tag of nobody else', 'pond'] };
+    await researcher.post('/presets', { document: tagged });
+    const student = await server.person('student');
+    const choices = async (who: Visitor) => (await who.get('/presets/choices')).body as PresetChoices;
+    const mine = await choices(researcher);
+    expect(mine.tags.find(({ tag }) => tag === 'a tag of nobody else')?.count).toBe(1);
+    const pond = ((await researcher.get('/presets?tag=pond')).body as PresetPage).total;
+    expect(mine.tags.find(({ tag }) => tag === 'pond')?.count).toBe(pond);
+    const counts = mine.tags.map(({ count }) => count);
+    expect(counts).toEqual([...counts].sort((a, b) => b - a));
+    expect(mine.owners.map(({ name }) => name)).not.toContain('Rui Maddock');
+    const theirs = await choices(student);
+    expect(theirs.tags.map(({ tag }) => tag)).not.toContain('a tag of nobody else');
+    expect(theirs.owners.map(({ name }) => name)).toContain('Rui Maddock');
+  });
+
+  it('searches within what one may see: words of its scope find nothing', async () => {
+    await make('Scoped newts', { visibility: 'lab', labId: DEMO_LAB.id });
+    const titles = async (search: string) =>
+      ((await researcher.get(`/presets?search=${encodeURIComponent(search)}`)).body as PresetPage).items.map(
+        ({ title }) => title,
+      );
+    expect(await titles('scoped')).toEqual(['Scoped newts']);
+    expect(await titles(DEMO_LAB.id)).toEqual([]);
+    expect(await titles('own demo researcher')).toEqual([]);
+    expect(await titles('scope : "starter" OR newts')).toEqual([]);
   });
 
   it('hides what is private to others', async () => {

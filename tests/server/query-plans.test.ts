@@ -54,7 +54,14 @@ async function walk(supervisor: Visitor, student: Visitor): Promise<void> {
   const more = ['?kind=lab&sort=owner', '?kind=starter&sort=created&order=ascending'];
   for (const visitor of [supervisor, student]) {
     for (const filter of [...filters, ...more]) await good(visitor.get(`/presets${filter}`));
-    for (const path of ['/presets/deleted', on, `${on}/versions`, `${on}/activity`, `${on}/comments`])
+    for (const path of [
+      '/presets/choices',
+      '/presets/deleted',
+      on,
+      `${on}/versions`,
+      `${on}/activity`,
+      `${on}/comments`,
+    ])
       await good(visitor.get(path));
     for (const path of ['', '/assigned', '/assigned?state=open']) await good(visitor.get(`${inLab}${path}`));
     for (const path of ['/assigned', '/account/audit', '/account/sessions', '/account/mail', '/session'])

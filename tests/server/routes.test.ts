@@ -238,6 +238,7 @@ const rows = (): Row[] => [
   { method: 'post', path: `/mail/unsubscribe?token=${stopToken()}`, expect: all(200) },
   { method: 'post', path: `/mail/subscribe-again?token=${stopToken()}`, expect: all(200) },
   { method: 'get', path: '/presets', expect: signedInOnly(200) },
+  { method: 'get', path: '/presets/choices', expect: signedInOnly(200) },
   { method: 'get', path: '/presets/deleted', expect: signedInOnly(200) },
   { method: 'post', path: '/presets/none/bring-back', expect: signedInOnly(404) },
   { method: 'post', path: '/presets', body: () => ({ document: {} }), expect: signedInOnly(400) },

@@ -1,21 +1,64 @@
 import { proposeJudgement } from '@/contract/agreement';
-import type { PeopleTable } from '@/contract/assigned-sweeps';
+import type { GivenFinding, Judgement, PeopleTable, Receipt } from '@/contract/assigned-sweeps';
 
 import type { Dependencies } from '../../dependencies';
 import type { Person } from '../../middleware/current-user';
 import type { AssignedSweep } from '../../models/assigned-sweep';
-import type { HandIn } from '../../models/hand-in';
 import { csvLines, csvNumber, csvText } from '../../presenters/csv';
-import { presentReceipt } from '../../presenters/present-assigned';
 import { findForLab } from './find';
 import { readPeople } from './read';
 
 type Row = PeopleTable['rows'][number];
 
-function cellsOf({ wanted, reference }: AssignedSweep, handIn: HandIn | undefined): Row['cells'] {
+interface NewestRow {
+  readonly userId: string;
+  readonly id: string;
+  readonly number: number;
+  readonly handedInAt: string;
+  readonly late: 0 | 1;
+  readonly code: string;
+  readonly findings: string;
+  readonly judgements: string | null;
+}
+
+interface Newest {
+  readonly receipt: Receipt;
+  readonly findings: readonly GivenFinding[];
+  readonly judgements: Readonly<Record<string, Judgement>>;
+}
+
+/** The newest hand-in of each person, without what was frozen. */
+async function readNewest({ database }: Dependencies, id: string): Promise<Map<string, Newest>> {
+  const rows = await database.read<NewestRow>(
+    `SELECT h.userId, h.id, h.number, h.handedInAt, h.late, h.code, h.findings, r.judgements
+     FROM hand_ins h LEFT JOIN reviews r ON r.handInId = h.id
+     WHERE h.assignedId = $id AND h.number = (
+       SELECT MAX(number) FROM hand_ins WHERE assignedId = h.assignedId AND userId = h.userId
+     )`,
+    { id },
+  );
+  return new Map(
+    rows.map(({ userId, late, handedInAt, findings, judgements, id: handInId, number, code }) => [
+      userId,
+      {
+        receipt: {
+          id: handInId,
+          number,
+          code,
+          late: late === 1,
+          handedInAt: new Date(handedInAt).toISOString(),
+        },
+        findings: JSON.parse(findings) as GivenFinding[],
+        judgements: judgements === null ? {} : (JSON.parse(judgements) as Newest['judgements']),
+      },
+    ]),
+  );
+}
+
+function cellsOf({ wanted, reference }: AssignedSweep, newest: Newest | undefined): Row['cells'] {
   return Object.fromEntries(
     wanted.map((one) => {
-      const given = handIn?.findings.find(({ id }) => id === one.id);
+      const given = newest?.findings.find(({ id }) => id === one.id);
       const expected = reference.findings.find(({ id }) => id === one.id);
       return [
         one.id,
@@ -23,7 +66,7 @@ function cellsOf({ wanted, reference }: AssignedSweep, handIn: HandIn | undefine
           value: given?.value ?? null,
           text: given?.text ?? '',
           proposal: proposeJudgement(one, expected, given),
-          judgement: handIn?.review?.judgements[one.id] ?? null,
+          judgement: newest?.judgements[one.id] ?? null,
         },
       ];
     }),
@@ -37,30 +80,25 @@ export async function readTable(
   id: string,
 ): Promise<PeopleTable> {
   const assigned = await findForLab(dependencies, person, id, 'review hand-ins');
-  const { AssignedWork, HandIn } = dependencies.database.models;
   const people = await readPeople(dependencies, assigned);
-  const works = await AssignedWork.findAll({
-    where: { assignedId: id },
-    attributes: ['userId', 'runs', 'savedAt'],
-  });
-  const handIns = await HandIn.findAll({
-    where: { assignedId: id },
-    attributes: { exclude: ['frozen'] },
-    include: [{ association: 'review' }],
-    order: [['number', 'ASC']],
-  });
+  const works = await dependencies.database.read<{ userId: string; runs: number; savedAt: string }>(
+    'SELECT userId, runs, savedAt FROM assigned_work WHERE assignedId = $id',
+    { id },
+  );
+  const newestOf = await readNewest(dependencies, id);
   const workOf = new Map(works.map((one) => [one.userId, one]));
-  // In the order of their numbers, so that the newest of each person is what stays.
-  const newestOf = new Map(handIns.map((one) => [one.userId, one]));
   const rows = people.map(({ id: userId, name, state, member }): Row => {
     const work = workOf.get(userId);
     const newest = newestOf.get(userId);
-    const seen = Math.max(work?.savedAt.getTime() ?? 0, newest?.handedInAt.getTime() ?? 0);
+    const seen = Math.max(
+      Date.parse(work?.savedAt ?? '') || 0,
+      Date.parse(newest?.receipt.handedInAt ?? '') || 0,
+    );
     return {
       person: { id: userId, name },
       member,
       state,
-      handIn: newest ? presentReceipt(newest) : null,
+      handIn: newest?.receipt ?? null,
       runs: work?.runs ?? 0,
       lastActiveAt: seen > 0 ? new Date(seen).toISOString() : null,
       cells: cellsOf(assigned, newest),

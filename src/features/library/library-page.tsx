@@ -11,7 +11,7 @@ import { useSession } from '@/lib/session';
 
 import { deletePreset } from './api/delete-preset';
 import { duplicatePreset } from './api/duplicate-preset';
-import { usePresetList } from './api/list-presets';
+import { usePresetChoices, usePresetList } from './api/list-presets';
 import { DeletedPresets } from './components/deleted-presets';
 import { DeleteDialog } from './components/delete-dialog';
 import { ImportButton } from './components/import-button';
@@ -28,6 +28,7 @@ interface LibraryPageProps {
 export default function LibraryPage({ setSweep }: LibraryPageProps) {
   const [query, changeQuery] = useLibraryQuery();
   const presets = usePresetList(query);
+  const choices = usePresetChoices().data;
   const me = useSession().data?.user;
   const queries = useQueryClient();
   const navigate = useNavigate();
@@ -66,7 +67,7 @@ export default function LibraryPage({ setSweep }: LibraryPageProps) {
           </Link>
         </div>
       </div>
-      <LibraryFilters query={query} page={presets.data} onChange={changeQuery} />
+      <LibraryFilters query={query} choices={choices} onChange={changeQuery} />
       {failure ? (
         <p role="alert" className="rounded-md border border-caution px-3 py-2 text-caution">
           {failure.message}

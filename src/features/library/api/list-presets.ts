@@ -1,6 +1,6 @@
 import { keepPreviousData, useQuery } from '@tanstack/react-query';
 
-import { presetPageSchema, type PresetPage, type PresetQuery } from '@/contract/presets';
+import { presetChoicesSchema, presetPageSchema, type PresetPage, type PresetQuery } from '@/contract/presets';
 import { api } from '@/lib/api-client';
 
 export function listPresets(query: Partial<PresetQuery>, signal?: AbortSignal): Promise<PresetPage> {
@@ -16,5 +16,12 @@ export function usePresetList(query: Partial<PresetQuery>) {
     queryKey: ['presets', query],
     queryFn: ({ signal }) => listPresets(query, signal),
     placeholderData: keepPreviousData,
+  });
+}
+
+export function usePresetChoices() {
+  return useQuery({
+    queryKey: ['presets', 'choices'],
+    queryFn: ({ signal }) => api.get('/presets/choices', presetChoicesSchema, signal),
   });
 }

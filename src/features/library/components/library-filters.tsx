@@ -2,11 +2,11 @@ import { Search } from 'lucide-react';
 import { useEffect, useState } from 'react';
 
 import { INPUT_CLASSES } from '@/components/ui/form-field';
-import type { PresetPage, PresetQuery } from '@/contract/presets';
+import type { PresetChoices, PresetQuery } from '@/contract/presets';
 
 interface LibraryFiltersProps {
   readonly query: PresetQuery;
-  readonly page: PresetPage | undefined;
+  readonly choices: PresetChoices | undefined;
   readonly onChange: (patch: Partial<PresetQuery>) => void;
 }
 
@@ -70,15 +70,15 @@ function Choice<T extends string>({
   );
 }
 
-export function LibraryFilters({ query, page, onChange }: LibraryFiltersProps) {
+export function LibraryFilters({ query, choices, onChange }: LibraryFiltersProps) {
   const owners = [
     ['', 'anyone'] as const,
     ['me', 'me'] as const,
-    ...(page?.owners ?? []).map((owner) => [owner.id, owner.name] as const),
+    ...(choices?.owners ?? []).map((owner) => [owner.id, owner.name] as const),
   ];
   const tags: (readonly [string, string])[] = [
     ['', 'any'],
-    ...(page?.tags ?? []).map(({ tag, count }) => [tag, `${tag} (${count})`] as const),
+    ...(choices?.tags ?? []).map(({ tag, count }) => [tag, `${tag} (${count})`] as const),
   ];
   if (query.tag && !tags.some(([tag]) => tag === query.tag)) tags.push([query.tag, query.tag]);
   return (
